@@ -1,0 +1,1 @@
+"""Section dimensions, steels and factors, each file with its source and confidence mark."""

@@ -1,0 +1,82 @@
+"""The project: everything a user states, as frozen values in N, mm, MPa and rad. Knows nothing of files or units."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass, field
+from typing import Literal
+
+from spanwright.design.standard import Ends, Packs
+from spanwright.loads.inputs import LoadsInput
+from spanwright.truss.inputs import FormInput, GivenInput, RestraintInput
+from spanwright.truss.model import Role
+
+
+@dataclass(frozen=True)
+class MembersInput:
+    """What the members may be made of.
+
+    steel : grade of the angles; tubes take its hollow-section twin.
+    gap : mm, gusset thickness between back-to-back angles.
+    by_role : for each role a family to choose from ("2L") or one section ("2L 80x80x6").
+    by_group : the same for groups that the user names; overrides the role.
+    min_leg, min_thickness, min_wall : mm; legs and thickness of angles, wall of tubes.
+    stocked : "South Africa" or "any".
+    fixings : share of the own mass added for gussets and bolts; absent where it helps.
+    packs, stock_length (mm), setback (mm), web_angles : as in the project file.
+    """
+
+    steel: str
+    by_role: dict[Role, str]
+    by_group: dict[str, str] = field(default_factory=dict)
+    gap: float = 8.0
+    min_leg: float = 50.0
+    min_thickness: float = 5.0
+    min_wall: float = 3.0
+    stocked: str = "South Africa"
+    fixings: float = 0.08
+    packs: Packs = Packs()
+    stock_length: float = 12000.0
+    setback: float = 20.0
+    one_side: bool = True
+
+
+@dataclass(frozen=True)
+class DeflectionLimits:
+    """Span over these numbers; any joint against the line between bearings."""
+
+    variable: float = 300.0
+    total: float = 250.0
+
+
+@dataclass(frozen=True)
+class Project:
+    """One truss, as the user states it.
+
+    title, mark, quantity : for the schedule. standard, actions : names with edition as the project file spells them.
+    truss : a form or joints and bars. supports : "left pinned, right sliding", "both pinned" or "as given".
+    spacing : mm truss to truss; tributary : mm of roof carried, equal to the spacing unless stated.
+    groups : members (bar names) that get one section, beyond the grouping by role.
+    title_block : ISO 7200 fields for documents (owner, number, revision, creator, approver...), all text.
+    defaults_used : (key, value as text) of every default taken, for the record.
+    source : the text of the input that was read, whose hash every output carries; source_name : its file name.
+    """
+
+    title: str
+    standard: str
+    actions: str
+    truss: FormInput | GivenInput
+    supports: Literal["left pinned, right sliding", "both pinned", "as given"]
+    spacing: float
+    tributary: float
+    restraint: RestraintInput
+    loads: LoadsInput
+    members: MembersInput
+    ends: Ends = Ends()
+    mark: str = "R1"
+    quantity: int = 1
+    deflection: DeflectionLimits = DeflectionLimits()
+    groups: dict[str, tuple[str, ...]] = field(default_factory=dict)
+    title_block: dict[str, str] = field(default_factory=dict)
+    defaults_used: tuple[tuple[str, str], ...] = ()
+    source: str = ""
+    source_name: str = ""

@@ -1,0 +1,1 @@
+"""Member rules of SANS 10162-1:2011."""

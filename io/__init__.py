@@ -1,0 +1,1 @@
+"""Everything that reads or writes: project file, drawings, schedules, pictures, the command line."""

@@ -1,0 +1,1 @@
+"""What stands there: joints, bars, supports, the forms, the restraint graph, the stiffness solution."""
