@@ -9,6 +9,7 @@ from spanwright.truss.model import Role
 
 FormName = Literal["Pratt", "Howe", "Fink"]
 Lean = Literal["up to centre", "down to centre"]
+AnchoredBy = Literal["roof bracing", "diaphragm", "nothing"]
 
 
 @dataclass(frozen=True)
@@ -64,7 +65,7 @@ class RestraintInput:
 
     purlins: Literal["at joints"] | float | tuple[float, ...]
     anchored: Literal["all", "none"] | tuple[int, ...]
-    anchored_by: Literal["roof bracing", "diaphragm", "nothing"]
+    anchored_by: AnchoredBy
     bearings_held: bool
     ridge_pair: float | None = None
     knee_braces: str | tuple[str, ...] = "none"

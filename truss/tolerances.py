@@ -40,6 +40,12 @@ class Tolerances:
     long_knee: float = 1500.0
     """mm: a knee brace to a line further above its joint than this is soft; warned (practice: 1.0 to 1.5 m)."""
 
+    least_length_factor: float = 0.5
+    """Dimensionless: no effective length factor of a member held at both ends is less (both ends fixed, theory)."""
+
+    long_ceiling_panel: float = 3000.0
+    """mm on plan: in a longer bottom panel a ceiling's hangers stand between the joints; warned (project rule)."""
+
     tiny_force: float = 1e-6
     """Relative to the largest bar force of a solution: smaller bar forces count as zero."""
 
