@@ -1,0 +1,110 @@
+"""The project file as a whole: its tables, what must agree between them, and the defaults that were taken."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from typing import Annotated, Any, Self
+
+from pydantic import model_validator
+
+from spanwright.io.schema_fields import Name, Names, Table, Text, counted, field, key, refused, subtable
+from spanwright.io.schema_loads import LoadsTable
+from spanwright.io.schema_members import ConnectionsTable, MembersTable
+from spanwright.io.schema_restraint import RestraintTable
+from spanwright.io.schema_truss import FormTruss, TrussTable
+from spanwright.io.units import shown
+from spanwright.truss.errors import InputError, UnknownNameError
+from spanwright.truss.model import ROLES
+
+
+class TitleBlockTable(Table):
+    """The table [title_block]: data fields of a document's title block by ISO 7200, and the client and project."""
+
+    owner: Text = key("legal owner of the document", "")
+    client: Text = key("for whom", "")
+    project: Text = key("the whole works", "")
+    number: Text = key("identification number", "")
+    revision: Text = key("revision index", "")
+    date: Text = key("date of issue", "")
+    creator: Text = key("who made it", "")
+    checker: Text = key("who checked it", "")
+    approver: Text = key("who approves it", "")
+    department: Text = key("responsible department", "")
+    reference: Text = key("technical contact", "")
+    supplementary_title: Text = key("second line of the title", "")
+    status: Text = key("document status", "")
+    language: Text = key("language code", "")
+
+
+class ProjectFile(Table):
+    """A project file."""
+
+    title: Text = key("what the truss is called on documents", "Roof truss")
+    mark: Name = key("mark of the truss; pieces are marked with it", "R1")
+    quantity: Annotated[int, field(counted(1, 10_000))] = key("how many alike", 1)
+    standard: Name = key("the member standard", "SANS 10162-1")
+    actions: Name = key(
+        'the loading standard with its edition, such as "SANS 10160:2011" or "SANS 10160:2019"; it sets the load '
+        "factors. An edition's wind factor goes with its own wind map only"
+    )
+    truss: TrussTable = subtable(FormTruss)
+    restraint: RestraintTable = subtable(RestraintTable)
+    loads: LoadsTable = subtable(LoadsTable)
+    members: MembersTable = subtable(MembersTable)
+    connections: ConnectionsTable = subtable(ConnectionsTable)
+    groups: dict[Name, Names] = key("members that get a section of their own", {}, otherwise="members group by role")
+    title_block: TitleBlockTable = subtable(TitleBlockTable)
+
+    @model_validator(mode="after")
+    def _groups_agree(self) -> Self:
+        owner: dict[str, str] = {}
+        for group, bars in self.groups.items():
+            if group in ROLES:
+                raise refused(
+                    InputError(
+                        f'"{group}" is the group of its role already', "give the group another name", f"groups.{group}"
+                    )
+                )
+            for bar in bars:
+                if bar in owner:
+                    raise refused(
+                        InputError(
+                            f'bar "{bar}" is in the groups "{owner[bar]}" and "{group}"',
+                            "a bar gets one section: leave it in one group",
+                            f"groups.{group}",
+                        )
+                    )
+                owner[bar] = group
+        for group in self.members.groups:
+            if group not in self.groups:
+                raise refused(
+                    UnknownNameError.among(group, list(self.groups), what="group", key=f"members.groups.{group}")
+                )
+        return self
+
+
+def defaults_taken(table: Table, path: str = "") -> Iterator[tuple[str, str]]:
+    """Yield (dotted key, value as it would be written) of every default that a project file relies on."""
+    for name, info in type(table).model_fields.items():
+        where = f"{path}{name}"
+        if name in table.model_fields_set or info.default_factory is not None:
+            yield from _defaults_inside(getattr(table, name), where)
+            continue
+        extra = info.json_schema_extra
+        otherwise = str(extra["otherwise"]) if isinstance(extra, dict) else ""
+        text = otherwise if info.default in (None, "", {}, []) else _as_written(info.default)
+        if text:
+            yield where, text
+
+
+def _defaults_inside(value: Any, where: str) -> Iterator[tuple[str, str]]:
+    if isinstance(value, Table):
+        yield from defaults_taken(value, f"{where}.")
+    elif isinstance(value, list):
+        for number, entry in enumerate(value, 1):
+            if isinstance(entry, Table):
+                yield from defaults_taken(entry, f"{where}[{number}].")
+
+
+def _as_written(default: object) -> str:
+    return default if isinstance(default, str) else shown(default)

@@ -1,0 +1,141 @@
+"""The table [loads] of a project file."""
+
+from __future__ import annotations
+
+from typing import Annotated, Any, Literal, Self
+
+from pydantic import WrapValidator, model_validator
+
+from spanwright.io.schema_fields import Answer, Name, Table, field, key, one_of, ranged, refused
+from spanwright.io.units import FORCE, PRESSURE, shown
+from spanwright.loads.inputs import JointLoad, LoadsInput, MostLeast, WindInput
+from spanwright.truss.errors import InputError
+
+CaseKind = Literal["permanent", "imposed", "wind"]
+
+_surface_load = ranged(PRESSURE, "kPa", "0 kPa", "20 kPa")
+SurfaceLoad = Annotated[float, field(_surface_load)]
+WindPressure = Annotated[float, field(ranged(PRESSURE, "kPa", "-10 kPa", "10 kPa"))]
+WallForce = Annotated[float, field(ranged(FORCE, "kN", "-500 kN", "500 kN"))]
+PointForce = Annotated[float, field(ranged(FORCE, "kN", "-2000 kN", "2000 kN"))]
+ManForce = Annotated[float, field(ranged(FORCE, "kN", "0 kN", "10 kN"))]
+
+
+class PermanentTable(Table):
+    """A permanent load with its greatest and its least credible value."""
+
+    most: SurfaceLoad = key('the greatest credible value, such as "0.25 kPa"')
+    least: SurfaceLoad = key('the least credible value, such as "0.18 kPa"; it counts where the load helps')
+
+    @model_validator(mode="after")
+    def _ordered(self) -> Self:
+        if self.least > self.most:
+            raise refused(InputError("least is greater than most", "exchange the two values"))
+        return self
+
+    def value(self) -> MostLeast:
+        """Return it as the loads room takes it."""
+        return MostLeast(self.most, self.least)
+
+
+def _one_or_two(value: Any, table: Any) -> Any:
+    if isinstance(value, dict):
+        return table(value)
+    try:
+        load = _surface_load(value)
+    except InputError as error:
+        raise refused(error) from error
+    return PermanentTable.model_construct(most=load, least=load)
+
+
+Permanent = Annotated[PermanentTable, WrapValidator(_one_or_two)]
+
+
+class WindTable(Table):
+    """A table [[loads.wind]]."""
+
+    name: Name = key('the name of the wind case, such as "across ridge, suction"')
+    left: WindPressure = key("net pressure normal to the left slope; + presses the roof in, - lifts it")
+    right: WindPressure = key("net pressure normal to the right slope; + presses the roof in, - lifts it")
+    eaves_left: WallForce = key("horizontal force at the left bearing, + to the right", "0 kN")
+    eaves_right: WallForce = key("horizontal force at the right bearing, + to the right", "0 kN")
+    mirrored: Answer = key("whether the mirrored case is added", True)
+
+
+class JointLoadTable(Table):
+    """A table [[loads.at_joint]]."""
+
+    case: Name = key("the case of this load; the name of an existing case joins that case")
+    kind: Annotated[CaseKind, one_of(CaseKind)] = key(
+        'what acts; it sets the load factors. Write "permanent", "imposed" or "wind"'
+    )
+    joint: Name = key('the joint that carries the load, such as "B6"')
+    down: PointForce = key("downward", "0 kN")
+    right: PointForce = key("to the right", "0 kN")
+
+    @model_validator(mode="after")
+    def _acts(self) -> Self:
+        if not self.model_fields_set & {"down", "right"}:
+            raise refused(InputError("a load without a force", 'write down = "5 kN" or right = "1 kN"'))
+        return self
+
+
+def _none_or_cases(value: Any, cases: Any) -> Any:
+    if value == "none":
+        return []
+    if not isinstance(value, list) or not value:
+        found = "no wind case is given" if value == [] else f"{shown(value)} is not a wind case"
+        raise refused(InputError(found, 'write wind = "none" if there is none, or tables [[loads.wind]]'))
+    return cases(value)
+
+
+class LoadsTable(Table):
+    """The table [loads]."""
+
+    roof_permanent: Permanent = key(
+        "covering, purlins and services, on the slope; the truss's own mass is added. Write the greatest and the "
+        'least credible value, { most = "0.25 kPa", least = "0.18 kPa" }, as the least decides under uplift; '
+        "one value stands for both"
+    )
+    ceiling_permanent: Permanent = key("on plan, at the bottom chord", "0 kPa")
+    roof_imposed: SurfaceLoad = key(
+        'the imposed load of the roof, on plan, by the loading standard for the roof\'s use, such as "0.30 kPa"'
+    )
+    man_load: ManForce = key("a person and tools, at one place", "0.9 kN")
+    wind: Annotated[list[WindTable], WrapValidator(_none_or_cases)] = key(
+        "net wind pressures normal to the slopes; uplift decides light roofs. "
+        'Write tables [[loads.wind]], or wind = "none" where no wind can act'
+    )
+    at_joint: list[JointLoadTable] = key("loads at joints", [])
+
+    @model_validator(mode="after")
+    def _cases_agree(self) -> Self:
+        kinds: dict[str, str] = {}
+        for case in self.wind:
+            if case.name in kinds:
+                raise refused(
+                    InputError(f'two wind cases are called "{case.name}"', "give each a name of its own", "wind")
+                )
+            kinds[case.name] = "wind"
+        for number, load in enumerate(self.at_joint, 1):
+            kind = kinds.setdefault(load.case, load.kind)
+            if kind != load.kind:
+                raise refused(
+                    InputError(
+                        f'"{load.kind}" contradicts the case "{load.case}", which is {kind}',
+                        f'write kind = "{kind}", or give the load another case',
+                        f"at_joint[{number}].kind",
+                    )
+                )
+        return self
+
+    def value(self) -> LoadsInput:
+        """Return the loads as the loads room takes them."""
+        return LoadsInput(
+            roof_permanent=self.roof_permanent.value(),
+            roof_imposed=self.roof_imposed,
+            wind=tuple(WindInput(w.name, w.left, w.right, w.eaves_left, w.eaves_right, w.mirrored) for w in self.wind),
+            ceiling_permanent=self.ceiling_permanent.value(),
+            man_load=self.man_load,
+            at_joint=tuple(JointLoad(p.case, p.kind, p.joint, p.down, p.right) for p in self.at_joint),
+        )

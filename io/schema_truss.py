@@ -1,0 +1,143 @@
+"""The table [truss] of a project file: a form, or joints and bars one by one."""
+
+from __future__ import annotations
+
+import math
+from typing import Annotated, Any, Literal, Self, get_args
+
+from pydantic import Discriminator, Tag, model_validator
+
+from spanwright.io.schema_fields import Name, Table, choose, counted, field, key, length, name, one_of, refused
+from spanwright.io.units import LENGTH, quantity, shown, slope
+from spanwright.truss.errors import InputError
+from spanwright.truss.inputs import FormInput, FormName, GivenInput, Lean
+from spanwright.truss.model import ROLES, Role
+
+FormSupports = Literal["left pinned, right sliding", "both pinned"]
+Supports = Literal["left pinned, right sliding", "both pinned", "as given"]
+Bearing = Literal["pinned", "sliding"]
+
+_STEEPEST = math.radians(60)
+_FURTHEST = 1e6  # mm: 1 km, further from the origin than any drawing of one truss
+GIVEN_KEYS = frozenset({"joints", "bars", "joint_supports"})
+
+
+def _pitch(value: object) -> float:
+    angle = slope(value)
+    if not 0 <= angle <= _STEEPEST:
+        raise InputError(f"{shown(value)} is outside the plausible range, 0 deg to 60 deg", 'write such as "12 deg"')
+    return angle
+
+
+def _panels(value: object) -> int:
+    panels = counted(2, 200)(value)
+    if panels % 2:
+        raise InputError(
+            f"{panels} is an odd number of panels",
+            f"write an even number, {panels - 1} or {panels + 1}: the ridge stands on a joint at mid-span",
+        )
+    return panels
+
+
+def _point(value: object) -> tuple[float, float]:
+    if not isinstance(value, list) or len(value) != 2:
+        raise InputError(f"{shown(value)} is not a point", 'write x and y, such as ["3 m", "0.9 m"]')
+    x, y = (quantity(entry, LENGTH, "m") for entry in value)
+    if max(abs(x), abs(y)) > _FURTHEST:
+        raise InputError(f"a joint at {shown(value[0])}, {shown(value[1])} is absurdly far away", "check the units")
+    return x, y
+
+
+def _bar(value: object) -> tuple[str, str, Role]:
+    if not isinstance(value, list) or len(value) != 3:
+        raise InputError(f"{shown(value)} is not a bar", 'write two joints and a role, such as ["A", "B", "top chord"]')
+    role: Any = choose(value[2], ROLES)
+    return name(value[0]), name(value[1]), role
+
+
+class _AnyTruss(Table):
+    spacing: Annotated[float, length("0.3 m", "30 m")] = key('distance from truss to truss, such as "5 m"')
+    tributary_width: Annotated[float, length("0.1 m", "30 m")] | None = key(
+        "width of roof that one truss carries", None, otherwise="the spacing"
+    )
+    overhang: Annotated[float, length("0 m", "10 m")] = key("top chord beyond the support, in plan, each side", "0 m")
+
+    @property
+    def tributary(self) -> float:
+        """Width of roof carried, mm."""
+        return self.spacing if self.tributary_width is None else self.tributary_width
+
+
+class FormTruss(_AnyTruss):
+    """The table [truss] with a form."""
+
+    form: Annotated[FormName, one_of(FormName)] = key('the form of the truss: "Pratt", "Howe" or "Fink"')
+    span: Annotated[float, length("0.5 m", "150 m")] = key('distance between supports, such as "18 m"')
+    pitch: Annotated[float, field(_pitch)] | None = key("slope of the top chord", None)
+    rise: Annotated[float, length("0 m", "100 m")] | None = key("ridge above the top chord at the support", None)
+    heel_depth: Annotated[float, length("0 m", "20 m")] = key("depth between chord lines over the support", "0 m")
+    panels: Annotated[int, field(_panels)] | None = key(
+        "panels over the span",
+        None,
+        otherwise="the fewest even number that keeps rafter panels within the purlin spacing",
+    )
+    diagonals: Annotated[Lean, one_of(Lean)] | None = key("lean of the diagonals", None, otherwise="by the form's name")
+    supports: Annotated[FormSupports, one_of(FormSupports)] = key("the bearings", "left pinned, right sliding")
+
+    @model_validator(mode="after")
+    def _pitch_or_rise(self) -> Self:
+        if self.pitch is None and self.rise is None:
+            raise refused(
+                InputError(
+                    "the slope of the top chord is missing",
+                    'write pitch = "12 deg", or rise = "1.9 m" (ridge above the top chord\'s level at the support)',
+                    "pitch",
+                )
+            )
+        if self.pitch is not None and self.rise is not None:
+            raise refused(
+                InputError("pitch and rise are both given", "give one of them; the other follows from the span", "rise")
+            )
+        return self
+
+    def value(self) -> FormInput:
+        """Return the form as the truss room takes it; a rise becomes a pitch."""
+        rise = 0.0 if self.rise is None else self.rise
+        pitch = math.atan2(2 * rise, self.span) if self.pitch is None else self.pitch
+        return FormInput(self.form, self.span, pitch, self.heel_depth, self.panels, self.overhang, self.diagonals)
+
+
+class GivenTruss(_AnyTruss):
+    """The table [truss] with joints and bars one by one."""
+
+    joints: dict[Name, Annotated[tuple[float, float], field(_point)]] = key(
+        'the joints, one a line under [truss.joints]: A = ["0 m", "0 m"]'
+    )
+    bars: list[Annotated[tuple[str, str, Role], field(_bar)]] = key(
+        'the bars, each with its two joints and its role: [["A", "B", "top chord"], ["A", "C", "bottom chord"]]'
+    )
+    joint_supports: dict[Name, Annotated[Bearing, one_of(Bearing)]] = key(
+        'the bearings, under [truss.joint_supports]: A = "pinned", C = "sliding"'
+    )
+
+    @property
+    def supports(self) -> Supports:
+        """The bearings are those of `joint_supports`."""
+        return "as given"
+
+    def value(self) -> GivenInput:
+        """Return the joints and bars as the truss room takes them."""
+        joints = tuple((joint, x, y) for joint, (x, y) in self.joints.items())
+        return GivenInput(joints, tuple(self.bars), tuple(self.joint_supports.items()), self.overhang)
+
+
+def _way(table: Any) -> str:
+    return "given" if isinstance(table, dict) and not GIVEN_KEYS.isdisjoint(table) else "form"
+
+
+# A third way, a drawing (`wireframe = "roof.dxf"`), joins here as a table and a tag of its own.
+TrussTable = Annotated[
+    Annotated[FormTruss, Tag("form")] | Annotated[GivenTruss, Tag("given")],
+    Discriminator(_way),
+]
+TRUSS_WAYS: tuple[type[Table], ...] = tuple(get_args(entry)[0] for entry in get_args(get_args(TrussTable)[0]))
