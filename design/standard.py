@@ -16,7 +16,7 @@ class Ends:
 
     kind : "welded" or "bolted".
     weld_length : least length of the weld along each edge of the connected leg, in multiples of that leg.
-    bolts : bolts in one line along the member; `bolt_diameter` mm; `punched` holes (else drilled).
+    bolts : bolts in one line along the member; `bolt_diameter` mm; `punched` holes (else drilled); `bolt_grade` "8.8".
     """
 
     kind: Literal["welded", "bolted"] = "welded"
@@ -24,6 +24,7 @@ class Ends:
     bolts: int = 2
     bolt_diameter: float = 20.0
     punched: bool = True
+    bolt_grade: str = "8.8"
 
 
 @dataclass(frozen=True)
