@@ -1,10 +1,23 @@
-"""The top chord as continuous beams: what a load between joints gives to the joints, and how it bends the chord."""
+"""The top chord as continuous beams: what a load between joints gives to the joints, and how it bends the chord.
+
+Each straight run of the chord is a beam over its joints, hinged to the next run at a kink (heel, ridge, any other
+change of slope); an overhang continues the end run as a cantilever. Only the component of a load across the chord
+bends it.
+"""
 
 from __future__ import annotations
 
 from dataclasses import dataclass
+from functools import cached_property
+from itertools import pairwise
+
+import numpy as np
 
 from spanwright.truss.arrays import FloatArray, IntArray
+from spanwright.truss.beam import Beam
+from spanwright.truss.chords import slopes
+from spanwright.truss.model import Truss
+from spanwright.truss.tolerances import TOLERANCES
 
 
 @dataclass(frozen=True, eq=False)
@@ -22,3 +35,104 @@ class Stations:
     bar: IntArray
     at: FloatArray
     loads_between: IntArray
+
+
+@dataclass(frozen=True, eq=False)
+class Part:
+    """A part of a load case: forces on joints (j, 2) N, moments at the stations (m,) N mm, and how they came about."""
+
+    joint_loads: FloatArray
+    moments: FloatArray
+    derivation: tuple[str, ...]
+
+
+@dataclass(frozen=True, eq=False)
+class Influence:
+    """What unit forces at places (p,) of the top chord do.
+
+    shares : (j, p) the share of each force that goes to each joint of the truss.
+    moments : (m, p) mm, the moment at each station, sagging +, for a unit force across the chord, pressing in.
+    across : (p, 2) unit vectors across the chord at each place, pressing in.
+    """
+
+    shares: FloatArray
+    moments: FloatArray
+    across: FloatArray
+
+    def part(self, forces: FloatArray, derivation: tuple[str, ...]) -> Part:
+        """Return what forces (p, 2) N at the places do."""
+        pressing = (forces * self.across).sum(axis=1)
+        return Part(self.shares @ forces, self.moments @ pressing, derivation)
+
+
+@dataclass(frozen=True, eq=False)
+class ChordBeams:
+    """The top chord of a truss as beams, with the stations at which moments are wanted.
+
+    Places are mm along the chord from its first joint, negative or beyond its length on an overhang.
+    """
+
+    truss: Truss
+    stations: Stations
+
+    @cached_property
+    def runs(self) -> tuple[tuple[int, int], ...]:
+        """Straight runs of the chord: (first, last) positions of their joints in the chord."""
+        directions = slopes(self.truss).directions
+        turns = np.arccos(np.clip((directions[:-1] * directions[1:]).sum(axis=1), -1.0, 1.0))
+        kinks = np.flatnonzero(turns > TOLERANCES.straight) + 1
+        return tuple(pairwise((0, *kinks.tolist(), len(directions))))
+
+    @cached_property
+    def across(self) -> FloatArray:
+        """(chord bars, 2) unit vectors across each bar of the chord, pressing in from above."""
+        directions = slopes(self.truss).directions
+        return np.column_stack([directions[:, 1], -directions[:, 0]])
+
+    def influence(self, places: FloatArray) -> Influence:
+        """Return what unit forces at places (p,) of the chord do."""
+        chord = self.truss.top
+        position = np.array([chord.bars.index(bar) for bar in self.stations.bar])
+        sections = chord.along[position] + self.stations.at
+        shares = np.zeros((len(self.truss.joint_names), len(places)))
+        moments = np.zeros((len(sections), len(places)))
+        run_of_place = self._run_of(places)
+        for number, (first, last) in enumerate(self.runs):
+            here = np.flatnonzero(run_of_place == number)
+            inside = np.flatnonzero((position >= first) & (position < last))
+            joints = np.array(chord.joints[first : last + 1])
+            beam = Beam(chord.along[first : last + 1])
+            shares[np.ix_(joints, here)] = beam.reactions(places[here])
+            moments[np.ix_(inside, here)] = beam.moments(sections[inside], places[here])
+        bar = np.searchsorted(chord.along[1:-1], places)
+        return Influence(shares, moments, self.across[bar])
+
+    def at_joints(self, forces: FloatArray, derivation: tuple[str, ...]) -> Part:
+        """Return what forces (j, 2) N straight on the joints do: no bending."""
+        return Part(forces, np.zeros(len(self.stations.at)), derivation)
+
+    def _run_of(self, places: FloatArray) -> IntArray:
+        """Return (p,) the number of the run each place stands on; a place on a kink stands on the left one."""
+        kinks = self.truss.top.along[[first for first, _ in self.runs[1:]]]
+        return np.searchsorted(kinks, places)
+
+
+def chord_beams(truss: Truss, purlins_at: FloatArray, *, man: bool) -> ChordBeams:
+    """Return the top chord's beams with stations at its joints and at every load between them.
+
+    purlins_at : (l,) places of the purlin lines; those that stand on a joint have exactly its place.
+    man : whether a man's load is to be met: he stands at joints, and midway on bars that carry purlins between joints.
+    """
+    chord = truss.top
+    bars: list[int] = []
+    at: list[float] = []
+    loads_between = np.zeros(len(truss.bar_names), dtype=np.intp)
+    for bar, left, right in zip(chord.bars, chord.along[:-1], chord.along[1:], strict=True):
+        between = purlins_at[(purlins_at > left) & (purlins_at < right)] - left
+        if man and between.size:
+            between = np.append(between, (right - left) / 2)
+        loads_between[bar] = between.size
+        here = np.unique(np.concatenate([[0.0], between, [right - left]]))
+        bars += [bar] * here.size
+        at += here.tolist()
+    return ChordBeams(truss, Stations(np.array(bars, dtype=np.intp), np.array(at), loads_between))

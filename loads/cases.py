@@ -2,16 +2,28 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from collections.abc import Iterator
+from dataclasses import dataclass, replace
 from typing import Literal
 
-from spanwright.loads.bending import Stations
-from spanwright.loads.inputs import LoadsInput
+import numpy as np
+
+from spanwright.loads.bending import Part, Stations
+from spanwright.loads.inputs import JointLoad, LoadsInput, WindInput
+from spanwright.loads.joint_loads import at_eaves, at_joint, ceiling, ceiling_warnings, own_mass_loads
+from spanwright.loads.mirror import SUFFIX, is_symmetric, mirrored, mirrored_load
+from spanwright.loads.roof import Roof, roof_over
+from spanwright.loads.strips import SIDES
 from spanwright.truss.arrays import FloatArray
+from spanwright.truss.errors import InputError
 from spanwright.truss.model import Truss
 from spanwright.truss.purlins import PurlinLine
 
+__all__ = ["PERMANENT", "Case", "CaseKind", "LoadSet", "Stations", "load_cases", "own_mass_loads"]
+
 CaseKind = Literal["permanent", "imposed", "man", "wind"]
+PERMANENT = ("most", "least")
+"""The two sets of permanent loads: the greatest and the least credible."""
 
 
 @dataclass(frozen=True, eq=False)
@@ -31,6 +43,15 @@ class Case:
     moments: FloatArray
     derivation: tuple[str, ...] = ()
 
+    def joined_by(self, part: Part) -> Case:
+        """Return the case with a part added."""
+        return replace(
+            self,
+            joint_loads=self.joint_loads + part.joint_loads,
+            moments=self.moments + part.moments,
+            derivation=self.derivation + part.derivation,
+        )
+
 
 @dataclass(frozen=True, eq=False)
 class LoadSet:
@@ -42,13 +63,150 @@ class LoadSet:
 
 
 def load_cases(truss: Truss, lines: tuple[PurlinLine, ...], loads: LoadsInput, tributary: float) -> LoadSet:
-    """Return every load case; "most" and "least" come without the own mass (see `own_mass_loads`).
+    """Return every load case; "most" and "least" come without the own mass (see `joint_loads.own_mass_loads`).
 
     tributary : mm of roof along the ridge that the truss carries.
+
+    A load at a joint joins the case it names; a permanent one with a name of its own joins both sets, any other makes a
+    case of that name. What joins a wind case joins its mirrored twin at the mirror image of the joint.
+
+    Raises InputError for wind on a slope that does not exist, for a name given twice and for a kind that contradicts
+    the named case's; UnknownNameError for a load at an unknown joint.
     """
-    raise NotImplementedError
+    roof = roof_over(truss, lines, tributary, man=loads.man_load > 0.0)
+    cases: dict[str, Case] = {}
+    for case in (*_permanent(roof, loads), *_imposed(roof, loads), *_men(roof, loads), *_wind(roof, loads)):
+        if case.name in cases:
+            raise InputError(f'two cases are called "{case.name}"', "give every case a name of its own", "loads.wind")
+        cases[case.name] = case
+    warnings = [*ceiling_warnings(truss, loads.ceiling_permanent), *_wind_warnings(roof, loads)]
+    for load in loads.at_joint:
+        warnings += _join(roof, cases, load)
+    return LoadSet(_without_needless_twins(cases), roof.beams.stations, tuple(warnings))
 
 
-def own_mass_loads(truss: Truss, mass_per_m: FloatArray) -> FloatArray:
-    """Return (j, 2) N: the weight of the bars on the joints. mass_per_m : (b,) kg/m."""
-    raise NotImplementedError
+def _permanent(roof: Roof, loads: LoadsInput) -> Iterator[Case]:
+    for key, given in (("roof_permanent", loads.roof_permanent), ("ceiling_permanent", loads.ceiling_permanent)):
+        if given.least > given.most:
+            raise InputError(
+                f"the least value, {given.least * 1e3:g} kPa, is more than the most, {given.most * 1e3:g} kPa",
+                "state most and least the other way round",
+                f"loads.{key}",
+            )
+    for name in PERMANENT:
+        part = roof.permanent(getattr(loads.roof_permanent, name))
+        case = Case(name, "permanent", part.joint_loads, part.moments, part.derivation)
+        below = getattr(loads.ceiling_permanent, name)
+        if below:
+            case = case.joined_by(roof.beams.at_joints(*ceiling(roof.truss, below, roof.tributary)))
+        yield case
+
+
+def _imposed(roof: Roof, loads: LoadsInput) -> Iterator[Case]:
+    if loads.roof_imposed:
+        yield _case("imposed", "imposed", roof.imposed(loads.roof_imposed))
+        for half in SIDES:
+            yield _case(f"imposed {half}", "imposed", roof.imposed(loads.roof_imposed, half))
+
+
+def _men(roof: Roof, loads: LoadsInput) -> Iterator[Case]:
+    if loads.man_load:
+        for where, part in roof.men(loads.man_load):
+            yield _case(f"man {where}", "man", part)
+
+
+def _wind(roof: Roof, loads: LoadsInput) -> Iterator[Case]:
+    """Yield every wind case, each followed by its mirrored twin; on a roof of one slope there are no twins."""
+    for wind in loads.wind:
+        _refuse_missing_slope(roof, wind)
+        yield _wind_case(roof, wind)
+        if wind.mirrored and _has_both_slopes(roof):
+            yield _wind_case(roof, mirrored(wind))
+
+
+def _wind_case(roof: Roof, wind: WindInput) -> Case:
+    case = _case(wind.name, "wind", roof.wind(wind.left, wind.right))
+    return case.joined_by(roof.beams.at_joints(*at_eaves(roof.truss, wind.eaves_left, wind.eaves_right)))
+
+
+def _case(name: str, kind: CaseKind, part: Part) -> Case:
+    return Case(name, kind, part.joint_loads, part.moments, part.derivation)
+
+
+def _has_both_slopes(roof: Roof) -> bool:
+    return len(set(roof.strips.slope)) == 2
+
+
+def _refuse_missing_slope(roof: Roof, wind: WindInput) -> None:
+    for side, pressure in (("left", wind.left), ("right", wind.right)):
+        if pressure and side not in roof.strips.slope:
+            raise InputError(
+                f'wind case "{wind.name}" presses on the {side} slope, but the roof has no {side} slope',
+                f'leave "{side}" out, or state it as 0; give the pressure of the one slope there is',
+                "loads.wind",
+            )
+
+
+def _wind_warnings(roof: Roof, loads: LoadsInput) -> Iterator[str]:
+    twins = [wind for wind in loads.wind if wind.mirrored]
+    lopsided = [wind for wind in twins if wind.left != wind.right]
+    if twins and not _has_both_slopes(roof):
+        yield (
+            "the roof has one slope, so no wind case is mirrored: state wind from the other side as a case of its own, "
+            "with the pressures for that side"
+        )
+    elif lopsided and not is_symmetric(roof.truss):
+        yield (
+            "the truss is not symmetric, yet mirrored wind cases swap the pressures of its slopes: state wind from the "
+            "other side as a case of its own, with the pressures for that side, where the slopes differ"
+        )
+    if loads.wind and any(roof.truss.top.overhang):
+        yield (
+            "wind on the overhangs is the net pressure of their slope: pressure on their undersides is not added; "
+            "allow for it in the stated pressures"
+        )
+
+
+def _join(roof: Roof, cases: dict[str, Case], load: JointLoad) -> tuple[str, ...]:
+    """Add a joint's load to the case it names, or to both permanent sets, or as a new case; return warnings."""
+    part = roof.beams.at_joints(*at_joint(roof.truss, load))
+    names = PERMANENT if load.kind == "permanent" and load.case not in cases else (load.case,)
+    has_twin = load.kind == "wind" and (load.case not in cases or load.case + SUFFIX in cases)
+    for name in names:
+        _join_one(roof, cases, name, load.kind, part)
+    if not (has_twin and _has_both_slopes(roof)):
+        return ()
+    twin = mirrored_load(roof.truss, load)
+    if twin is None:
+        _join_one(roof, cases, load.case + SUFFIX, "wind", roof.beams.at_joints(np.zeros_like(part.joint_loads), ()))
+        return (f'the load at {load.joint} in wind case "{load.case}" has no mirror image: it acts in that case only',)
+    _join_one(roof, cases, twin.case, "wind", roof.beams.at_joints(*at_joint(roof.truss, twin)))
+    return ()
+
+
+def _without_needless_twins(cases: dict[str, Case]) -> tuple[Case, ...]:
+    """Return the cases without the mirrored ones that equal their original or hold nothing."""
+    kept = []
+    for name, case in cases.items():
+        original = cases.get(name.removesuffix(SUFFIX)) if name.endswith(SUFFIX) else None
+        if original is None or (np.any(case.joint_loads) and not _alike(case, original)):
+            kept.append(case)
+    return tuple(kept)
+
+
+def _alike(case: Case, other: Case) -> bool:
+    return np.array_equal(case.joint_loads, other.joint_loads) and np.array_equal(case.moments, other.moments)
+
+
+def _join_one(roof: Roof, cases: dict[str, Case], name: str, kind: CaseKind, part: Part) -> None:
+    known = cases.get(name)
+    if known is None:
+        nothing = roof.beams.at_joints(np.zeros_like(part.joint_loads), ())
+        known = _case(name, kind, nothing)
+    elif known.kind != kind:
+        raise InputError(
+            f'a load at a joint is stated as {kind} but joins case "{name}", which is {known.kind}',
+            f'state kind = "{known.kind}", or give the load a case name of its own',
+            "loads.at_joint",
+        )
+    cases[name] = known.joined_by(part)

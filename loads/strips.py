@@ -1,0 +1,116 @@
+"""From pressures on the roof to forces at the purlin lines: who carries what."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+import numpy as np
+
+from spanwright.truss.arrays import FloatArray
+from spanwright.truss.chords import Slopes, SlopeSide, slopes
+from spanwright.truss.model import Truss
+from spanwright.truss.purlins import PurlinLine
+
+SIDES: tuple[SlopeSide, ...] = ("left", "right")
+
+
+@dataclass(frozen=True, eq=False)
+class Strips:
+    """What each purlin line (l) carries of each straight piece (q) of the roof, both from left to right.
+
+    places : (l,) mm along the top chord from its first joint.
+    x : (l,) mm.
+    lengths : (l, q) mm of slope.
+    directions : (q, 2) unit vectors, left to right.
+    slope : (q,) the slope each piece lies on. half : (q,) the half of the roof it lies on.
+    """
+
+    places: FloatArray
+    x: FloatArray
+    lengths: FloatArray
+    directions: FloatArray
+    slope: tuple[SlopeSide, ...]
+    half: tuple[SlopeSide, ...]
+
+    def on_slope(self, load: float) -> FloatArray:
+        """Return (l, 2) N for a load down, N per mm of slope."""
+        return _down(load * self.lengths.sum(axis=1))
+
+    def on_plan(self, load: float, half: SlopeSide | None = None) -> FloatArray:
+        """Return (l, 2) N for a load down, N per mm of plan, on the whole roof or on one half alone."""
+        return _down(load * self.plan(half))
+
+    def plan(self, half: SlopeSide | None = None) -> FloatArray:
+        """Return (l,) mm on plan that each line carries, of the whole roof or of one half."""
+        loaded = np.array([half in (None, lies) for lies in self.half])
+        plan: FloatArray = self.lengths @ (np.abs(self.directions[:, 0]) * loaded)
+        return plan
+
+    def across(self, left: float, right: float) -> FloatArray:
+        """Return (l, 2) N for loads normal to the slopes, N per mm of slope, + presses in."""
+        load = np.array([left if lies == "left" else right for lies in self.slope])
+        normals = np.column_stack([self.directions[:, 1], -self.directions[:, 0]])
+        forces: FloatArray = self.lengths @ (load[:, None] * normals)
+        return forces
+
+
+def strips(truss: Truss, lines: tuple[PurlinLine, ...]) -> Strips:
+    """Divide the roof among the purlin lines.
+
+    A line carries half-way to each of its neighbours along the slope, the outermost ones to the roof's edge; where no
+    line stands on the apex, those nearest to it carry to the apex.
+    """
+    roof = slopes(truss)
+    places = np.array([line.along for line in lines])
+    half = _halves_meet(truss, roof)
+    cuts = _piece_cuts(truss, half)
+    middles = (cuts[:-1] + cuts[1:]) / 2
+    bar = np.searchsorted(truss.top.along[1:-1], middles)
+    bounds = _boundaries(truss, roof, places)
+    low = np.maximum.outer(bounds[:-1], cuts[:-1])
+    high = np.minimum.outer(bounds[1:], cuts[1:])
+    return Strips(
+        places,
+        np.array([line.x for line in lines]),
+        np.maximum(high - low, 0.0),
+        roof.directions[bar],
+        tuple(roof.side[at] for at in bar),
+        tuple("left" if middle < half else "right" for middle in middles),
+    )
+
+
+def _down(loads: FloatArray) -> FloatArray:
+    return np.column_stack([np.zeros_like(loads), -loads])
+
+
+def _edges(truss: Truss) -> tuple[float, float]:
+    left, right = truss.top.overhang
+    return -left, truss.top.length + right
+
+
+def _has_inner_apex(truss: Truss, roof: Slopes) -> bool:
+    return 0.0 < roof.apex_along < truss.top.length
+
+
+def _halves_meet(truss: Truss, roof: Slopes) -> float:
+    """Return the place where the halves of the roof meet: the apex; on a roof of one slope, above mid-span."""
+    if _has_inner_apex(truss, roof):
+        return roof.apex_along
+    x = truss.xy[list(truss.top.joints), 0]
+    middle = truss.xy[list(truss.bearing_joints), 0].mean()
+    return float(np.interp(middle, x, truss.top.along))
+
+
+def _piece_cuts(truss: Truss, half: float) -> FloatArray:
+    """Return the places, ascending, between which the roof is straight and lies on one half."""
+    return np.unique(np.array([*_edges(truss), *truss.top.along, half]))
+
+
+def _boundaries(truss: Truss, roof: Slopes, places: FloatArray) -> FloatArray:
+    """Return (l + 1,) the places where one line's share ends and the next one's begins."""
+    between = (places[:-1] + places[1:]) / 2
+    if _has_inner_apex(truss, roof):
+        astride = (places[:-1] < roof.apex_along) & (places[1:] > roof.apex_along)
+        between[astride] = roof.apex_along
+    start, end = _edges(truss)
+    return np.concatenate([[start], between, [end]])
