@@ -108,12 +108,12 @@ def check_panels(form: FormInput, purlin_spacing: float) -> None:
     parts = math.ceil(panel / (purlin_spacing + TOLERANCES.same_length))
     if parts == 1 or abs(parts * purlin_spacing - panel) <= TOLERANCES.on_joint:
         return
-    share = math.ceil(panel / parts)
+    share = f'purlins = "{math.ceil(panel / parts) / 1000:g} m" ({parts} to a panel), ' if form.overhang == 0 else ""
     raise InputError(
         f"{form.panels} panels make rafter panels of {_metres(panel)}, but purlins stand at most "
         f"{_metres(purlin_spacing)} apart (restraint.purlins), which asks for {follows} panels",
-        f'leave panels out or state panels = {follows}; or state purlins = "{share / 1000:g} m" ({parts} to a panel), '
-        '"at joints", or a list of distances where purlins are to stand between joints',
+        f'leave panels out or state panels = {follows}; or state {share}purlins = "at joints", '
+        "or a list of distances where purlins are to stand between joints",
         "truss.panels",
     )
 

@@ -26,12 +26,7 @@ def refuse_impossible(form: FormInput) -> None:
         raise UnknownNameError.among(form.form, list(get_args(FormName)), what="form", key="truss.form")
     refuse_outside(form.span, "span", key="truss.span", what="the span")
     refuse_outside(form.pitch, "pitch triangular", key="truss.pitch", what="the pitch")
-    if not 0 <= form.overhang <= WIDEST_OVERHANG * form.span:
-        raise InputError(
-            f"the overhang is {form.overhang:g} mm",
-            f"it must be from 0 to half the span, {WIDEST_OVERHANG * form.span:g} mm",
-            "truss.overhang",
-        )
+    refuse_overhang(form.overhang, form.span)
     if form.lean is not None and form.lean not in get_args(Lean):
         known = " or ".join(f'"{lean}"' for lean in get_args(Lean))
         raise InputError(f'the diagonals lean "{form.lean}"', f"state {known}, or leave it out", "truss.diagonals")
@@ -40,6 +35,16 @@ def refuse_impossible(form: FormInput) -> None:
     else:
         _refuse_impossible_heel(form)
         _refuse_impossible_panels(form)
+
+
+def refuse_overhang(overhang: float, span: float) -> None:
+    """Raise InputError (key "truss.overhang") for an overhang, mm in plan, that is negative or absurd."""
+    if not 0 <= overhang <= WIDEST_OVERHANG * span:
+        raise InputError(
+            f"the overhang is {overhang:g} mm",
+            f"it must be from 0 to half the span, {WIDEST_OVERHANG * span:g} mm",
+            "truss.overhang",
+        )
 
 
 def _refuse_impossible_heel(form: FormInput) -> None:

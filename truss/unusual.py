@@ -30,7 +30,7 @@ def unusual(truss: Truss) -> tuple[str, ...]:
         _judge("web slope", "the slope{of} to the bottom chord", *_web_slopes(truss)),
     ]
     if not meet:
-        checked.append(_judge("heel depth", "the depth at the heel", [float(min(depths[0], depths[-1]))]))
+        checked.append(_judge("heel depth", "the depth at the heel", [float(depths[[0, len(truss.top.bars)]].min())]))
     return tuple(sentence for sentences in checked for sentence in sentences)
 
 
@@ -71,9 +71,10 @@ def _pitch(truss: Truss) -> float:
 
 
 def _depths(truss: Truss) -> FloatArray:
-    """Return the vertical distance of the bottom chord below each top-chord joint, mm."""
+    """Return the vertical distance between the chords at each joint of the top one, then of the bottom one, mm."""
     top, bottom = truss.xy[list(truss.top.joints)], truss.xy[list(truss.bottom.joints)]
-    depths: FloatArray = top[:, 1] - np.interp(top[:, 0], bottom[:, 0], bottom[:, 1])
+    at = np.concatenate([top[:, 0], bottom[:, 0]])
+    depths: FloatArray = np.interp(at, top[:, 0], top[:, 1]) - np.interp(at, bottom[:, 0], bottom[:, 1])
     return depths
 
 
