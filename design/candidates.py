@@ -54,6 +54,7 @@ class Candidates:
     piece_centroid_outstanding : distance of its centroid from the back of the outstanding leg, mm.
     gap : mm between the pieces of a pair, 0 otherwise.
     stock : stock mark of the piece ("" = none known), see the catalogue.
+    hot : True for hot-finished hollow sections.
     """
 
     names: tuple[str, ...]
@@ -93,6 +94,7 @@ class Candidates:
     piece_centroid_outstanding: FloatArray
     gap: float
     stock: tuple[str, ...]
+    hot: BoolArray
 
     def __len__(self) -> int:
         return len(self.names)
