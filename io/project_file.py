@@ -18,6 +18,8 @@ from spanwright.design.project import Project
 from spanwright.io.schema import ProjectFile, defaults_taken
 from spanwright.io.schema_errors import first_mistake
 from spanwright.truss.errors import InputError
+from spanwright.truss.inputs import FormInput
+from spanwright.truss.possible import refuse_impossible
 
 _LARGEST_FILE = 2_000_000  # bytes: a project file has some thousand; this refuses a device or a wrong file
 _FROM_STARTER = "spanwright starter roof.toml writes a commented one to begin with"
@@ -42,11 +44,14 @@ def parse_project(text: str, name: str = "") -> Project:
     InputError if it is not TOML or holds a mistake.
     """
     try:
-        return _project(ProjectFile.model_validate(_tables(text)), text, name)
+        project = _project(ProjectFile.model_validate(_tables(text)), text, name)
+        if isinstance(project.truss, FormInput):
+            refuse_impossible(project.truss)
     except ValidationError as error:
         raise first_mistake(error).located(file=name) from None
     except InputError as error:
         raise error.located(file=name) from None
+    return project
 
 
 def _project(file: ProjectFile, text: str, name: str) -> Project:

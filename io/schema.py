@@ -13,8 +13,7 @@ from spanwright.io.schema_members import ConnectionsTable, MembersTable
 from spanwright.io.schema_restraint import RestraintTable
 from spanwright.io.schema_truss import FormTruss, TrussTable
 from spanwright.io.units import shown
-from spanwright.truss.errors import InputError, UnknownNameError
-from spanwright.truss.model import ROLES
+from spanwright.truss.errors import UnknownNameError
 
 
 class TitleBlockTable(Table):
@@ -56,30 +55,11 @@ class ProjectFile(Table):
     title_block: TitleBlockTable = subtable(TitleBlockTable)
 
     @model_validator(mode="after")
-    def _groups_agree(self) -> Self:
-        owner: dict[str, str] = {}
-        for group, bars in self.groups.items():
-            if group in ROLES:
-                raise refused(
-                    InputError(
-                        f'"{group}" is the group of its role already', "give the group another name", f"groups.{group}"
-                    )
-                )
-            for bar in bars:
-                if bar in owner:
-                    raise refused(
-                        InputError(
-                            f'bar "{bar}" is in the groups "{owner[bar]}" and "{group}"',
-                            "a bar gets one section: leave it in one group",
-                            f"groups.{group}",
-                        )
-                    )
-                owner[bar] = group
+    def _groups_are_named(self) -> Self:
         for group in self.members.groups:
             if group not in self.groups:
-                raise refused(
-                    UnknownNameError.among(group, list(self.groups), what="group", key=f"members.groups.{group}")
-                )
+                key = f"members.groups.{group}"
+                raise refused(UnknownNameError.among(group, list(self.groups), what="group", key=key))
         return self
 
 

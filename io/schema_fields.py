@@ -67,6 +67,11 @@ def ranged(kind: Kind, usual: str, least: str, most: str) -> Callable[[object], 
     return read
 
 
+def any_length(value: object) -> float:
+    """Read a length, mm, whose range the truss room judges."""
+    return quantity(value, LENGTH, "m")
+
+
 def length(least: str, most: str, usual: str = "m") -> PlainValidator:
     """Make the type of a length within a plausible range, mm."""
     return field(ranged(LENGTH, usual, least, most))
@@ -175,4 +180,5 @@ Text = Annotated[str, field(line_of_text)]
 Name = Annotated[str, field(name)]
 Names = Annotated[tuple[str, ...], field(names)]
 Answer = Annotated[bool, field(yes_or_no)]
+Length = Annotated[float, field(any_length)]
 Share = Annotated[float, field(ranged(SHARE, "%", "0 %", "50 %"))]

@@ -27,12 +27,6 @@ class PermanentTable(Table):
     most: SurfaceLoad = key('the greatest credible value, such as "0.25 kPa"')
     least: SurfaceLoad = key('the least credible value, such as "0.18 kPa"; it counts where the load helps')
 
-    @model_validator(mode="after")
-    def _ordered(self) -> Self:
-        if self.least > self.most:
-            raise refused(InputError("least is greater than most", "exchange the two values"))
-        return self
-
     def value(self) -> MostLeast:
         """Return it as the loads room takes it."""
         return MostLeast(self.most, self.least)
@@ -107,27 +101,6 @@ class LoadsTable(Table):
         'Write tables [[loads.wind]], or wind = "none" where no wind can act'
     )
     at_joint: list[JointLoadTable] = key("loads at joints", [])
-
-    @model_validator(mode="after")
-    def _cases_agree(self) -> Self:
-        kinds: dict[str, str] = {}
-        for case in self.wind:
-            if case.name in kinds:
-                raise refused(
-                    InputError(f'two wind cases are called "{case.name}"', "give each a name of its own", "wind")
-                )
-            kinds[case.name] = "wind"
-        for number, load in enumerate(self.at_joint, 1):
-            kind = kinds.setdefault(load.case, load.kind)
-            if kind != load.kind:
-                raise refused(
-                    InputError(
-                        f'"{load.kind}" contradicts the case "{load.case}", which is {kind}',
-                        f'write kind = "{kind}", or give the load another case',
-                        f"at_joint[{number}].kind",
-                    )
-                )
-        return self
 
     def value(self) -> LoadsInput:
         """Return the loads as the loads room takes them."""

@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-from itertools import pairwise
 from typing import Annotated, Literal, Self
 
 from pydantic import model_validator
@@ -11,56 +10,44 @@ from spanwright.io.schema_fields import (
     Answer,
     Table,
     Text,
+    any_length,
     counted,
     field,
     key,
     names,
     number,
     one_of,
-    ranged,
     refused,
     spelled,
     subtable,
 )
-from spanwright.io.units import LENGTH
 from spanwright.truss.errors import InputError
 from spanwright.truss.inputs import RestraintInput
 
 Anchor = Literal["roof bracing", "diaphragm", "nothing"]
 
 _ORDINAL = r"every ([2-9]|[1-9][0-9])(?:st|nd|rd|th)"
-_spacing = ranged(LENGTH, "m", "0.2 m", "10 m")
-_distance = ranged(LENGTH, "m", "0 m", "120 m")
-_from_apex = ranged(LENGTH, "m", "0.02 m", "2 m")
-_line = counted(1, 400)
+_line_number = counted(1, 1000)
 
 
 def _purlins(value: object) -> str | float | tuple[float, ...]:
     if isinstance(value, list):
-        lines = tuple(_distance(entry) for entry in value)
-        if not lines or any(after <= before for before, after in pairwise(lines)):
-            raise InputError(
-                "the purlin distances do not rise from the roof's edge", 'write them in order: ["0.1 m", "1.6 m", ...]'
-            )
-        return lines
+        return tuple(any_length(entry) for entry in value)
     if isinstance(value, str) and not any(character.isdigit() for character in value):
         spelled("at joints", value, '"at joints", a greatest spacing such as "1.5 m", or a list of distances')
         return "at joints"
-    return _spacing(value)
+    return any_length(value)
 
 
 def _ridge(value: object) -> float | None:
     if value == "one":
         return None
-    return _from_apex(spelled(r"pair, (.+) from the apex", value, '"one" or "pair, 0.2 m from the apex"')[1])
+    return any_length(spelled(r"pair, (.+) from the apex", value, '"one" or "pair, 0.2 m from the apex"')[1])
 
 
 def _anchored(value: object) -> str | tuple[int, ...]:
     if isinstance(value, list):
-        lines = tuple(_line(entry) for entry in value)
-        if not lines or len(set(lines)) < len(lines):
-            raise InputError("the list of purlin lines is empty or repeats a number", 'write "none", or [1, 4, 7]')
-        return lines
+        return tuple(_line_number(entry) for entry in value)
     return spelled("all|none", value, '"all", "none" or numbers counted from the left eaves, such as [1, 4, 7]')[0]
 
 
