@@ -22,6 +22,9 @@ class Tolerances:
     Rounding leaves at most 2e-10 (20 000 bars); the most flexible sound truss tried (1 000 panels, a cantilever)
     keeps 4e-6."""
 
+    motionless: float = 1e-6
+    """Relative: parts of a mechanism's motion smaller than this share of its largest are rounding."""
+
     residual: float = 1e-6
     """Relative: largest joint residual over largest joint load that a solution may leave. Doubles give 1e-10."""
 
@@ -54,6 +57,33 @@ class Tolerances:
 
     tiny_force: float = 1e-6
     """Relative to the largest bar force of a solution: smaller bar forces count as zero."""
+
+    ends_meet: float = 5.0
+    """mm: line ends of a drawing within this are one joint; never more than `ends_meet_share` (practice)."""
+
+    ends_meet_share: float = 1e-3
+    """Of the span: as `ends_meet`, for small trusses (practice: the lesser of 5 mm and 0.1 % of the span)."""
+
+    near_miss: float = 5.0
+    """Multiples of the tolerance that joins line ends: ends up to this apart are reported, not joined (practice)."""
+
+    off_upright: float = 0.02
+    """rad: a bar this near to vertical is a post, a chord turning less runs straight (5 mm at each end of 0.5 m)."""
+
+    steep_end: float = 0.52
+    """rad (30 degrees): an outline's end bar this steep, beside a longer run, is an end diagonal (project rule)."""
+
+    mark_reach: float = 300.0
+    """mm: a purlin, brace or bearing drawn this near to its chord or joint belongs to it (purlin depth and cleat)."""
+
+    drawing_noise: float = 1e-6
+    """mm: what turning, scaling and shifting coordinates of doubles may leave; smaller differences are none."""
+
+    near_origin: float = 1e6
+    """mm: within this of the origin doubles hold 1e-10 mm, and coordinates are taken as drawn."""
+
+    farthest: float = 1e12
+    """Drawing units: beyond this doubles hold no tenth of a millimetre in metres; refused."""
 
 
 TOLERANCES = Tolerances()
