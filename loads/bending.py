@@ -84,6 +84,11 @@ class ChordBeams:
         return tuple(pairwise((0, *kinks.tolist(), len(directions))))
 
     @cached_property
+    def beams(self) -> tuple[Beam, ...]:
+        """A beam for each run."""
+        return tuple(Beam(self.truss.top.along[first : last + 1]) for first, last in self.runs)
+
+    @cached_property
     def across(self) -> FloatArray:
         """(chord bars, 2) unit vectors across each bar of the chord, pressing in from above."""
         directions = slopes(self.truss).directions
@@ -97,11 +102,10 @@ class ChordBeams:
         shares = np.zeros((len(self.truss.joint_names), len(places)))
         moments = np.zeros((len(sections), len(places)))
         run_of_place = self._run_of(places)
-        for number, (first, last) in enumerate(self.runs):
+        for number, ((first, last), beam) in enumerate(zip(self.runs, self.beams, strict=True)):
             here = np.flatnonzero(run_of_place == number)
             inside = np.flatnonzero((position >= first) & (position < last))
             joints = np.array(chord.joints[first : last + 1])
-            beam = Beam(chord.along[first : last + 1])
             shares[np.ix_(joints, here)] = beam.reactions(places[here])
             moments[np.ix_(inside, here)] = beam.moments(sections[inside], places[here])
         bar = np.searchsorted(chord.along[1:-1], places)

@@ -73,6 +73,8 @@ def load_cases(truss: Truss, lines: tuple[PurlinLine, ...], loads: LoadsInput, t
     Raises InputError for wind on a slope that does not exist, for a name given twice and for a kind that contradicts
     the named case's; UnknownNameError for a load at an unknown joint.
     """
+    if not lines:
+        raise InputError("no purlin line carries the roof to the truss", "state where purlins stand", "restraint.purlins")
     roof = roof_over(truss, lines, tributary, man=loads.man_load > 0.0)
     cases: dict[str, Case] = {}
     for case in (*_permanent(roof, loads), *_imposed(roof, loads), *_men(roof, loads), *_wind(roof, loads)):
@@ -94,8 +96,7 @@ def _permanent(roof: Roof, loads: LoadsInput) -> Iterator[Case]:
                 f"loads.{key}",
             )
     for name in PERMANENT:
-        part = roof.permanent(getattr(loads.roof_permanent, name))
-        case = Case(name, "permanent", part.joint_loads, part.moments, part.derivation)
+        case = _case(name, "permanent", roof.permanent(getattr(loads.roof_permanent, name)))
         below = getattr(loads.ceiling_permanent, name)
         if below:
             case = case.joined_by(roof.beams.at_joints(*ceiling(roof.truss, below, roof.tributary)))
@@ -121,7 +122,8 @@ def _wind(roof: Roof, loads: LoadsInput) -> Iterator[Case]:
         _refuse_missing_slope(roof, wind)
         yield _wind_case(roof, wind)
         if wind.mirrored and _has_both_slopes(roof):
-            yield _wind_case(roof, mirrored(wind))
+            twin = _wind_case(roof, mirrored(wind))
+            yield replace(twin, derivation=(f"mirror image of {wind.name}", *twin.derivation))
 
 
 def _wind_case(roof: Roof, wind: WindInput) -> Case:

@@ -21,12 +21,14 @@ from spanwright.truss.purlins import PurlinLine
 class Roof:
     """The roof over one truss.
 
-    numbers : (l,) of the purlin lines. strips : what each carries. beams : the top chord under them.
+    names : (l,) of the purlin lines. on_joint : (l,) whether each stands on a joint.
+    strips : what each carries. beams : the top chord under them.
     tributary : mm of roof along the ridge that the truss carries.
     """
 
     truss: Truss
-    numbers: tuple[int, ...]
+    names: tuple[str, ...]
+    on_joint: tuple[bool, ...]
     strips: Strips
     beams: ChordBeams
     tributary: float
@@ -35,14 +37,15 @@ class Roof:
         """Return the part of a permanent pressure on the slope, MPa."""
         forces = self.strips.on_slope(pressure * self.tributary)
         carried = [f"{say.metres(length)} of slope" for length in self.strips.lengths.sum(axis=1)]
-        return self._part(f"roof: {self._per_metre(pressure)} of slope", forces, carried)
+        return self._part(f"roof: {self._per_metre(pressure)} of slope", forces, carried, self._shares)
 
     def imposed(self, pressure: float, half: SlopeSide | None = None) -> Part:
         """Return the part of an imposed pressure on plan, MPa, on the whole roof or on one half alone."""
         forces = self.strips.on_plan(pressure * self.tributary, half)
-        carried = [f"{say.metres(length)} on plan" for length in self.strips.plan(half)]
+        carried = [f"{say.metres(length)} on plan" if length else "" for length in self.strips.plan(half)]
         where = f" on the {half} half" if half else ""
-        return self._part(f"roof, imposed{where}: {self._per_metre(pressure)} on plan", forces, carried)
+        head = f"roof, imposed{where}: {self._per_metre(pressure)} on plan"
+        return self._part(head, forces, carried, self._shares_again)
 
     def wind(self, left: float, right: float) -> Part:
         """Return the part of pressures normal to the slopes, MPa, + presses in."""
@@ -57,7 +60,7 @@ class Roof:
             for row in self.strips.lengths
         ]
         head = f"wind across the slopes, + presses in: left {self._per_metre(left)}, right {self._per_metre(right)}"
-        return self._part(head, forces, carried)
+        return self._part(head, forces, carried, self._shares_again)
 
     def men(self, load: float) -> Iterator[tuple[str, Part]]:
         """Yield the name of each place where a man (N) is met, and what he does there.
@@ -65,38 +68,56 @@ class Roof:
         He stands on every top joint that is no bearing (there no bar feels him), midway on every bar that carries a
         purlin between its joints, and at the outermost purlin of an overhang.
         """
-        chord, names = self.truss.top, self.truss.joint_names
-        for joint in chord.joints:
+        names = self.truss.joint_names
+        for joint in self.truss.top.joints:
             if joint not in self.truss.bearing_joints:
                 forces = np.zeros((len(names), 2))
                 forces[joint, 1] = -load
                 text = f"man: {say.force(0.0, -load)} at {names[joint]}"
                 yield f"at {names[joint]}", self.beams.at_joints(forces, (text,))
-        for bar, left, right in zip(chord.bars, chord.along[:-1], chord.along[1:], strict=True):
-            if self.beams.stations.loads_between[bar]:
-                name = self.truss.bar_names[bar]
-                yield f"in {name}", self._man(load, (left + right) / 2, f"midway in {name}")
-        first, last = self.strips.places[[0, -1]]
-        for side, outermost, overhangs in (("left", first, first < 0.0), ("right", last, last > chord.length)):
-            if overhangs:
-                where = f"on {side} overhang"
-                yield where, self._man(load, outermost, f"{where}, at its outermost purlin")
+        standing = self._standing_between_joints()
+        influence = self.beams.influence(np.array([place for _, place in standing]))
+        for number, (where, _) in enumerate(standing):
+            forces = np.zeros((len(standing), 2))
+            forces[number, 1] = -load
+            text = f"man: {say.force(0.0, -load)} {where}, {say.shares(self.truss, influence.shares[:, number])}"
+            yield where, self._with_bending(influence.part(forces, (text,)))
+
+    def _standing_between_joints(self) -> list[tuple[str, float]]:
+        """Return where a man is met between the joints of the top chord: in words, and the place along it, mm."""
+        chord, loads_between = self.truss.top, self.beams.stations.loads_between
+        middles = (chord.along[:-1] + chord.along[1:]) / 2
+        bars = zip(chord.bars, middles.tolist(), strict=True)
+        standing = [(f"in {self.truss.bar_names[bar]}", middle) for bar, middle in bars if loads_between[bar]]
+        first, last = self.strips.places[[0, -1]].tolist()
+        if first < 0.0:
+            standing.append(("on left overhang", first))
+        if last > chord.length:
+            standing.append(("on right overhang", last))
+        return standing
 
     @cached_property
     def _carried(self) -> Influence:
         return self.beams.influence(self.strips.places)
 
-    def _man(self, load: float, place: float, where: str) -> Part:
-        influence = self.beams.influence(np.array([place]))
-        text = f"man: {say.force(0.0, -load)} {where}, {say.shares(self.truss, influence.shares[:, 0])}"
-        return self._with_bending(influence.part(np.array([[0.0, -load]]), (text,)))
+    @cached_property
+    def _shares(self) -> list[str]:
+        return [say.shares(self.truss, column) for column in self._carried.shares.T]
 
-    def _part(self, head: str, forces: FloatArray, carried: list[str]) -> Part:
+    @cached_property
+    def _shares_again(self) -> list[str]:
+        """Where each line's force goes, for cases after the permanent ones, which list the shares."""
+        shares = zip(self._shares, self.on_joint, strict=True)
+        return [text if on_joint else "shared as under most" for text, on_joint in shares]
+
+    def _part(self, head: str, forces: FloatArray, carried: list[str], goes: list[str]) -> Part:
+        """Return the part of forces (l, 2); `carried` says what each line carries ("" = nothing), `goes` where to."""
         lines = [
-            f"purlin {number} at x {say.metres(x)}, {carries}: {say.force(*force)}, {say.shares(self.truss, column)}"
-            for number, x, carries, force, column in zip(
-                self.numbers, self.strips.x.tolist(), carried, forces.tolist(), self._carried.shares.T, strict=True
+            f"{name} at x {say.metres(x)}, {carries}: {say.force(*force)}, {where}"
+            for name, x, carries, force, where in zip(
+                self.names, self.strips.x.tolist(), carried, forces.tolist(), goes, strict=True
             )
+            if carries
         ]
         return self._with_bending(self._carried.part(forces, (head, *lines, say.total(forces))))
 
@@ -112,4 +133,5 @@ def roof_over(truss: Truss, lines: tuple[PurlinLine, ...], tributary: float, *, 
     """Return the roof over a truss. man : whether a man's load is to be met."""
     carried = strips(truss, lines)
     beams = chord_beams(truss, carried.places, man=man)
-    return Roof(truss, tuple(line.number for line in lines), carried, beams, tributary)
+    on_joint = tuple(line.joint is not None for line in lines)
+    return Roof(truss, tuple(line.name for line in lines), on_joint, carried, beams, tributary)
