@@ -1,0 +1,69 @@
+"""The command `design`."""
+
+from __future__ import annotations
+
+from argparse import ArgumentParser, Namespace
+from collections.abc import Callable
+from pathlib import Path
+from typing import TYPE_CHECKING
+
+if TYPE_CHECKING:
+    from spanwright.design.project import Project
+    from spanwright.design.result import Design
+
+SUMMARY = "choose a section for every member of the truss in a project file"
+TEXT = """\
+Analyse the truss of a project file under every combination of its loads, and choose for each group of
+members the lightest section that passes every check. Prints a summary on one screen and writes, to a folder beside the
+project file (roof.out/ for roof.toml):
+
+  results.json                  everything, for machines
+  schedule.csv, schedule.xlsx   members and parts, for the workshop
+  utilisation.png, .svg         the truss coloured by utilisation
+  restraint.png, .svg           both chords with what holds them
+
+A group that names one section ("2L 80x80x6") instead of a family ("2L") is checked.
+
+examples:
+  spanwright starter roof.toml
+  spanwright design roof.toml
+  spanwright design roof.toml --out results --no-pictures
+
+exit status: 0 every member passes; 1 something fails; 2 the input is wrong
+"""
+
+
+def arguments(parser: ArgumentParser) -> None:
+    """Declare the arguments of a command that carries out a project file."""
+    parser.add_argument("project", type=Path, metavar="PROJECT.toml", help="the project file")
+    parser.add_argument("--out", type=Path, metavar="DIR", help="folder for results (default: PROJECT.out beside it)")
+    parser.add_argument("--no-pictures", action="store_true", help="leave out the pictures, which take longest")
+
+
+def run(arguments: Namespace) -> int:
+    """Design, print and write; return the exit status."""
+    return carry_out(arguments, _design)
+
+
+def _design(project: Project) -> Design:
+    from spanwright.design.run import design
+
+    return design(project)
+
+
+def carry_out(arguments: Namespace, station: Callable[[Project], Design]) -> int:
+    """Read the project, design or check it, write the results and print the summary; return the exit status."""
+    from spanwright.io.outputs import write_all
+    from spanwright.io.project_file import read_project
+    from spanwright.io.screen import print_summary
+    from spanwright.truss.errors import SpanwrightError
+
+    path: Path = arguments.project
+    project = read_project(path)
+    try:
+        result = station(project)
+    except SpanwrightError as error:
+        raise error.located(file=str(path)) from error
+    write_all(result, arguments.out or path.with_name(f"{path.stem}.out"), pictures=not arguments.no_pictures)
+    print_summary(result)
+    return 0 if result.passes else 1
