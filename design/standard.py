@@ -127,3 +127,6 @@ class Standard(Protocol):
 
     def packs_per_panel(self, candidates: Candidates, demand: Demand) -> IntArray:
         """(s, b) number of connectors between the joints of each member; 0 for single sections."""
+
+    def verify_notes(self) -> tuple[str, ...]:
+        """What a licensed copy of the standard must confirm, in sentences, for every output's cautions."""
