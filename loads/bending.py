@@ -28,8 +28,8 @@ class Stations:
     the last station of a bar are its joints, those between are the places of loads.
 
     bar : (m,) bar indices. at : (m,) mm from the bar's left joint.
-    loads_between : (b,) over all bars of the truss: purlins strictly between the joints of each bar, and the man
-        where he may stand there.
+    loads_between : (b,) over all bars of the truss: places strictly between the joints of each bar where a purlin
+        stands or a man may.
     """
 
     bar: IntArray
@@ -133,10 +133,10 @@ def chord_beams(truss: Truss, purlins_at: FloatArray, *, man: bool) -> ChordBeam
     loads_between = np.zeros(len(truss.bar_names), dtype=np.intp)
     for bar, left, right in zip(chord.bars, chord.along[:-1], chord.along[1:], strict=True):
         between = purlins_at[(purlins_at > left) & (purlins_at < right)] - left
-        if man and between.size:
-            between = np.append(between, (right - left) / 2)
+        middle = (right - left) / 2
+        if man and between.size and np.abs(between - middle).min() > TOLERANCES.same_point:
+            between = np.sort(np.append(between, middle))
         loads_between[bar] = between.size
-        here = np.unique(np.concatenate([[0.0], between, [right - left]]))
-        bars += [bar] * here.size
-        at += here.tolist()
-    return ChordBeams(truss, Stations(np.array(bars, dtype=np.intp), np.array(at), loads_between))
+        bars += [bar] * (between.size + 2)
+        at += [0.0, *between.tolist(), right - left]
+    return ChordBeams(truss, Stations(np.array(bars, dtype=np.intp), np.array(at, dtype=np.float64), loads_between))

@@ -74,7 +74,9 @@ def load_cases(truss: Truss, lines: tuple[PurlinLine, ...], loads: LoadsInput, t
     the named case's; UnknownNameError for a load at an unknown joint.
     """
     if not lines:
-        raise InputError("no purlin line carries the roof to the truss", "state where purlins stand", "restraint.purlins")
+        raise InputError(
+            "no purlin line carries the roof to the truss", "state where purlins stand", "restraint.purlins"
+        )
     roof = roof_over(truss, lines, tributary, man=loads.man_load > 0.0)
     cases: dict[str, Case] = {}
     for case in (*_permanent(roof, loads), *_imposed(roof, loads), *_men(roof, loads), *_wind(roof, loads)):

@@ -1,7 +1,7 @@
 """Coefficients of continuous beams over equal spans, as tabulated in structural handbooks to three places.
 
-Source: "Continuous beams, equal spans, all spans loaded" (tables of this kind stand in the Steel Designers' Manual and in
-Reynolds and Steedman, Reinforced Concrete Designer's Handbook). Values from memory, half a unit of the last place.
+Source: "Continuous beams, equal spans, all spans loaded" (tables of this kind stand in the Steel Designers' Manual and
+in Reynolds and Steedman, Reinforced Concrete Designer's Handbook). Values from memory, half a unit of the last place.
 """
 
 import numpy as np
@@ -34,13 +34,17 @@ def beam_of(spans: int) -> tuple[Beam, FloatArray]:
     return Beam(supports), supports
 
 
+def parts(first: float, spans: int, count: int) -> FloatArray:
+    return np.arange(first, spans * count) / count
+
+
 @pytest.mark.parametrize("spans", UNIFORM)
 def test_uniform_load_as_many_points(spans: int) -> None:
     beam, supports = beam_of(spans)
     count = 400
-    loads = (np.arange(count * spans) + 0.5) / count
+    loads = parts(0.5, spans, count)
     over, reactions = beam.moments(supports, loads).sum(axis=1) / count, beam.reactions(loads).sum(axis=1) / count
-    sections = np.arange(count * spans + 1) / count
+    sections = parts(0.0, spans, count)
     within = beam.moments(sections, loads).sum(axis=1) / count
     expected_reactions, expected_over, expected_within = UNIFORM[spans]
     assert reactions[: len(expected_reactions)] == pytest.approx(expected_reactions, abs=PLACES)
@@ -61,7 +65,7 @@ def test_point_load_at_the_middle_of_every_span(spans: int) -> None:
 
 
 def test_two_equal_spans_one_loaded() -> None:
-    """One of two equal spans loaded at its middle: R = 13/32, 22/32, -3/32 of P, M = -3/32 P L (common handbook case)."""
+    """One of two equal spans loaded at its middle: R = 13/32, 22/32, -3/32 of P, M = -3/32 P L (handbook case)."""
     beam, supports = beam_of(2)
     assert beam.reactions(np.array([0.5]))[:, 0] * 32.0 == pytest.approx([13.0, 22.0, -3.0])
     assert beam.moments(supports, np.array([0.5]))[1, 0] * 32.0 == pytest.approx(-3.0)
