@@ -56,7 +56,7 @@ def test_uniform_load_as_many_points(spans: int) -> None:
 @pytest.mark.parametrize("spans", MIDDLE)
 def test_point_load_at_the_middle_of_every_span(spans: int) -> None:
     beam, supports = beam_of(spans)
-    loads = np.arange(spans) + 0.5
+    loads = parts(0.5, spans, 1)
     expected_reactions, expected_over, expected_within = MIDDLE[spans]
     assert beam.reactions(loads).sum(axis=1)[: len(expected_reactions)] == pytest.approx(expected_reactions, abs=PLACES)
     assert beam.moments(supports, loads).sum(axis=1)[: len(expected_over)] == pytest.approx(expected_over, abs=PLACES)
