@@ -1,7 +1,12 @@
-"""The stiffness matrix in band storage and its Cholesky factor.
+"""The stiffness matrix in band storage, its Cholesky factor, and whether it holds the truss.
 
-All 2 j degrees of freedom are kept: a held one has a unit diagonal and nothing beside it, so it stays zero and costs
-nothing. Joints are numbered along the longer side of the truss, which keeps the band as narrow as its depth.
+All 2 j degrees of freedom (2 * joint + axis) keep their place: a held one has a unit diagonal and nothing beside it,
+so it stays zero. Joints are eliminated along the longer side of the truss, which keeps the band as narrow as its depth.
+
+Two judgements find a mechanism, because rounding hides it from a plain factorisation, which "solves" most of them:
+a pivot is next to nothing beside its diagonal; or an arbitrary set of forces moves the joints and hardly strains a bar.
+The first is sharp where a few bars nearly meet in a line. The second is needed where much of the truss turns about
+a joint eliminated late: rounding in that pivot grows with the third power of the number of panels that turn.
 """
 
 from __future__ import annotations
@@ -12,6 +17,7 @@ import numpy as np
 from scipy.linalg.lapack import dpbtrf, dpbtrs
 
 from spanwright.truss.arrays import BoolArray, FloatArray, IntArray
+from spanwright.truss.elongation import Elongation
 from spanwright.truss.model import Truss
 from spanwright.truss.tolerances import TOLERANCES
 
@@ -20,41 +26,42 @@ from spanwright.truss.tolerances import TOLERANCES
 class Factor:
     """A factorised stiffness matrix.
 
-    freedoms : (2 j,) degrees of freedom (2 * joint + axis) in the order of elimination.
+    freedoms : (2 j,) degrees of freedom in the order of elimination.
     band : (width + 1, 2 j) the lower Cholesky factor in band storage.
-    loose : the first degree of freedom without stiffness of its own once all before it are eliminated, or None;
-        where there is one the truss is a mechanism and the factor must not be used.
+    loose : a degree of freedom that takes part in a mechanism, or None where the truss stands. Where there is one,
+        the factor must not be used.
     """
 
     freedoms: IntArray
     band: FloatArray
-    loose: int | None
+    loose: int | None = None
 
     def displacements(self, forces: FloatArray) -> FloatArray:
-        """Return (2 j, c) mm for (2 j, c) N; held degrees of freedom must carry no force."""
+        """Return (2 j, ...) mm for forces (2 j, ...) N, which must be zero where held."""
         ordered = np.asfortranarray(forces[self.freedoms])
         solved, _ = dpbtrs(self.band, ordered, lower=1, overwrite_b=1)
-        displacements = np.zeros_like(forces)
+        displacements = np.empty_like(forces)
         displacements[self.freedoms] = solved
         return displacements
 
 
-def factorise(truss: Truss, stiffness: FloatArray, held: BoolArray) -> Factor:
-    """Assemble and factorise the stiffness matrix.
+def factorise(truss: Truss, elongation: Elongation, stiffness: FloatArray, held: BoolArray) -> Factor:
+    """Assemble and factorise the stiffness matrix of a truss.
 
-    stiffness : (b,) N/mm of each bar, EA / length. held : (j, 2).
-    A pivot is judged against its diagonal (`TOLERANCES.pivot`): a plain factorisation "solves" most mechanisms.
+    elongation : of the same truss. stiffness : (b,) N/mm of each bar, EA / length. held : (j, 2).
     """
     order = _along_longer_side(truss.xy)
     freedoms = (2 * order[:, None] + np.arange(2)).ravel()
-    band = _assemble(truss, stiffness, held, order)
+    band = _assembled(truss, stiffness, order)
+    _hold(band, held[order].ravel())
     diagonal = band[0].copy()
-    band, stopped = dpbtrf(band, lower=1, overwrite_ab=1)
-    if stopped > 0:
-        diagonal = diagonal[: stopped - 1]
-    weak = np.flatnonzero(band[0, : len(diagonal)] ** 2 < TOLERANCES.pivot * diagonal)
-    first = weak[0] if weak.size else stopped - 1
-    return Factor(freedoms, band, int(freedoms[first]) if first >= 0 else None)
+    band, stopped = dpbtrf(band, lower=1, overwrite_ab=1)  # stopped: number of the first pivot not above zero, or 0
+    sound = stopped - 1 if stopped else len(diagonal)
+    weak = np.flatnonzero(band[0, :sound] ** 2 < TOLERANCES.pivot * diagonal[:sound])
+    if weak.size or stopped:
+        return Factor(freedoms, band, int(freedoms[weak[0] if weak.size else sound]))
+    factor = Factor(freedoms, band)
+    return Factor(freedoms, band, _moves_without_strain(factor, elongation, held.ravel()))
 
 
 def _along_longer_side(xy: FloatArray) -> IntArray:
@@ -62,37 +69,43 @@ def _along_longer_side(xy: FloatArray) -> IntArray:
     return np.lexsort((xy[:, 1 - longer], xy[:, longer]))
 
 
-def _assemble(truss: Truss, stiffness: FloatArray, held: BoolArray, order: IntArray) -> FloatArray:
-    """Return the lower band: element (row, column) stands at [row - column, column]."""
-    joints = len(order)
-    place = np.empty(joints, dtype=np.intp)
-    place[order] = np.arange(joints)
-    near, far = 2 * np.sort(place[truss.ends], axis=1).T
-    swapped = place[truss.ends[:, 0]] > place[truss.ends[:, 1]]
+def _assembled(truss: Truss, stiffness: FloatArray, order: IntArray) -> FloatArray:
+    """Return (width + 1, 2 j) the stiffness of the unsupported truss: element (row, column) at [row - column, column].
+
+    Stored by columns, element (row, column) is number `row + width * column`.
+    """
+    place = np.empty_like(order)
+    place[order] = np.arange(len(order))
+    ends = 2 * place[truss.ends]
+    near, far = np.minimum(ends[:, 0], ends[:, 1]), np.maximum(ends[:, 0], ends[:, 1])
     width = int((far - near).max(initial=0)) + 1
+    down, right = 1, width  # steps to the next row and to the next column
 
-    free = ~held[truss.ends] * truss.directions[:, None, :]  # (b, end, axis), nothing where held
-    a = np.where(swapped[:, None], free[:, 1], free[:, 0])
-    b = np.where(swapped[:, None], free[:, 0], free[:, 1])
-    ka, kb = stiffness[:, None] * a, stiffness[:, None] * b
+    x, y = truss.directions.T
+    along = stiffness * np.array([x * x, x * y, y * y])
+    own = np.array([[0], [down], [down + right]])
+    joint = np.array([[0], [down], [right], [down + right]])
+    where = np.concatenate([near * (1 + width) + own, far * (1 + width) + own, far + near * width + joint])
+    what = np.concatenate([along, along, -along[[0, 1, 1, 2]]])
+    size = 2 * len(order) * (width + 1)
+    flat = np.bincount(where.ravel(), what.ravel(), minlength=size).astype(np.float64, copy=False)
+    return flat.reshape(-1, width + 1).T
 
-    # (row, column, value) of the ten elements of a bar's 4 x 4 matrix on and below the diagonal
-    elements = [
-        (near, near, ka[:, 0] * a[:, 0]),
-        (near + 1, near, ka[:, 0] * a[:, 1]),
-        (near + 1, near + 1, ka[:, 1] * a[:, 1]),
-        (far, near, -ka[:, 0] * b[:, 0]),
-        (far + 1, near, -ka[:, 0] * b[:, 1]),
-        (far, near + 1, -ka[:, 1] * b[:, 0]),
-        (far + 1, near + 1, -ka[:, 1] * b[:, 1]),
-        (far, far, kb[:, 0] * b[:, 0]),
-        (far + 1, far, kb[:, 0] * b[:, 1]),
-        (far + 1, far + 1, kb[:, 1] * b[:, 1]),
-    ]
-    # column-wise storage of width + 1 numbers a column: [row - column, column] is number row + column * width
-    where = np.concatenate([row + column * width for row, column, _ in elements])
-    values = np.concatenate([value for *_, value in elements])
-    flat = np.bincount(where, values, minlength=2 * joints * (width + 1)).astype(np.float64, copy=False)
-    band = flat.reshape(2 * joints, width + 1)
-    band[:, 0] += held[order].ravel()
-    return band.T
+
+def _hold(band: FloatArray, held: BoolArray) -> None:
+    """Clear the rows and columns of held degrees of freedom in place and set their diagonal to one."""
+    columns = np.flatnonzero(held)
+    below = np.arange(len(band))[:, None]
+    band[:, columns] = 0.0
+    band[below, columns - below] = 0.0  # a column before the first wraps to the last ones' unused places
+    band[0, columns] = 1.0
+
+
+def _moves_without_strain(factor: Factor, elongation: Elongation, fixed: BoolArray) -> int | None:
+    """Return the degree of freedom that moves most if arbitrary forces hardly strain a bar, else None."""
+    trial = np.cos(np.arange(len(fixed)))
+    trial[fixed] = 0.0
+    motion = factor.displacements(trial)
+    size = np.abs(motion)
+    strained = np.abs(elongation.of_bars(motion)).max(initial=0.0)
+    return int(size.argmax()) if strained < TOLERANCES.strainless * size.max(initial=0.0) else None
