@@ -122,6 +122,7 @@ def test_a_beam_strutted_from_below_has_a_straight_top_chord() -> None:
     assert along(truss, "bottom") == "ADC"
 
 
+IN_METRES = tuple((name, x / 1000, y / 1000) for name, x, y in KING_POST.joints)
 EXTRA_POST: Bars = (("D", "B", "post"),)
 REFUSED: list[tuple[dict[str, Any], type[SpanwrightError], str, tuple[str, ...]]] = [
     ({"joints": ()}, InputError, "truss.joints", ("no joint",)),
