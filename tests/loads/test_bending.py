@@ -50,6 +50,14 @@ def test_the_ridge_is_a_hinge() -> None:
     assert alone.moments[right] == pytest.approx(np.zeros(right.sum()))
 
 
+def test_one_bar_between_hinges_is_a_simple_beam() -> None:
+    truss = build_form(FormInput("Howe", 8000.0, math.atan2(3.0, 4.0), panels=2))
+    beams = beams_with(truss, 2500.0)
+    part = beams.influence(np.array([2500.0])).part(DOWN, ())
+    assert part.moments[at(beams, "TC1", 2500.0)] == pytest.approx(800.0 * 5000.0 / 4)
+    assert part.joint_loads[[truss.joint("B0"), truss.joint("T1")]] == pytest.approx(np.array([[0, -500.0]] * 2))
+
+
 def test_a_push_along_the_chord_does_not_bend_it() -> None:
     beams = beams_with(build_form(FOUR_PANELS), 1250.0)
     along = np.array([[800.0, 600.0]])

@@ -10,7 +10,7 @@ from spanwright.truss.forms import build_form
 from spanwright.truss.given import build_given
 from spanwright.truss.inputs import FormInput, GivenInput, RestraintInput
 from spanwright.truss.model import Truss
-from spanwright.truss.purlins import lay_purlins
+from spanwright.truss.purlins import PurlinLine, lay_purlins
 
 # 3-4-5 slopes: 8 m span, 3 m rise, 5 m of slope on each side, panels of 1.25 m on the slope
 ROOF = FormInput("Howe", 8000.0, math.atan2(3.0, 4.0), panels=8)
@@ -44,6 +44,15 @@ def test_the_eaves_line_carries_from_the_edge_of_an_overhang() -> None:
     roof = divided(build_form(overhanging), (200.0, 3000.0))  # from the edge: 200 mm on the overhang, 2 m up the slope
     assert roof.places == pytest.approx([-800.0, 2000.0, 5000.0, 8000.0, 10800.0])
     assert roof.lengths.sum(axis=1) == pytest.approx([1600, 2900, 3000, 2900, 1600])
+
+
+def test_without_a_ridge_line_the_slopes_part_at_the_apex() -> None:
+    def line(number: int, along: float) -> PurlinLine:
+        return PurlinLine(number, 0.0, 0.0, along, None, None, True, "left")
+
+    roof = strips(build_form(ROOF), (line(1, 1000.0), line(2, 4600.0), line(3, 7000.0)))
+    assert roof.lengths.sum(axis=1) == pytest.approx([2800, 2200, 5000])
+    assert roof.plan("right") == pytest.approx([0, 0, 4000])
 
 
 def test_wind_presses_across_each_slope() -> None:
