@@ -3,9 +3,11 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
-from typing import Annotated, Any, Self
+from types import UnionType
+from typing import Annotated, Any, Self, Union, get_args, get_origin
 
 from pydantic import model_validator
+from pydantic.fields import FieldInfo
 
 from spanwright.io.schema_fields import Name, Names, Table, Text, counted, field, key, refused, subtable
 from spanwright.io.schema_loads import LoadsTable
@@ -88,3 +90,34 @@ def _defaults_inside(value: Any, where: str) -> Iterator[tuple[str, str]]:
 
 def _as_written(default: object) -> str:
     return default if isinstance(default, str) else shown(default)
+
+
+def tables_at(place: tuple[int | str, ...]) -> list[type[Table]]:
+    """Return the tables that may stand at a place; [truss] has one for each way of giving it."""
+    tables: list[type[Table]] = [ProjectFile]
+    for part in place:
+        if isinstance(part, str):
+            tables = [
+                inner for table in tables if part in table.model_fields for inner in _inner(table.model_fields[part])
+            ]
+    return tables
+
+
+def all_tables(path: str = "", table: type[Table] = ProjectFile) -> Iterator[tuple[str, type[Table]]]:
+    """Yield (dotted place, table) of every table that a project file may hold; "" is the file itself."""
+    yield path, table
+    for name, info in table.model_fields.items():
+        for inner in _inner(info):
+            yield from all_tables(f"{path}.{name}" if path else name, inner)
+
+
+def _inner(info: FieldInfo) -> list[type[Table]]:
+    return list(_tables_in(info.annotation))
+
+
+def _tables_in(annotation: Any) -> Iterator[type[Table]]:
+    if isinstance(annotation, type) and issubclass(annotation, Table):
+        yield annotation
+    elif get_origin(annotation) in (list, Union, UnionType, Annotated):
+        for part in get_args(annotation):
+            yield from _tables_in(part)

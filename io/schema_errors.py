@@ -2,16 +2,10 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
-from types import UnionType
-from typing import Annotated, Any, Union, get_args, get_origin
-
 from pydantic import ValidationError
-from pydantic.fields import FieldInfo
 from pydantic_core import ErrorDetails
 
-from spanwright.io.schema import ProjectFile
-from spanwright.io.schema_fields import Table
+from spanwright.io.schema import all_tables, tables_at
 from spanwright.io.schema_truss import GIVEN_KEYS
 from spanwright.io.units import shown
 from spanwright.truss.errors import InputError, UnknownNameError
@@ -24,11 +18,12 @@ _WANTED = {
 
 
 def first_mistake(error: ValidationError) -> InputError:
-    """Return the mistake to report: an unknown key before a missing one, as it may be that one misspelled.
+    """Return the mistake to report: first unknown keys, then wrong values, then what is missing.
 
-    The remedy also names the keys of the other mistakes.
+    A missing key may be an unknown one misspelled. The remedy also names the keys of the other mistakes.
     """
-    details = sorted(error.errors(include_url=False), key=lambda detail: detail["type"] != "extra_forbidden")
+    details = error.errors(include_url=False)
+    details.sort(key=lambda detail: ("extra_forbidden", "", "missing").index(_kind(detail)))
     mistakes = [_translate(detail) for detail in details]
     first = mistakes[0]
     others = list(dict.fromkeys(mistake.key for mistake in mistakes[1:] if mistake.key != first.key))
@@ -36,6 +31,10 @@ def first_mistake(error: ValidationError) -> InputError:
         listed = ", ".join(others[:6]) + (", ..." if len(others) > 6 else "")
         first.remedy += f"\n  {len(others)} more to mend: {listed}"
     return first
+
+
+def _kind(detail: ErrorDetails) -> str:
+    return detail["type"] if detail["type"] in ("extra_forbidden", "missing") else ""
 
 
 def _translate(detail: ErrorDetails) -> InputError:
@@ -68,7 +67,7 @@ def _dotted(place: tuple[int | str, ...]) -> str:
 
 def _unknown_key(place: tuple[int | str, ...]) -> InputError:
     name = str(place[-1])
-    known = list(dict.fromkeys(key for table in _tables_at(place[:-1]) for key in table.model_fields))
+    known = list(dict.fromkeys(key for table in tables_at(place[:-1]) for key in table.model_fields))
     where = _dotted(place)
     if name in known:
         return InputError(
@@ -77,45 +76,15 @@ def _unknown_key(place: tuple[int | str, ...]) -> InputError:
             where,
         )
     error = UnknownNameError.among(name, known, what="key", key=where)
-    homes = [home for home, table in _all_tables() if name in table.model_fields]
+    homes = [home for home, table in all_tables() if name in table.model_fields]
     if homes:
         error.remedy = "it belongs " + " or ".join(f"in [{home}]" if home else "above all tables" for home in homes)
     return error
 
 
 def _meaning(place: tuple[int | str, ...]) -> str:
-    for table in _tables_at(place[:-1]):
+    for table in tables_at(place[:-1]):
         info = table.model_fields.get(str(place[-1]))
         if info is not None and info.description:
             return info.description
     return ""
-
-
-def _tables_at(place: tuple[int | str, ...]) -> list[type[Table]]:
-    """Return the tables that may stand at a place; [truss] has one for each way of giving it."""
-    tables: list[type[Table]] = [ProjectFile]
-    for part in place:
-        if isinstance(part, str):
-            tables = [
-                inner for table in tables if part in table.model_fields for inner in _inner(table.model_fields[part])
-            ]
-    return tables
-
-
-def _all_tables(path: str = "", table: type[Table] = ProjectFile) -> Iterator[tuple[str, type[Table]]]:
-    yield path, table
-    for name, info in table.model_fields.items():
-        for inner in _inner(info):
-            yield from _all_tables(f"{path}.{name}" if path else name, inner)
-
-
-def _inner(info: FieldInfo) -> list[type[Table]]:
-    return list(_tables_in(info.annotation))
-
-
-def _tables_in(annotation: Any) -> Iterator[type[Table]]:
-    if isinstance(annotation, type) and issubclass(annotation, Table):
-        yield annotation
-    elif get_origin(annotation) in (list, Union, UnionType, Annotated):
-        for part in get_args(annotation):
-            yield from _tables_in(part)

@@ -37,6 +37,11 @@ class Kind:
         return f"{self.article} {self.name}"
 
     @property
+    def factors(self) -> dict[str, float]:
+        """How much of the inside unit each unit is."""
+        return {unit: float(times / over) for unit, (times, over) in self.units.items()}
+
+    @property
     def spellings(self) -> str:
         """The units that may be written."""
         return f"{self.name}: {', '.join(self.units)}"
@@ -128,8 +133,7 @@ def slope(value: object) -> float:
 
 def written(value: float, kind: Kind, unit: str) -> str:
     """Write a value of the inside unit as text with its unit: `written(18000.0, LENGTH, "m")` is "18 m"."""
-    times, over = kind.units[unit]
-    return f"{value * float(over) / float(times):.12g} {unit}"
+    return f"{value / kind.factors[unit]:.12g} {unit}"
 
 
 def shown(value: object) -> str:
