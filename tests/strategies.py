@@ -1,4 +1,4 @@
-"""Hypothesis strategies that draw whole trusses, for every property test. Small: at most 16 panels."""
+"""Hypothesis strategies that draw whole trusses, for every property test. Small: at most 16 panels, none under 0.6 m."""
 
 from __future__ import annotations
 
@@ -33,7 +33,7 @@ def forms(draw: st.DrawFn) -> FormInput:
         return FormInput("Fink", span, pitch, panels=draw(st.sampled_from(sorted(FINK_NAMES))), overhang=overhang)
     heel_depth = draw(st.sampled_from([0.0, 0.0, 500.0, 900.0, 1500.0]))
     pitch = math.radians(draw(_within(3 if heel_depth else 8, 40)))
-    panels = 2 * draw(st.integers(1, 8))
+    panels = 2 * draw(st.integers(1, min(8, int(span / 1200))))
     lean: Lean | None = draw(st.sampled_from([None, *get_args(Lean)]))
     return FormInput("Pratt" if name == "Pratt" else "Howe", span, pitch, heel_depth, panels, overhang, lean)
 
