@@ -8,7 +8,7 @@ import numpy as np
 
 from spanwright.design.candidates import FAMILIES, Candidates, Family
 from spanwright.design.catalogue import COMMERCIAL, DENSITY, STOCKS, TO_ORDER, Catalogue, Process, shipped
-from spanwright.design.section_names import angle_name, parse, tube_name
+from spanwright.design.section_names import SectionName, angle_name, parse, tube_name
 from spanwright.design.section_rows import AngleRows, TubeRows, angle_rows, tube_rows
 from spanwright.design.steels import steel as grade_of
 from spanwright.design.steels import strength
@@ -88,9 +88,7 @@ def find(
     if isinstance(rows, TubeRows):
         here = _of_process(here, rows.hot, said.process)
     if not here.any():
-        prefix = said.family.removesuffix(" star")
-        known = list(dict.fromkeys(f"{prefix} {size}" for size in rows.sizes))
-        raise UnknownNameError.among(f"{prefix} {said.size}", known, what="section", key=key)
+        raise _unknown(said, rows.sizes, key)
     picked = rows.take(here)
     readings = _turned(said.family, picked, steel, gap if said.gap is None else said.gap)
     if said.way:
@@ -132,6 +130,19 @@ def _in_stock(rows: AngleRows, stocked: str, *, certified: bool) -> BoolArray:
     unlisted: BoolArray = np.array([market != stocked for market in rows.market])
     offered: BoolArray = np.array([mark != "" and not (certified and mark == COMMERCIAL) for mark in rows.stock])
     return unlisted | offered
+
+
+def _unknown(said: SectionName, sizes: tuple[str, ...], key: str) -> UnknownNameError:
+    """The error for a size that is not in the catalogue, with the size that is nearest in its lengths."""
+    prefix = said.family.removesuffix(" star")
+    known = np.array([_lengths(size) for size in sizes])
+    nearest = f"{prefix} {sizes[np.argmin(np.sum(np.abs(known - _lengths(said.size)) / known, axis=1))]}"
+    found = f'no section in the catalogue is called "{prefix} {said.size}"'
+    return UnknownNameError(found, f'the nearest is "{nearest}"', key, "", nearest)
+
+
+def _lengths(size: str) -> list[float]:
+    return [float(length) for length in size.split("x")]
 
 
 def _of_process(here: BoolArray, hot: BoolArray, process: str) -> BoolArray:

@@ -44,7 +44,8 @@ def single_angle(angle: AngleShape) -> Turned:
     the plastic modulus is about the parallel axis, as if sideways movement were prevented.
     """
     x, y = angle.centroid_x, angle.centroid_y
-    h, b, t = angle.upright, angle.level, angle.thickness
+    h, b, t, q = angle.upright, angle.level, angle.thickness, angle.toe
+    sharp = np.zeros_like(t)
     inertias = (angle.inertia_x, angle.inertia_y, angle.product)
     return Turned(
         area=angle.area,
@@ -53,14 +54,14 @@ def single_angle(angle: AngleShape) -> Turned:
         inertia_out=angle.inertia_y,
         inertia_minor=angle.inertia_v,
         inertia_major=angle.inertia_u,
-        modulus_heel=_free_modulus(*inertias, ((-x, -y), (b - x, -y), (b - x, t - y))),
-        modulus_toe=_free_modulus(*inertias, ((-x, h - y), (t - x, h - y))),
+        modulus_heel=_free_modulus(*inertias, ((-x, -y, sharp), (b - x, -y, sharp), (b - x - q, t - y - q, q))),
+        modulus_toe=_free_modulus(*inertias, ((-x, h - y, sharp), (t - x - q, h - y - q, q))),
         modulus_plastic=angle.plastic_x,
         torsion=angle.torsion,
         warping=angle.warping,
         shear_minor=angle.shear_v,
         shear_major=angle.shear_u,
-        shear_sym=np.zeros_like(t),
+        shear_sym=sharp,
         depth=h,
         width=b,
     )
@@ -108,12 +109,12 @@ def starred(angle: AngleShape, gap: float) -> Turned:
     along = 2 * angle.inertia_u
     inertia = 2 * (angle.inertia_x + angle.area * shift**2)
     product = 2 * (angle.product + angle.area * shift**2)
-    near = np.full_like(inertia, gap / 2)
-    far, inner = near + angle.upright, near + angle.thickness
-    modulus = _free_modulus(
-        inertia, inertia, product, ((near, near), (near, far), (inner, far), (far, near), (far, inner))
-    )
     none = np.zeros_like(inertia)
+    near, q = none + gap / 2, angle.toe
+    far, inner = near + angle.upright, near + angle.thickness
+    heel_and_tips = ((near, near, none), (near, far, none), (far, near, none))
+    toes = ((inner - q, far - q, q), (far - q, inner - q, q))
+    modulus = _free_modulus(inertia, inertia, product, heel_and_tips + toes)
     return Turned(
         area=2 * angle.area,
         perimeter=2 * angle.perimeter,
@@ -158,11 +159,13 @@ def tube(shape: TubeShape) -> Turned:
 
 
 def _free_modulus(
-    ix: FloatArray, iy: FloatArray, ixy: FloatArray, points: tuple[tuple[FloatArray, FloatArray], ...]
+    ix: FloatArray, iy: FloatArray, ixy: FloatArray, rounds: tuple[tuple[FloatArray, FloatArray, FloatArray], ...]
 ) -> FloatArray:
-    """Least modulus, mm3, over points (x, y from the centroid) for a moment about x with free bending about y.
+    """Least modulus, mm3, for a moment about x while bending about y is free.
 
+    rounds : (x, y, radius) of circles that bound the outline, from the centroid; a sharp corner has radius 0.
     The stress is M (Iy y - Ixy x) / (Ix Iy - Ixy^2), mechanics of unsymmetric bending.
     """
-    worst = np.max([np.abs(iy * y - ixy * x) for x, y in points], axis=0)
+    gradient = np.hypot(iy, ixy)
+    worst = np.max([np.abs(iy * y - ixy * x) + radius * gradient for x, y, radius in rounds], axis=0)
     return np.asarray((ix * iy - ixy**2) / worst)
