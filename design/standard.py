@@ -56,6 +56,9 @@ class Demand:
     first_web : (b, c) True where the bar is the first compression web from a bearing in that combination.
     one_leg : (b,) True for webs that may use the one-leg rule (plane truss web, webs all on one side).
     ends, packs : end connections and connectors assumed.
+    gusset : mm, thickness of the gussets: eccentricity of single angles that the one-leg rule does not cover.
+    heel_up : (b,) True where the outstanding legs of a pair lie at the upper fibre; None: of every member, as in
+        a top chord.
     """
 
     bars: tuple[str, ...]
@@ -74,6 +77,8 @@ class Demand:
     one_leg: BoolArray
     ends: Ends
     packs: Packs
+    gusset: float = 8.0
+    heel_up: BoolArray | None = None
 
 
 CheckKind = Literal["strength", "limit"]
@@ -108,19 +113,25 @@ class Check:
 class Standard(Protocol):
     """A member standard: everything a run asks of it."""
 
-    name: str
-    """With edition, as printed: "SANS 10162-1:2011"."""
+    @property
+    def name(self) -> str:
+        """With edition, as printed: "SANS 10162-1:2011"."""
 
-    modulus: float
-    """Modulus of elasticity E, MPa."""
+    @property
+    def modulus(self) -> float:
+        """Modulus of elasticity E, MPa."""
 
-    expansion: float
-    """Coefficient of linear expansion, per K."""
+    @property
+    def expansion(self) -> float:
+        """Coefficient of linear expansion, per K."""
 
-    restraint_share: float
-    """Share of the compression in a chord that a point restraint must resist, with `restraint_clause`."""
+    @property
+    def restraint_share(self) -> float:
+        """Share of the compression in a chord that a point restraint must resist."""
 
-    restraint_clause: str
+    @property
+    def restraint_clause(self) -> str:
+        """Clause of `restraint_share`."""
 
     def checks(self, candidates: Candidates, demand: Demand) -> tuple[Check, ...]:
         """Check every candidate for every member; the order of the checks is the order of printing."""
