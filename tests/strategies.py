@@ -1,4 +1,4 @@
-"""Hypothesis strategies that draw whole trusses, for every property test. Small: at most 16 panels, none under 0.6 m."""
+"""Hypothesis strategies that draw whole trusses for property tests: at most 16 panels, none under 0.6 m."""
 
 from __future__ import annotations
 
