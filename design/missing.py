@@ -1,0 +1,73 @@
+"""What this roof cannot lose: the greatest utilisation if any one restraint, line or the whole anchor is missing."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass, replace
+
+import numpy as np
+
+from spanwright.design.demand import of_bars, side_by_side, sideways_compression
+from spanwright.design.setting import Setting
+from spanwright.design.sizing import Choice, worst_ratio
+from spanwright.design.standard import Demand
+from spanwright.truss.lengths import BucklingLengths, buckling_lengths
+from spanwright.truss.restraint import parts, without
+
+
+@dataclass(frozen=True)
+class Missing:
+    """The truss without one part of what holds it.
+
+    part : in words. unheld : names of chord ends that nothing holds any more (then there is no utilisation).
+    utilisation : greatest over all members. bar : the member, with its out-of-plane length in mm.
+    """
+
+    part: str
+    unheld: tuple[str, ...]
+    utilisation: float
+    bar: str
+    out_of_plane: float
+
+
+def if_missing(setting: Setting, wanted: Demand, choices: tuple[Choice, ...]) -> tuple[Missing, ...]:
+    """Return one row a part that can go missing, worst first; an end that nothing holds any more ranks first.
+
+    The chosen sections are checked again with the lengths that remain; forces do not change.
+    """
+    given = setting.project.restraint
+    lengths = {
+        part: buckling_lengths(setting.truss, without(setting.restraint, part), given, allow_unheld=True)
+        for part in parts(setting.restraint)
+    }
+    standing = {part: left for part, left in lengths.items() if not left.unheld}
+    rows = [Missing(part, left.unheld, np.inf, "", np.inf) for part, left in lengths.items() if left.unheld]
+    rows += _checked_again(setting, wanted, choices, standing)
+    return tuple(sorted(rows, key=lambda row: -row.utilisation))
+
+
+def _checked_again(
+    setting: Setting, wanted: Demand, choices: tuple[Choice, ...], standing: dict[str, BucklingLengths]
+) -> list[Missing]:
+    if not standing:
+        return []
+    ratios = np.zeros((len(standing), len(wanted.bars)))
+    for choice in choices:
+        bars = choice.group.bars
+        variants = [of_bars(_with_lengths(wanted, left), bars) for left in standing.values()]
+        checks = setting.standard.checks(choice.section, side_by_side(variants))
+        ratios[:, bars] = worst_ratio(checks)[0].reshape(len(standing), len(bars))
+    rows = []
+    for (part, left), row in zip(standing.items(), ratios, strict=True):
+        bar = int(np.argmax(row))
+        rows.append(Missing(part, (), float(row[bar]), wanted.bars[bar], float(left.out_of_plane[bar])))
+    return rows
+
+
+def _with_lengths(wanted: Demand, left: BucklingLengths) -> Demand:
+    return replace(
+        wanted,
+        out_of_plane=left.out_of_plane,
+        torsional=left.torsional,
+        minor=left.minor,
+        sideways=sideways_compression(wanted.axial, left),
+    )

@@ -1,0 +1,96 @@
+"""What acts and what it does to the whole truss: cases, combinations, reactions, equilibrium, deflection."""
+
+from __future__ import annotations
+
+from typing import Any
+
+from spanwright.design.reactions import BearingForce
+from spanwright.design.result import Design
+from spanwright.io.results.numbers import millimetres, newtons, pairs, ratio
+
+
+def cases(design: Design) -> list[dict[str, Any]]:
+    """Return one row a load case, unfactored, with the first arrangement of the supports."""
+    names = design.setting.truss.joint_names
+    solution = design.analysis.solutions[0]
+    return [
+        {
+            "name": case.name,
+            "kind": case.kind,
+            "derivation": list(case.derivation),
+            "loads_N": pairs(case.joint_loads, names),
+            "reactions_N": pairs(solution.reactions[:, :, at], names),
+            "deflections_mm": {
+                name: [millimetres(float(value)) for value in solution.displacements[joint, :, at]]
+                for joint, name in enumerate(names)
+            },
+        }
+        for at, case in enumerate(design.analysis.cases)
+    ]
+
+
+def combinations(design: Design) -> list[dict[str, Any]]:
+    """Return one row a combination."""
+    names = design.setting.truss.joint_names
+    return [
+        {
+            "name": combination.name,
+            "limit_state": combination.limit_state,
+            "factors": dict(combination.factors),
+            "reactions_N": pairs(design.analysis.reactions[:, :, at], names),
+        }
+        for at, combination in enumerate(design.analysis.combinations)
+    ]
+
+
+def reactions(design: Design) -> dict[str, Any]:
+    """Return the greatest forces on the bearings by direction, factored and characteristic."""
+    table: dict[str, Any] = {}
+    for direction in ("down", "up", "sideways"):
+        rows = [force for force in design.bearing_forces if force.direction == direction]
+        table[direction] = {
+            "factored": [_bearing_force(force) for force in rows if force.factored],
+            "characteristic": [_bearing_force(force) for force in rows if not force.factored],
+        }
+    return table
+
+
+def _bearing_force(force: BearingForce) -> dict[str, Any]:
+    return {
+        "joint": force.joint,
+        "value_N": newtons(force.value),
+        "combination": force.combination,
+        "on_support_right_N": newtons(force.right),
+        "on_support_down_N": newtons(force.down),
+    }
+
+
+def equilibrium(design: Design) -> dict[str, Any]:
+    """Return how well the solution closes: joint residuals, sums, and the second, independent bar forces."""
+    solutions = design.analysis.solutions
+    return {
+        "largest_residual_N": max(float(solution.largest_residual) for solution in solutions),
+        "second_solution_difference_N": design.second_difference,
+    }
+
+
+def deflection(design: Design) -> dict[str, Any]:
+    """Return deflections with their limits, the movement of the sliding end, and camber."""
+    found = design.serviceability
+    return {
+        "limits": [
+            {
+                "name": row.name,
+                "value_mm": millimetres(row.value),
+                "limit_mm": millimetres(row.limit),
+                "span_over": row.span_over,
+                "ratio": ratio(row.ratio),
+                "joint": row.joint,
+                "combination": row.combination,
+            }
+            for row in found.deflections
+        ],
+        "sliding_end_mm": millimetres(found.sliding),
+        "sliding_end_combination": found.sliding_combination,
+        "camber_mm": millimetres(found.camber),
+    }

@@ -1,0 +1,72 @@
+"""The whole of results.json, put together from its parts."""
+
+from __future__ import annotations
+
+import json
+from pathlib import Path
+from typing import Any
+
+from spanwright import __version__
+from spanwright.design.cautions import CAUTIONS
+from spanwright.design.result import Design
+from spanwright.io.files import input_hash, write_atomically
+from spanwright.io.results.actions import cases, combinations, deflection, equilibrium, reactions
+from spanwright.io.results.members import groups, members, pieces
+from spanwright.io.results.numbers import kilograms, millimetres
+from spanwright.io.results.restraint import restraint
+
+SCHEMA = "spanwright-results-1"
+
+
+def document(design: Design) -> dict[str, Any]:
+    """Return results.json as a dictionary; its keys are held by tests/io/results.schema.json."""
+    setting = design.setting
+    truss, project = setting.truss, setting.project
+    return {
+        "schema": SCHEMA,
+        "program": {"name": "Spanwright", "version": __version__},
+        "input_sha256": input_hash(project.source),
+        "passes": design.passes,
+        "sign_convention": "x right, y up; tension +, compression -; sagging +; reactions act on the truss",
+        "project": {
+            "title": project.title,
+            "mark": project.mark,
+            "quantity": project.quantity,
+            "file": project.source_name,
+            "standard": setting.standard.name,
+            "actions": project.actions,
+            "form": truss.form,
+            "diagonals": truss.lean,
+            "as_read": project.source,
+        },
+        "defaults_used": [{"key": key, "value": value} for key, value in project.defaults_used],
+        "joints": [
+            {"name": name, "x_mm": millimetres(float(x)), "y_mm": millimetres(float(y))}
+            for name, (x, y) in zip(truss.joint_names, truss.xy, strict=True)
+        ],
+        "supports": [
+            {"joint": truss.joint_names[support.joint], "holds_x": support.x, "holds_y": support.y}
+            for support in truss.supports
+        ],
+        "cases": cases(design),
+        "combinations": combinations(design),
+        "reactions": reactions(design),
+        "members": members(design),
+        "groups": groups(design),
+        "pieces": pieces(design),
+        "restraint": restraint(design),
+        "equilibrium": equilibrium(design),
+        "deflection": deflection(design),
+        "mass_kg": kilograms(design.mass),
+        "findings": [],
+        "warnings": list(design.warnings),
+        "cautions": [*CAUTIONS, *setting.standard.verify_notes()],
+    }
+
+
+def write_results(design: Design, folder: Path) -> Path:
+    """Write results.json into a folder and return its path; OutputError where that cannot be done."""
+    path = folder / "results.json"
+    text = json.dumps(document(design), indent=1, ensure_ascii=False, allow_nan=False)
+    write_atomically(path, (text + "\n").encode())
+    return path
