@@ -13,16 +13,16 @@ def bare_truss(
     joints: Mapping[str, Sequence[float]], bars: Mapping[str, tuple[str, str]], supports: Mapping[str, str]
 ) -> Truss:
     """Make a truss; a support holds "x", "y" or "xy"."""
-    names = list(joints)
+    number = {name: joint for joint, name in enumerate(joints)}
     chord = Chord("top", (0,), (), np.zeros(1))
     role: Role = "diagonal"
     return Truss(
-        tuple(names),
-        np.array([joints[name] for name in names], dtype=float),
+        tuple(joints),
+        np.array(list(joints.values()), dtype=float),
         tuple(bars),
-        np.array([[names.index(a), names.index(b)] for a, b in bars.values()], dtype=np.intp).reshape(-1, 2),
+        np.array([[number[a], number[b]] for a, b in bars.values()], dtype=np.intp).reshape(-1, 2),
         (role,) * len(bars),
-        tuple(Support(names.index(name), "x" in held, "y" in held) for name, held in supports.items()),
+        tuple(Support(number[name], "x" in held, "y" in held) for name, held in supports.items()),
         chord,
         chord,
     )
