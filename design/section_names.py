@@ -10,7 +10,7 @@ from spanwright.design.candidates import Family
 from spanwright.design.section_rows import size_text
 from spanwright.truss.errors import InputError
 
-SPELLINGS = '"2L 80x80x6", "L 50x50x5", "2L 90x75x8 short legs together", "CHS 76.1x3.6", "RHS 120x60x5 flat"'
+SPELLINGS = '"2L 80x80x6", "L 50x50x5", "2L 100x75x8 short legs together", "CHS 76.1x3.6", "RHS 120x60x5 flat"'
 
 _NAME = re.compile(r"(2l|l|chs|shs|rhs)\s*(star(?:red)?)?\s*([\d.]+(?:\s*x\s*[\d.]+)+)(.*)")
 _WORDS = {

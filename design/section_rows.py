@@ -23,7 +23,7 @@ from spanwright.truss.arrays import BoolArray, FloatArray
 class AngleRows:
     """Single angles (s), the leg that is to lie in the plane of the truss upright.
 
-    sizes, ways : "90x75x8" and "long" or "short" for the upright leg ("" for equal legs).
+    sizes, ways : "100x75x8" and "long" or "short" for the upright leg ("" for equal legs).
     stock : stock mark. market : where the marks of its table come from ("" = that table has none).
     """
 

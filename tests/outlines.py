@@ -9,8 +9,16 @@ ARC = 200
 """Chords that stand for a quarter circle; the area lost to them is below 1e-5 of a section's."""
 
 
-def angle_outline(upright: float, level: float, t: float, root: float, toe: float, arc: int = ARC) -> shapely.Polygon:
+Angle = tuple[float, float, float, float, float]
+"""Upright leg, level leg, thickness, root and toe radius, mm."""
+
+Tube = tuple[float, float, float, float, float]
+"""Depth, width, wall, outer and inner corner radius, mm."""
+
+
+def angle_outline(size: Angle, *, arc: int = ARC) -> shapely.Polygon:
     """Return an angle, heel at the origin, sharp heel, rounded root and inner toe corners."""
+    upright, level, t, root, toe = size
     turn = np.linspace(0, np.pi / 2, arc + 1)
     quarter = np.column_stack([np.cos(turn), np.sin(turn)])
     points = [np.array([(0, 0), (level, 0)])]
@@ -21,8 +29,9 @@ def angle_outline(upright: float, level: float, t: float, root: float, toe: floa
     return shapely.make_valid(shapely.remove_repeated_points(shapely.Polygon(np.vstack(points))))
 
 
-def tube_outline(depth: float, width: float, t: float, outer: float, inner: float) -> shapely.Polygon:
+def tube_outline(size: Tube) -> shapely.Polygon:
     """Return a rectangular tube with its centre at the origin, depth along y."""
+    depth, width, t, outer, inner = size
 
     def rounded(h: float, b: float, r: float) -> shapely.Polygon:
         return shapely.box(r - b / 2, r - h / 2, b / 2 - r, h / 2 - r).buffer(r, quad_segs=ARC)

@@ -154,6 +154,22 @@ def test_long_legs_together_are_stiff_in_the_plane_and_short_legs_sideways() -> 
     assert short.shear_major[0] == short.shear_sym[0] > 0 == short.shear_minor[0]
 
 
+def test_the_shear_centre_of_an_equal_angle_lies_on_its_axis_of_symmetry_the_major_one() -> None:
+    angle = one("L 80x80x8")
+    assert angle.shear_major[0] == pytest.approx(np.sqrt(2) * (angle.piece_centroid_connected[0] - 4))
+    assert angle.shear_minor[0] == angle.shear_sym[0] == 0
+    assert one("L 100x75x8, long leg connected").shear_minor[0] > 0
+
+
+def test_a_pair_has_twice_the_mass_and_the_surface_of_its_angle() -> None:
+    single = one("L 80x80x8")
+    for name in ("2L 80x80x8", "2L 80x80x8 star"):
+        pair = one(name)
+        assert (pair.mass[0], pair.surface[0]) == (2 * single.mass[0], 2 * single.surface[0])
+        assert pair.piece_radius_minor[0] == single.radius_minor[0]
+        assert (pair.pieces, pair.piece_names) == (2, single.names)
+
+
 def test_the_gap_stiffens_sideways_alone() -> None:
     narrow, wide = choose("2L", gap=6.0), choose("2L", gap=12.0)
     assert np.array_equal(narrow.inertia_in, wide.inertia_in)
@@ -235,7 +251,7 @@ def test_steel_goes_by_thickness_and_tubes_take_the_twin() -> None:
     angles = choose("L")
     assert set(angles.steel_fy[angles.thickness <= 16]) == {355.0}
     assert set(angles.steel_fy[angles.thickness > 16]) == {345.0}
-    assert set(choose("CHS", steel="300WA").steel_fy) == {300.0}
+    assert set(choose("CHS", steel="350WA").steel_fy) == {355.0}
 
 
 def test_unknown_family_steel_and_market_are_refused() -> None:

@@ -5,13 +5,13 @@ from __future__ import annotations
 import numpy as np
 import pytest
 import shapely
-from outlines import angle_outline, moments, tube_outline
+from outlines import Angle, Tube, angle_outline, moments, tube_outline
 
 from spanwright.design.shapes import AngleShape, angle_shape
 from spanwright.design.tubes import TubeShape, rectangular_tube, round_tube
 from spanwright.design.turning import Turned, back_to_back, single_angle, starred, tube
 
-ANGLES = [
+ANGLES: list[Angle] = [
     (80, 80, 8, 10, 5),
     (50, 50, 5, 7, 3.5),
     (100, 50, 8, 8, 4),  # plastic axis in the upright leg
@@ -21,16 +21,16 @@ ANGLES = [
     (60, 60, 10, 8, 0),
     (90, 75, 8, 0, 0),
 ]
-TUBES = [(120, 60, 5, 10, 5), (60, 120, 5, 10, 5), (80, 80, 4, 8, 4), (200, 100, 12.5, 37.5, 25)]
+TUBES: list[Tube] = [(120, 60, 5, 10, 5), (60, 120, 5, 10, 5), (80, 80, 4, 8, 4), (200, 100, 12.5, 37.5, 25)]
 GAP = 10.0
 POLYGON = 2e-5  # what chords in place of arcs cost
 
 
-def shape_of(size: tuple[float, ...]) -> AngleShape:
+def shape_of(size: Angle) -> AngleShape:
     return angle_shape(*(np.array([float(length)]) for length in size))
 
 
-def tube_of(size: tuple[float, ...]) -> TubeShape:
+def tube_of(size: Tube) -> TubeShape:
     return rectangular_tube(*(np.array([float(length)]) for length in size))
 
 
@@ -47,8 +47,8 @@ def plastic_modulus(outline: shapely.Geometry) -> float:
 
 
 @pytest.mark.parametrize("size", ANGLES)
-def test_angle_agrees_with_its_polygon(size: tuple[float, ...]) -> None:
-    shape, outline = shape_of(size), angle_outline(*size)
+def test_angle_agrees_with_its_polygon(size: Angle) -> None:
+    shape, outline = shape_of(size), angle_outline(size)
     found = moments(outline)
     assert shape.area == pytest.approx(found["area"], rel=POLYGON)
     assert shape.perimeter == pytest.approx(outline.length, rel=POLYGON)
@@ -61,17 +61,17 @@ def test_angle_agrees_with_its_polygon(size: tuple[float, ...]) -> None:
 
 
 @pytest.mark.parametrize("size", ANGLES)
-def test_principal_axes_of_an_angle_are_those_of_its_polygon_turned(size: tuple[float, ...]) -> None:
+def test_principal_axes_of_an_angle_are_those_of_its_polygon_turned(size: Angle) -> None:
     shape = shape_of(size)
-    turned = moments(shapely.affinity.rotate(angle_outline(*size), -float(shape.angle[0]), use_radians=True))
+    turned = moments(shapely.affinity.rotate(angle_outline(size), -float(shape.angle[0]), use_radians=True))
     assert shape.inertia_u == pytest.approx(turned["Ix"], rel=POLYGON)
     assert shape.inertia_v == pytest.approx(turned["Iy"], rel=POLYGON)
     assert abs(turned["Ixy"]) < POLYGON * turned["Ix"]
 
 
 @pytest.mark.parametrize("size", ANGLES)
-def test_shear_centre_of_an_angle_is_where_the_middle_lines_of_its_legs_meet(size: tuple[float, ...]) -> None:
-    shape, found = shape_of(size), moments(angle_outline(*size))
+def test_shear_centre_of_an_angle_is_where_the_middle_lines_of_its_legs_meet(size: Angle) -> None:
+    shape, found = shape_of(size), moments(angle_outline(size))
     crossing = shapely.Point(size[2] / 2, size[2] / 2)
     turned = shapely.affinity.rotate(
         crossing, -float(shape.angle[0]), origin=(found["x"], found["y"]), use_radians=True
@@ -93,8 +93,8 @@ def test_many_sizes_at_once_give_what_each_gives_alone() -> None:
 
 
 @pytest.mark.parametrize("size", TUBES)
-def test_rectangular_tube_agrees_with_its_polygon(size: tuple[float, ...]) -> None:
-    shape, outline = tube_of(size), tube_outline(*size)
+def test_rectangular_tube_agrees_with_its_polygon(size: Tube) -> None:
+    shape, outline = tube_of(size), tube_outline(size)
     found = moments(outline)
     assert shape.area == pytest.approx(found["area"], rel=POLYGON)
     assert shape.perimeter == pytest.approx(outline.exterior.length, rel=POLYGON)
@@ -114,13 +114,13 @@ def test_round_tube_agrees_with_its_polygon() -> None:
     assert shape.plastic_x == pytest.approx(plastic_modulus(outline), rel=5 * POLYGON)
 
 
-def pair_outline(size: tuple[float, ...]) -> shapely.Geometry:
-    right = shapely.affinity.translate(angle_outline(*size), GAP / 2)
+def pair_outline(size: Angle) -> shapely.Geometry:
+    right = shapely.affinity.translate(angle_outline(size), GAP / 2)
     return right.union(shapely.affinity.scale(right, -1, 1, origin=(0, 0)))
 
 
-def star_outline(size: tuple[float, ...]) -> shapely.Geometry:
-    right = shapely.affinity.translate(angle_outline(*size), GAP / 2, GAP / 2)
+def star_outline(size: Angle) -> shapely.Geometry:
+    right = shapely.affinity.translate(angle_outline(size), GAP / 2, GAP / 2)
     return right.union(shapely.affinity.scale(right, -1, -1, origin=(0, 0)))
 
 
@@ -140,12 +140,12 @@ def check_whole(turned: Turned, outline: shapely.Geometry) -> None:
 
 
 @pytest.mark.parametrize("size", ANGLES)
-def test_single_angle_turned_into_the_truss(size: tuple[float, ...]) -> None:
-    check_whole(single_angle(shape_of(size)), angle_outline(*size))
+def test_single_angle_turned_into_the_truss(size: Angle) -> None:
+    check_whole(single_angle(shape_of(size)), angle_outline(size))
 
 
 @pytest.mark.parametrize("size", ANGLES)
-def test_pair_back_to_back_turned_into_the_truss(size: tuple[float, ...]) -> None:
+def test_pair_back_to_back_turned_into_the_truss(size: Angle) -> None:
     turned, outline = back_to_back(shape_of(size), GAP), pair_outline(size)
     check_whole(turned, outline)
     found = moments(outline)
@@ -158,7 +158,7 @@ def test_pair_back_to_back_turned_into_the_truss(size: tuple[float, ...]) -> Non
 
 
 @pytest.mark.parametrize("size", [size for size in ANGLES if size[0] == size[1]])
-def test_starred_pair_turned_into_the_truss(size: tuple[float, ...]) -> None:
+def test_starred_pair_turned_into_the_truss(size: Angle) -> None:
     turned, outline = starred(shape_of(size), GAP), star_outline(size)
     check_whole(turned, outline)
     assert turned.modulus_heel == turned.modulus_toe
@@ -166,8 +166,8 @@ def test_starred_pair_turned_into_the_truss(size: tuple[float, ...]) -> None:
 
 
 @pytest.mark.parametrize("size", TUBES)
-def test_tube_turned_into_the_truss(size: tuple[float, ...]) -> None:
-    check_whole(tube(tube_of(size)), tube_outline(*size))
+def test_tube_turned_into_the_truss(size: Tube) -> None:
+    check_whole(tube(tube_of(size)), tube_outline(size))
 
 
 def greatest_stress(outline: shapely.Polygon, *, below: float, above: float) -> float:
@@ -182,8 +182,8 @@ def greatest_stress(outline: shapely.Polygon, *, below: float, above: float) -> 
 
 
 @pytest.mark.parametrize("size", ANGLES)
-def test_moduli_of_a_single_angle_count_its_skew_bending(size: tuple[float, ...]) -> None:
-    turned, outline = single_angle(shape_of(size)), angle_outline(*size)
+def test_moduli_of_a_single_angle_count_its_skew_bending(size: Angle) -> None:
+    turned, outline = single_angle(shape_of(size)), angle_outline(size)
     toe = greatest_stress(outline, below=size[0] - size[4], above=size[0])
     heel = greatest_stress(outline, below=0, above=size[2])
     assert turned.modulus_toe[0] * toe == pytest.approx(1, rel=POLYGON)
@@ -191,7 +191,7 @@ def test_moduli_of_a_single_angle_count_its_skew_bending(size: tuple[float, ...]
 
 
 @pytest.mark.parametrize("size", [size for size in ANGLES if size[0] == size[1]])
-def test_moduli_of_a_starred_pair_count_its_skew_bending(size: tuple[float, ...]) -> None:
+def test_moduli_of_a_starred_pair_count_its_skew_bending(size: Angle) -> None:
     outline = star_outline(size)
     worst = greatest_stress(outline, below=-1e3, above=1e3)
     assert starred(shape_of(size), GAP).modulus_toe[0] * worst == pytest.approx(1, rel=POLYGON)
