@@ -17,6 +17,7 @@ from spanwright.truss.arrays import BoolArray, FloatArray
 from spanwright.truss.errors import InputError, UnknownNameError
 
 TUBES: tuple[Family, ...] = ("CHS", "SHS", "RHS")
+PROCESS_WORDS = {"hot": ", hot finished", "cold": ", cold formed"}
 M2_PER_MM2 = 1e-6
 M_PER_MM = 1e-3
 
@@ -88,7 +89,7 @@ def find(
     if isinstance(rows, TubeRows):
         here = _of_process(here, rows.hot, said.process)
     if not here.any():
-        raise _unknown(said, rows.sizes, key)
+        raise _unknown(said, rows, key)
     picked = rows.take(here)
     readings = _turned(said.family, picked, steel, gap if said.gap is None else said.gap)
     if said.way:
@@ -132,12 +133,16 @@ def _in_stock(rows: AngleRows, stocked: str, *, certified: bool) -> BoolArray:
     return unlisted | offered
 
 
-def _unknown(said: SectionName, sizes: tuple[str, ...], key: str) -> UnknownNameError:
+def _unknown(said: SectionName, rows: AngleRows | TubeRows, key: str) -> UnknownNameError:
     """The error for a size that is not in the catalogue, with the size that is nearest in its lengths."""
+    made = ""
+    if isinstance(rows, TubeRows) and said.process:
+        made = PROCESS_WORDS[said.process]
+        rows = rows.take(_of_process(np.ones(len(rows.sizes), dtype=np.bool_), rows.hot, said.process))
     prefix = said.family.removesuffix(" star")
-    known = np.array([_lengths(size) for size in sizes])
-    nearest = f"{prefix} {sizes[np.argmin(np.sum(np.abs(known - _lengths(said.size)) / known, axis=1))]}"
-    found = f'no section in the catalogue is called "{prefix} {said.size}"'
+    known = np.array([_lengths(size) for size in rows.sizes])
+    nearest = f"{prefix} {rows.sizes[np.argmin(np.sum(np.abs(known - _lengths(said.size)) / known, axis=1))]}{made}"
+    found = f'no section in the catalogue is called "{prefix} {said.size}{made}"'
     return UnknownNameError(found, f'the nearest is "{nearest}"', key, "", nearest)
 
 

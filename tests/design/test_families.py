@@ -121,6 +121,7 @@ def test_what_is_no_section_name_is_refused(written: str) -> None:
         ("L 86x86x8", "L 90x90x8"),
         ("CHS 76.3x4", "CHS 76.1x4"),
         ("SHS 80x80x4.1", "SHS 80x80x4"),
+        ("CHS 76.1x3.6, cold formed", "CHS 76.1x4, cold formed"),
     ],
 )
 def test_unknown_sizes_name_the_nearest(written: str, nearest: str) -> None:
