@@ -1,0 +1,67 @@
+"""Checks in tension: which net section the stated ends leave."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+import numpy as np
+
+from spanwright.design.sans.case import Case
+from spanwright.design.sans.checking import strength_check
+from spanwright.design.sans.compression import PHI
+from spanwright.design.sans.effects import column
+from spanwright.design.sans.tension import BoltedAngle, GrossYield, NetFracture, WeldedAngle, WeldedTube
+from spanwright.design.standard import Check
+from spanwright.truss.arrays import FloatArray
+
+TUBES = ("CHS", "SHS", "RHS")
+
+
+@dataclass(frozen=True, eq=False)
+class Tie:
+    """The rules of a member in tension."""
+
+    net: WeldedAngle | BoltedAngle | WeldedTube
+    gross_yield: GrossYield
+    fracture: NetFracture
+
+    @property
+    def resistance(self) -> FloatArray:
+        """(s, b) or narrower: the lesser of yield and fracture, N."""
+        return np.minimum(self.gross_yield.resistance, self.fracture.resistance)
+
+
+def tie_of(case: Case) -> Tie:
+    """Return the tension rules for the family and the stated ends."""
+    net, force = net_section(case), case.effects.tension.force
+    area, fu = column(case.candidates.area), column(case.candidates.steel_fu)
+    return Tie(net, GrossYield(force, area, case.fy, PHI), NetFracture(force, net.net_area, fu, PHI))
+
+
+def tension_checks(case: Case, tie: Tie) -> tuple[Check, Check]:
+    """Return yield of the gross section and fracture of the net section."""
+    force, shape = case.effects.tension, case.shape
+    return (
+        strength_check("tension, gross section", "13.2", force, tie.gross_yield.resistance, (tie.gross_yield,), shape),
+        strength_check("tension, net section", "13.2", force, tie.fracture.resistance, (tie.net, tie.fracture), shape),
+    )
+
+
+def net_section(case: Case) -> WeldedAngle | BoltedAngle | WeldedTube:
+    """Return the net section: angles by their stated ends; tubes always as welded all round."""
+    c, ends = case.candidates, case.demand.ends
+    if c.family in TUBES:
+        return WeldedTube(column(c.area))
+    connected, thickness = column(c.leg_connected), column(c.thickness)
+    if ends.kind == "welded":
+        weld = ends.weld_length * connected
+        return WeldedAngle(c.pieces, connected, column(c.leg_outstanding), thickness, weld, weld)
+    return BoltedAngle(
+        pieces=c.pieces,
+        area=column(c.area),
+        thickness=thickness,
+        diameter=ends.bolt_diameter,
+        lines=ends.bolts,
+        across=1,
+        punched=float(ends.punched),
+    )
