@@ -16,7 +16,7 @@ EndKind = Literal["welded", "bolted"]
 Holes = Literal["punched", "drilled"]
 
 # K_i of the equivalent slenderness, SANS 10162-1; 0.65 from memory.
-_PACK_FACTORS: dict[PackFixing, float] = {"snug": 1.0, "welded": 0.65}
+PACK_FACTORS: dict[PackFixing, float] = {"snug": 1.0, "welded": 0.65}
 _DECIMAL = r"([0-9]+(?:\.[0-9]+)?)"
 _packs_a_panel = counted(1, 20)
 _bolts_in_line = counted(1, 12)
@@ -94,7 +94,7 @@ class MembersTable(Table):
             min_wall=self.min_wall,
             stocked=self.stocked,
             fixings=self.fixings,
-            packs=Packs(self.packs, _PACK_FACTORS[self.pack_fixing]),
+            packs=Packs(self.packs, PACK_FACTORS[self.pack_fixing]),
             stock_length=self.stock_length,
             setback=self.setback,
             one_side=self.web_angles == "all on one side",
