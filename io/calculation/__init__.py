@@ -1,0 +1,1 @@
+"""calculation.pdf: a document that a checking engineer can follow and sign."""
