@@ -18,7 +18,7 @@ from spanwright.truss.arrays import FloatArray
 from spanwright.truss.braces import BottomTie, KneeBrace, place_bottom_ties, place_knee_braces
 from spanwright.truss.errors import UnknownNameError
 from spanwright.truss.inputs import RestraintInput
-from spanwright.truss.model import Chord, ChordName, Truss
+from spanwright.truss.model import Chord, Truss
 from spanwright.truss.purlins import PurlinLine, lay_purlins
 from spanwright.truss.restraint_warnings import restraint_warnings
 
@@ -55,9 +55,13 @@ class Held:
 
 @dataclass(frozen=True)
 class RestraintForce:
-    """The force, N, that a part must resist sideways, to either side, where it holds a chord (`at`, in words)."""
+    """The force, N, that a part must resist sideways, to either side, where it holds a chord.
+
+    part : its name. kind : "purlin line", "knee brace", "bottom tie" or "bearing". at : where, in words.
+    """
 
     part: str
+    kind: str
     at: str
     force: float
 
@@ -140,8 +144,8 @@ def restrain(truss: Truss, restraint: RestraintInput) -> Restraint:
     return replace(laid, warnings=restraint_warnings(truss, restraint, laid.lines, laid.braces, laid.ties))
 
 
-def held_points(truss: Truss, restraint: Restraint) -> dict[ChordName, tuple[Held, ...]]:
-    """Return for each chord the points where it is held sideways, left to right.
+def held_points(truss: Truss, restraint: Restraint) -> dict[str, tuple[Held, ...]]:
+    """Return for each chord ("top", "bottom") the points where it is held sideways, left to right.
 
     A part holds a joint on every chord that passes it: a purlin at a heel that both chords share holds both. A purlin
     between joints or on an overhang holds the top chord alone.
@@ -229,13 +233,14 @@ def restraint_forces(
     greater. A purlin line must carry its own force and those of the braces that run to it.
     """
     greatest: dict[str, RestraintForce] = {}
-    for name, points in held_points(truss, restraint).items():
-        chord = truss.chord(name)
-        places = sorted({held.along for held in points})
-        for held in points:
+    points = held_points(truss, restraint)
+    for chord in (truss.top, truss.bottom):
+        places = sorted({held.along for held in points[chord.name]})
+        for held in points[chord.name]:
             force = share * _compression_beside(chord, places, held.along, compression)
             if held.part not in greatest or force > greatest[held.part].force:
-                greatest[held.part] = RestraintForce(held.part, _where(truss, chord, held), force)
+                kind = restraint.graph.nodes[held.part]["kind"]
+                greatest[held.part] = RestraintForce(held.part, kind, _where(truss, chord, held), force)
     return tuple(greatest.values())
 
 
@@ -264,4 +269,4 @@ def anchor_force(forces: tuple[RestraintForce, ...], quantity: int) -> float:
     chord's own worst combination: the safe reading. Standards let parallel trusses share less, such as
     0.2 + 0.8/sqrt(n) of the sum (CSA S16 cl. 9.2, from memory); that is left to the designer of the bracing.
     """
-    return quantity * sum(force.force for force in forces if not force.part.startswith("bearing "))
+    return quantity * sum(force.force for force in forces if force.kind != "bearing")
