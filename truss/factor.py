@@ -1,10 +1,10 @@
 """The stiffness matrix in band storage, its Cholesky factor, and whether it holds the truss.
 
-All 2 j degrees of freedom (2 * joint + axis) keep their place: a held one has a unit diagonal and nothing beside it,
-so it stays zero. Joints are eliminated along the longer side of the truss, which keeps the band as narrow as its depth.
+All 2 j degrees of freedom (2 * joint + axis) keep their place: a held one has a diagonal and nothing beside it, so it
+stays zero. Joints are eliminated along the longer side of the truss, which keeps the band as narrow as its depth.
 
 Two judgements find a mechanism, because rounding hides it from a plain factorisation, which "solves" most of them:
-a pivot is next to nothing beside its diagonal; or an arbitrary set of forces moves the joints and hardly strains a bar.
+a pivot is next to nothing beside the stiffness of its joint; or arbitrary forces move joints and hardly strain a bar.
 The first is sharp where a few bars nearly meet in a line. The second is needed where much of the truss turns about
 a joint eliminated late: rounding in that pivot grows with the third power of the number of panels that turn.
 """
@@ -53,11 +53,12 @@ def factorise(truss: Truss, elongation: Elongation, stiffness: FloatArray, held:
     order = _along_longer_side(truss.xy)
     freedoms = (2 * order[:, None] + np.arange(2)).ravel()
     band = _assembled(truss, stiffness, order)
-    _hold(band, held[order].ravel())
-    diagonal = band[0].copy()
+    stiffest = np.repeat(band[0].reshape(-1, 2).max(axis=1), 2)  # of the two directions at each joint
+    stiffest[stiffest == 0.0] = 1.0  # a joint without bars
+    _hold(band, held[order].ravel(), stiffest)
     band, stopped = dpbtrf(band, lower=1, overwrite_ab=1)  # stopped: number of the first pivot not above zero, or 0
-    sound = stopped - 1 if stopped else len(diagonal)
-    weak = np.flatnonzero(band[0, :sound] ** 2 < TOLERANCES.pivot * diagonal[:sound])
+    sound = stopped - 1 if stopped else len(stiffest)
+    weak = np.flatnonzero(band[0, :sound] ** 2 < TOLERANCES.pivot * stiffest[:sound])
     if weak.size or stopped:
         return Factor(freedoms, band, int(freedoms[weak[0] if weak.size else sound]))
     factor = Factor(freedoms, band)
@@ -92,13 +93,13 @@ def _assembled(truss: Truss, stiffness: FloatArray, order: IntArray) -> FloatArr
     return flat.reshape(-1, width + 1).T
 
 
-def _hold(band: FloatArray, held: BoolArray) -> None:
-    """Clear the rows and columns of held degrees of freedom in place and set their diagonal to one."""
+def _hold(band: FloatArray, held: BoolArray, diagonal: FloatArray) -> None:
+    """Clear the rows and columns of held degrees of freedom in place, but for their diagonal."""
     columns = np.flatnonzero(held)
     below = np.arange(len(band))[:, None]
     band[:, columns] = 0.0
     band[below, columns - below] = 0.0  # a column before the first wraps to the last ones' unused places
-    band[0, columns] = 1.0
+    band[0, columns] = diagonal[columns]
 
 
 def _moves_without_strain(factor: Factor, elongation: Elongation, fixed: BoolArray) -> int | None:

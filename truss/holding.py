@@ -62,8 +62,11 @@ def _new_bar(truss: Truss, motion: FloatArray) -> tuple[int, int] | None:
     along = truss.xy[pairs[:, 1]] - truss.xy[pairs[:, 0]]
     lengths = np.hypot(along[:, 0], along[:, 1])
     elongations = np.abs(np.sum((motion[pairs[:, 1]] - motion[pairs[:, 0]]) * along, axis=1)) / lengths
+    strains = elongations / lengths
     straining = np.flatnonzero(elongations > TOLERANCES.motionless * np.abs(motion).max())
-    ranked = straining[np.argsort(-elongations[straining] / lengths[straining], kind="stable")][:PAIRS_TRIED]
+    # strains that differ by rounding only rank by joint number
+    steps = np.rint(strains[straining] / (TOLERANCES.motionless * strains.max(initial=0.0)))
+    ranked = straining[np.argsort(-steps, kind="stable")][:PAIRS_TRIED]
     possible = [(int(a), int(b)) for a, b in pairs[ranked] if not _meets_joint(truss, int(a), int(b))]
     clear = (pair for pair in possible if not _crosses_bar(truss, *pair))
     return next(clear, possible[0] if possible else None)

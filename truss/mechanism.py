@@ -44,27 +44,27 @@ def free_motions(truss: Truss, held: BoolArray) -> tuple[FloatArray, int]:
         loose.append(factor.loose)
         fixed.flat[factor.loose] = True
     told = min(len(loose), MOST_TOLD)
-    moved = np.zeros((fixed.size, told))
+    moved = np.zeros((held.size, told))
     moved[loose[:told], range(told)] = 1.0
     forces = -elongation.carried(stiffness[:, None] * elongation.of_bars(moved))
     forces[fixed.ravel()] = 0.0
     motions = _taken_apart((factor.displacements(forces) + moved).T)
-    return motions.reshape(told, len(truss.xy), 2), len(loose)
-
-
-def _taken_apart(motions: FloatArray) -> FloatArray:
-    """Combine motions (m, 2 j) so that none moves the largest degree of freedom of another; scale and turn them."""
-    motions = motions.copy()
-    for row, motion in enumerate(motions):
-        lead = np.abs(motion).argmax()
-        motion /= motion[lead]
-        others = np.arange(len(motions)) != row
-        motions[others] -= np.outer(motions[others, lead], motion)
     for motion in motions:
         motion[np.abs(motion) < TOLERANCES.motionless * np.abs(motion).max()] = 0.0
         sinking = motion[1::2].sum() <= 0.0
         motion *= (1.0 if sinking else -1.0) / np.hypot(motion[::2], motion[1::2]).max()
-    return motions
+    return motions.reshape(told, *held.shape), len(loose)
+
+
+def _taken_apart(motions: FloatArray) -> FloatArray:
+    """Combine motions (m, 2 j) so that none moves the degree of freedom in which another is largest."""
+    apart = motions.copy()
+    for row, motion in enumerate(apart):
+        lead = np.abs(motion).argmax()
+        motion /= motion[lead]
+        others = np.arange(len(apart)) != row
+        apart[others] -= np.outer(apart[others, lead], motion)
+    return apart
 
 
 def _explained(truss: Truss, held: BoolArray, motions: FloatArray, independent: int) -> MechanismError:

@@ -35,16 +35,20 @@ def motion_in_words(truss: Truss, motion: FloatArray) -> str:
     motion : (j, 2), exactly zero where a joint stays, largest displacement 1. The opposite motion is as free.
     """
     alone = np.abs(motion).max(axis=1) > 0.0
-    told = []
+    pieces = []
     for joints in _rigid_pieces(truss, motion):
         moving = joints[alone[joints]]
         if len(moving):
-            told.append(f"{_piece(truss, joints, moving)} {_rigid_motion(truss, motion, joints)}")
+            pieces.append((joints, moving))
             alone[moving] = False
     single = np.flatnonzero(alone)
     most_first = single[np.argsort(-np.hypot(motion[single, 0], motion[single, 1]), kind="stable")]
-    told += [f"{truss.joint_names[joint]} moves {_direction(motion[joint])}" for joint in most_first]
-    return _listed(told)
+    told = [
+        f"{_piece(truss, joints, moving)} {_rigid_motion(truss, motion, joints)}"
+        for joints, moving in pieces[:NAMES_TOLD]
+    ]
+    told += [f"{truss.joint_names[joint]} moves {_direction(motion[joint])}" for joint in most_first[:NAMES_TOLD]]
+    return _listed(told[:NAMES_TOLD], len(pieces) + len(single))
 
 
 def _rigid_pieces(truss: Truss, motion: FloatArray) -> list[IntArray]:
@@ -67,7 +71,7 @@ def _rigid_pieces(truss: Truss, motion: FloatArray) -> list[IntArray]:
 def _piece(truss: Truss, joints: IntArray, moving: IntArray) -> str:
     if len(joints) == len(truss.joint_names):
         return "the whole truss"
-    return f"the piece with {_listed([truss.joint_names[joint] for joint in moving])}"
+    return f"the piece with {_listed([truss.joint_names[joint] for joint in moving[:NAMES_TOLD]], len(moving))}"
 
 
 def _direction(vector: FloatArray) -> str:
@@ -75,10 +79,11 @@ def _direction(vector: FloatArray) -> str:
     return DIRECTIONS[eighth % len(DIRECTIONS)]
 
 
-def _listed(items: list[str]) -> str:
-    if len(items) > NAMES_TOLD:
-        return ", ".join(items[:NAMES_TOLD]) + f" and {len(items) - NAMES_TOLD} more"
-    return ", ".join(items[:-1]) + " and " + items[-1] if len(items) > 1 else items[0]
+def _listed(items: list[str], count: int) -> str:
+    """Return "a, b and c", or "a, b and 7 more" where the items are the first of more."""
+    if count > len(items):
+        return ", ".join(items) + f" and {count - len(items)} more"
+    return ", ".join(items[:-1]) + " and " + items[-1] if count > 1 else items[0]
 
 
 def _rigid_motion(truss: Truss, motion: FloatArray, joints: IntArray) -> str:

@@ -13,7 +13,7 @@ class Tolerances:
     """
 
     pivot: float = 1e-10
-    """Relative: a pivot of the factorised stiffness below this share of its diagonal is a mechanism.
+    """Relative: a pivot of the factorised stiffness below this share of its joint's larger diagonal is a mechanism.
     Rounding leaves about 1e-13 where few bars take part; the least stable simply supported truss tried (20 000 bars,
     one span) keeps 8e-5."""
 
@@ -76,7 +76,7 @@ class Tolerances:
     mark_reach: float = 300.0
     """mm: a purlin, brace or bearing drawn this near to its chord or joint belongs to it (purlin depth and cleat)."""
 
-    drawing_noise: float = 1e-6
+    drawing_noise: float = 1e-5
     """mm: what turning, scaling and shifting coordinates of doubles may leave; smaller differences are none."""
 
     near_origin: float = 1e6
