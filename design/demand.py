@@ -51,10 +51,8 @@ def sideways_compression(axial: FloatArray, lengths: BucklingLengths) -> FloatAr
     (the safe reading where the force changes along the run).
     """
     compression = np.maximum(-axial, 0.0)
-    together = np.zeros_like(compression)
-    for bar, mates in enumerate(lengths.together):
-        together[bar] = compression[mates].max(axis=0)
-    return together
+    greatest: FloatArray = np.where(lengths.together[:, :, None], compression, 0.0).max(axis=1)
+    return greatest
 
 
 def _chord_moments(truss: Truss, stations: Stations, moments: FloatArray) -> tuple[FloatArray, FloatArray, FloatArray]:

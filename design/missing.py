@@ -10,6 +10,7 @@ from spanwright.design.demand import of_bars, side_by_side, sideways_compression
 from spanwright.design.setting import Setting
 from spanwright.design.sizing import Choice, worst_ratio
 from spanwright.design.standard import Demand
+from spanwright.truss.arrays import FloatArray
 from spanwright.truss.lengths import BucklingLengths, buckling_lengths
 from spanwright.truss.restraint import parts, without
 
@@ -50,17 +51,26 @@ def _checked_again(
 ) -> list[Missing]:
     if not standing:
         return []
-    ratios = np.zeros((len(standing), len(wanted.bars)))
-    for choice in choices:
-        bars = choice.group.bars
-        variants = [of_bars(_with_lengths(wanted, left), bars) for left in standing.values()]
-        checks = setting.standard.checks(choice.section, side_by_side(variants))
-        ratios[:, bars] = worst_ratio(checks)[0].reshape(len(standing), len(bars))
+    variants = [_with_lengths(wanted, left) for left in standing.values()]
+    ratios = np.array([_ratios(setting, wanted, choice, variants) for choice in choices]).max(axis=0)
     rows = []
     for (part, left), row in zip(standing.items(), ratios, strict=True):
         bar = int(np.argmax(row))
         rows.append(Missing(part, (), float(row[bar]), wanted.bars[bar], float(left.out_of_plane[bar])))
     return rows
+
+
+def _ratios(setting: Setting, wanted: Demand, choice: Choice, variants: list[Demand]) -> FloatArray:
+    """Return (parts, b) the greatest ratio of a group's bars without each part, 0 for other bars."""
+    bars = choice.group.bars
+    ratios = np.zeros((len(variants), len(wanted.bars)))
+    ratios[:, bars] = worst_ratio(choice.checks)[0]
+    changed = [at for at, left in enumerate(variants) if (left.out_of_plane != wanted.out_of_plane)[bars].any()]
+    if changed:
+        together = side_by_side([of_bars(variants[at], bars) for at in changed])
+        found = worst_ratio(setting.standard.checks(choice.section, together))[0]
+        ratios[np.ix_(changed, bars)] = found.reshape(len(changed), len(bars))
+    return ratios
 
 
 def _with_lengths(wanted: Demand, left: BucklingLengths) -> Demand:
