@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import pickle
 import re
+from collections.abc import Callable
 from dataclasses import replace
 
 import numpy as np
@@ -98,8 +99,8 @@ KINDS = [
 
 
 @pytest.mark.parametrize(("build", "ways"), KINDS)
-def test_every_kind_of_mechanism_is_refused_with_its_motion(build: object, ways: int) -> None:
-    truss = build()  # type: ignore[operator]  # a builder from the table above
+def test_every_kind_of_mechanism_is_refused_with_its_motion(build: Callable[[], Truss], ways: int) -> None:
+    truss = build()
     loads = np.zeros((len(truss.joint_names), 2, 1))
     loads[-1, 1] = -1000.0
     with pytest.raises(MechanismError) as refused:
@@ -119,8 +120,8 @@ def test_every_kind_of_mechanism_is_refused_with_its_motion(build: object, ways:
 
 
 @pytest.mark.parametrize(("build", "ways"), KINDS)
-def test_what_is_suggested_holds_the_truss(build: object, ways: int) -> None:
-    truss = build()  # type: ignore[operator]  # a builder from the table above
+def test_what_is_suggested_holds_the_truss(build: Callable[[], Truss], ways: int) -> None:
+    truss = build()
     held = held_directions(truss)
     motions, independent = free_motions(truss, held)
     assert independent == ways
@@ -161,9 +162,9 @@ def test_what_is_suggested_holds_the_truss(build: object, ways: int) -> None:
         (hanging_joint, "H moves to the right", "a bar from B2 to H would hold it"),
     ],
 )
-def test_the_message_names_joints_directions_and_remedy(build: object, found: str, remedy: str) -> None:
+def test_the_message_names_joints_directions_and_remedy(build: Callable[[], Truss], found: str, remedy: str) -> None:
     with pytest.raises(MechanismError) as refused:
-        refuse_mechanism(build())  # type: ignore[operator]  # a builder from the table above
+        refuse_mechanism(build())
     assert found in refused.value.found
     assert remedy in refused.value.remedy
     assert str(pickle.loads(pickle.dumps(refused.value))) == str(refused.value)
