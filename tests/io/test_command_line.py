@@ -171,6 +171,13 @@ def test_strut_prints_every_step_with_formula_unit_and_clause(capsys: pytest.Cap
     assert re.search(r"governs: [\d.]+ N of [\d.]+\s+N: 0\.\d\d, passes", text)
 
 
+def test_strut_buckles_the_way_that_is_held_less(capsys: pytest.CaptureFixture[str]) -> None:
+    member = ["strut", "--section", "2L 80x80x6", "--force", "-120 kN"]
+    for in_plane, out_of_plane, way in [("1 m", "4 m", "out of plane"), ("3 m", "1 m", "in plane")]:
+        main([*member, "--in-plane", in_plane, "--out-of-plane", out_of_plane])
+        assert re.search(rf"^buckling {way}[^\n]*governs", capsys.readouterr().out, re.MULTILINE)
+
+
 @pytest.mark.parametrize(
     ("option", "value", "found"),
     [

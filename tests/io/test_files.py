@@ -19,6 +19,14 @@ def test_a_file_is_replaced(tmp_path: Path) -> None:
     assert [entry.name for entry in tmp_path.iterdir()] == ["results.json"]
 
 
+def test_whoever_reads_the_old_file_keeps_it_whole(tmp_path: Path) -> None:
+    path = tmp_path / "results.json"
+    write_atomically(path, b"old")
+    with path.open("rb") as reader:
+        write_atomically(path, b"new")
+        assert reader.read() == b"old"
+
+
 def test_an_interrupted_run_leaves_the_old_file_whole(tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> None:
     path = tmp_path / "results.json"
     path.write_bytes(b"old")
