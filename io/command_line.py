@@ -95,5 +95,7 @@ def _guarded(run: Callable[[Namespace], int], given: Namespace) -> int:
 
 
 def _complain(message: str, status: int) -> int:
-    sys.stderr.write(f"spanwright: {message}\n")
+    """Write a message; what a hostile file could send to the terminal is shown as an escape."""
+    plain = "".join(c if c.isprintable() or c == "\n" else c.encode("unicode_escape").decode() for c in message)
+    sys.stderr.write(f"spanwright: {plain}\n")
     return status

@@ -279,6 +279,12 @@ def test_check_wants_given_sections(tmp_path: Path, capsys: pytest.CaptureFixtur
     assert "members.top_chord" in capsys.readouterr().err
 
 
+def test_a_hostile_name_does_not_reach_the_terminal(tmp_path: Path, capsys: pytest.CaptureFixture[str]) -> None:
+    complaint = complaint_about('"\\u001b[2J" = 1\n' + starter_text(), tmp_path, capsys)
+    assert "\x1b" not in complaint
+    assert "\\x1b[2J" in complaint
+
+
 def test_a_path_that_cannot_be_read(tmp_path: Path, capsys: pytest.CaptureFixture[str]) -> None:
     assert main(["design", str(tmp_path / "none.toml")]) == 2
     assert "no such file" in capsys.readouterr().err
