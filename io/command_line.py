@@ -80,7 +80,7 @@ def _guarded(run: Callable[[Namespace], int], given: Namespace) -> int:
         return _complain(f"{error}", _WRONG_INPUT)
     except KeyboardInterrupt:
         return _complain("interrupted; every file that was written is whole", _INTERRUPTED)
-    except BrokenPipeError:  # the reader of our output, such as `head`, has had enough
+    except (BrokenPipeError, SystemExit):  # the reader of our output, such as `head`, left; rich then raises SystemExit
         os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
         return _BROKEN_PIPE
     except Exception as error:
