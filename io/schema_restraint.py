@@ -72,17 +72,6 @@ class FactorTable(Table):
     out_of_plane: Annotated[float, number(0.5, 3)] = key("sideways", 1.0)
     reason: Text = key("why a factor below 1 is right", "")
 
-    @model_validator(mode="after")
-    def _has_reason(self) -> Self:
-        if min(self.in_plane, self.out_of_plane) < 1 and not self.reason:
-            raise refused(
-                InputError(
-                    f"a factor of {min(self.in_plane, self.out_of_plane):g}, below 1, is given without a reason",
-                    'add reason = "..." that a checking engineer can judge, or write 1.0',
-                )
-            )
-        return self
-
 
 class RestraintTable(Table):
     """The table [restraint]."""

@@ -106,13 +106,6 @@ def mistake(text: str) -> InputError:
         ("steel", 'steel = ""', "members.steel", "empty", "name"),
         ("title", 'title = "a\\u0000b"', "title", "control character", "one line"),
         ("title", 'title = """a\nb"""', "title", "line break", "one line"),
-        (
-            "effective_length_factor",
-            "effective_length_factor = { in_plane = 0.8 }",
-            "restraint.effective_length_factor",
-            "0.8",
-            "reason",
-        ),
         # loads
         ("kind", 'kind = "dead"', "loads.at_joint[1].kind", '"dead"', '"permanent"'),
         ("roof_permanent", 'roof_permanent = { most = "1 kPa" }', "loads.roof_permanent.least", "missing", "helps"),

@@ -229,6 +229,7 @@ def test_sections_lists_what_the_limits_let_through(capsys: pytest.CaptureFixtur
         ("bearings_held", "bearings_held = false", "", "B0"),
         ("joint", 'joint = "B99"', "loads.at_joint", "B99"),
         ("kind", f'kind = "wind"\n{SECOND_LOAD}', "loads.at_joint", "hoist"),
+        ("effective_length_factor", "effective_length_factor = { in_plane = 0.8 }", "restraint.effective", "0.8"),
         ("steel", 'steel = "S355JX"', "members.steel", "S355JX"),
         ("top_chord", 'top_chord = "2L 81x81x6"', "members.top_chord", "2L 81x81x6"),
         ("posts", 'posts = "channel"', "members.posts", "channel"),
