@@ -23,8 +23,8 @@ class RoofShape:
     """The roof, with x from left to right along the truss and z along the ridge from the near gable's wall, all mm.
 
     kind : "duopitch" and "trough" have two slopes, the others one.
-    left, right : rad, pitch of the slopes, positive where they rise towards the middle (negative in a trough); on a roof
-        of one slope both are its pitch, never negative.
+    left, right : rad, pitch of the slopes, positive where they rise towards the middle (negative in a trough); on a
+        roof of one slope both are its pitch, never negative.
     edges : x of the roof's edges. walls : x of the walls. middle : x of the ridge or trough; of one slope its middle.
     ends : z of the roof's edges beyond the gables. length : of the building. width : wall to wall.
     height : of the highest point of the roof above ground. eaves : of the roof's surface above each wall, above ground.

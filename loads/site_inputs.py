@@ -19,8 +19,8 @@ Derivable = Literal["roof_permanent", "roof_imposed", "man_load", "wind", "snow"
 class Opening:
     """Openings in one face of the building.
 
-    area : mm2. start, end : mm along the face between which they lie, from the left wall on a gable, from the near gable
-    on a wall; None: anywhere on the face.
+    area : mm2. start, end : mm along the face between which they lie, from the left wall on a gable, from the near
+    gable on a wall; None: anywhere on the face.
     shut_in_storms : they are shut whenever the wind is strong, and count as closed at the ultimate limit state.
     """
 
@@ -61,8 +61,8 @@ class SiteInput:
     altitude : mm above the sea. topography : factor on the speed. return_period : years.
     internal : internal pressure coefficients as stated; empty: from the openings, or the standard's pair where none
     are stated.
-    column_head_share : share of the wind on a wall that its columns pass to the truss at their heads: 1/2 where they are
-    pinned at the base, 3/8 where fixed, 0 where something else takes it.
+    column_head_share : share of the wind on a wall that its columns pass to the truss at their heads: 1/2 where they
+    are pinned at the base, 3/8 where fixed, 0 where something else takes it.
     national : which national values, where the standard leaves them open; "" = the recommended ones.
     derive : the keys of [loads] that the user left to the site.
     """

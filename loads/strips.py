@@ -21,6 +21,7 @@ class Strips:
     places : (l,) mm along the top chord from its first joint.
     x : (l,) mm.
     lengths : (l, q) mm of slope.
+    middles : (q,) x of the middle of each piece, mm.
     directions : (q, 2) unit vectors, left to right.
     slope : (q,) the slope each piece lies on. half : (q,) the half of the roof it lies on.
     """
@@ -28,6 +29,7 @@ class Strips:
     places: FloatArray
     x: FloatArray
     lengths: FloatArray
+    middles: FloatArray
     directions: FloatArray
     slope: tuple[SlopeSide, ...]
     half: tuple[SlopeSide, ...]
@@ -48,14 +50,23 @@ class Strips:
 
     def across(self, left: float, right: float) -> FloatArray:
         """Return (l, 2) N for loads normal to the slopes, N per mm of slope, + presses in."""
-        load = np.array([left if lies == "left" else right for lies in self.slope])
+        return self.across_pieces(self.by_slope(left, right))
+
+    def across_pieces(self, load: FloatArray) -> FloatArray:
+        """Return (l, 2) N for a load (q,) normal to each piece, N per mm of slope, + presses in."""
         normals = np.column_stack([self.directions[:, 1], -self.directions[:, 0]])
         forces: FloatArray = self.lengths @ (load[:, None] * normals)
         return forces
 
+    def by_slope(self, left: float, right: float) -> FloatArray:
+        """Return (q,) the value of the slope that each piece lies on."""
+        return np.array([left if lies == "left" else right for lies in self.slope])
 
-def strips(truss: Truss, lines: tuple[PurlinLine, ...]) -> Strips:
+
+def strips(truss: Truss, lines: tuple[PurlinLine, ...], cuts: FloatArray | None = None) -> Strips:
     """Divide the roof among the purlin lines.
+
+    cuts : x at which pieces are divided further, mm, such as the edges of wind zones.
 
     A line carries half-way to each of its neighbours along the slope, the outermost ones to the roof's edge; where no
     line stands on the apex, those nearest to it carry to the apex.
@@ -63,16 +74,19 @@ def strips(truss: Truss, lines: tuple[PurlinLine, ...]) -> Strips:
     roof = slopes(truss)
     places = np.array([line.along for line in lines])
     half = _halves_meet(truss, roof)
-    cuts = _piece_cuts(truss, half)
-    middles = (cuts[:-1] + cuts[1:]) / 2
+    x_of, along_of = _plan(truss, roof)
+    further = np.empty(0) if cuts is None else np.interp(cuts, x_of, along_of)
+    ends = _piece_cuts(truss, half, further)
+    middles = (ends[:-1] + ends[1:]) / 2
     bar = np.searchsorted(truss.top.along[1:-1], middles)
     bounds = _boundaries(truss, roof, places)
-    low = np.maximum.outer(bounds[:-1], cuts[:-1])
-    high = np.minimum.outer(bounds[1:], cuts[1:])
+    low = np.maximum.outer(bounds[:-1], ends[:-1])
+    high = np.minimum.outer(bounds[1:], ends[1:])
     return Strips(
         places,
         np.array([line.x for line in lines]),
         np.maximum(high - low, 0.0),
+        np.interp(middles, along_of, x_of),
         roof.directions[bar],
         tuple(roof.side[at] for at in bar),
         tuple("left" if middle < half else "right" for middle in middles),
@@ -101,9 +115,17 @@ def _halves_meet(truss: Truss, roof: Slopes) -> float:
     return float(np.interp(middle, x, truss.top.along))
 
 
-def _piece_cuts(truss: Truss, half: float) -> FloatArray:
-    """Return the places, ascending, between which the roof is straight and lies on one half."""
-    return np.unique(np.array([*_edges(truss), *truss.top.along, half]))
+def _plan(truss: Truss, roof: Slopes) -> tuple[FloatArray, FloatArray]:
+    """Return x of the roof's edges and of the joints between them, and their places along the chord."""
+    (left, right), along = truss.top.overhang, truss.top.along
+    x = truss.xy[list(truss.top.joints), 0]
+    first, last = x[0] - left * roof.directions[0, 0], x[-1] + right * roof.directions[-1, 0]
+    return np.array([first, *x, last]), np.array([-left, *along, truss.top.length + right])
+
+
+def _piece_cuts(truss: Truss, half: float, further: FloatArray) -> FloatArray:
+    """Return the places, ascending, between which the roof is straight, lies on one half and is not cut further."""
+    return np.unique(np.array([*_edges(truss), *truss.top.along, half, *further]))
 
 
 def _boundaries(truss: Truss, roof: Slopes, places: FloatArray) -> FloatArray:
