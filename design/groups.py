@@ -53,6 +53,8 @@ def form_groups(truss: Truss, project: Project) -> tuple[Group, ...]:
     named = []
     for name, bar_names in project.groups.items():
         key = f"groups.{name}"
+        if name in ROLE_GROUPS.values():
+            raise InputError(f'"{name}" is the group of a whole role already', "give this group another name", key)
         bars = [truss.bar(bar, key=key) for bar in bar_names]
         for bar in bars:
             if bar in claimed:
@@ -68,7 +70,9 @@ def _named_group(truss: Truss, members: MembersInput, name: str, key: str, bars:
         raise InputError(f"its members are of several roles: {', '.join(sorted(roles))}", "split it by role", key)
     role = roles.pop()
     wanted = members.by_group.get(name, members.by_role[role])
-    return Group(name, role, _indices(bars), wanted, f"members.{name}" if name in members.by_group else _role_key(role))
+    return Group(
+        name, role, _indices(bars), wanted, f"members.groups.{name}" if name in members.by_group else _role_key(role)
+    )
 
 
 def _role_groups(truss: Truss, members: MembersInput, claimed: set[int]) -> list[Group]:

@@ -39,6 +39,14 @@ def make_folder(path: Path) -> None:
         raise _not_written(path, error) from error
 
 
+def remove(path: Path) -> None:
+    """Remove a file that an earlier run left, if it is there. OutputError if that cannot be."""
+    try:
+        path.unlink(missing_ok=True)
+    except OSError as error:
+        raise _not_written(path, error) from error
+
+
 def input_hash(text: str) -> str:
     """Return the mark of an input that every output carries: the first 12 hex digits of its SHA-256."""
     return hashlib.sha256(text.encode()).hexdigest()[:_HASH_LENGTH]

@@ -5,7 +5,7 @@ from __future__ import annotations
 from pathlib import Path
 
 from spanwright.design.result import Design
-from spanwright.io.files import make_folder
+from spanwright.io.files import make_folder, remove
 from spanwright.io.results.document import write_results
 
 SCHEDULES = ("schedule.csv", "schedule.xlsx")
@@ -28,5 +28,5 @@ def write_all(design: Design, folder: Path | str, *, pictures: bool = True) -> N
         write_schedules(design, folder)
     else:
         for name in SCHEDULES:
-            (folder / name).unlink(missing_ok=True)
+            remove(folder / name)
     write_results(design, folder)
