@@ -130,8 +130,9 @@ def _longest_piece(
     stub = PHI * section_class.effective_area * column(candidates.steel_fy)
     share = effects.own.force / (effects.own.share * stub)
     helps = (share > 0.0) & (share < 1.0)
-    share = np.where(helps, share, 0.5)
-    slenderness = (share**-EXPONENT - 1.0) ** (0.5 / EXPONENT)
+    share = np.where(helps, share, 1.0)
+    # the column curve of 13.3.1 solved for its slenderness
+    slenderness = (1.0 - share**EXPONENT) ** (0.5 / EXPONENT) / np.sqrt(share)
     length = slenderness * radius * np.pi * np.sqrt(MODULUS / column(candidates.steel_fy))
     return np.where(helps, length, np.inf)
 

@@ -49,6 +49,7 @@ def limit_check(
 ) -> Check:
     """Return the check of a slenderness against its limit; `applies` (s, b) or (b,) masks where it arises."""
     value = np.broadcast_to(value, shape)
+    if applies is not None:
+        value = np.where(applies, value, 0.0)
     limit = np.broadcast_to(limit, shape)
-    ratio = value / limit if applies is None else np.where(applies, value / limit, 0.0)
-    return Check(name, clause, "limit", ratio, np.full(shape, -1), value, limit, "-", rules)
+    return Check(name, clause, "limit", value / limit, np.full(shape, -1), value, limit, "-", rules)

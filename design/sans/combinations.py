@@ -107,7 +107,7 @@ def governing_of(make: Maker, kept: Kept, shape: tuple[int, int]) -> tuple[Float
         best = np.argmax(values[:, first:past], axis=1)
         ratio[:, bar] = values[np.arange(shape[0]), first + best]
         governing[:, bar] = kept.combinations[first + best]
-    return ratio, governing
+    return ratio, np.where(ratio > 0.0, governing, -1)
 
 
 def _ratio(rules: tuple[Rule, ...]) -> FloatArray:

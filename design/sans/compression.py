@@ -176,8 +176,7 @@ class Unsymmetric(Rule):
     def elastic_stress(self) -> FloatArray:
         u, v, z = self.stress_major, self.stress_minor, self.stress_torsion
         U, V = self.shear_major**2 / self.polar_squared, self.shear_minor**2 / self.polar_squared
-        lead = 1.0 - U - V
-        return least_root((v * U + u * V - u - v - z) / lead, (u * v + u * z + v * z) / lead, -u * v * z / lead)
+        return least_root(1.0 - U - V, v * U + u * V - u - v - z, u * v + u * z + v * z, -u * v * z)
 
     @step(
         "cubic",
@@ -193,14 +192,19 @@ class Unsymmetric(Rule):
         return ((f - u) * (f - v) * (f - z) - f**2 * (f - v) * U - f**2 * (f - u) * V) / (u * v * z)
 
 
-def least_root(a: FloatArray, b: FloatArray, c: FloatArray) -> FloatArray:
-    """Return the least root of x^3 + a x^2 + b x + c, whose three roots are real (trigonometric solution)."""
+def least_root(c3: FloatArray, c2: FloatArray, c1: FloatArray, c0: FloatArray) -> FloatArray:
+    """Return the least root of c3 x^3 + c2 x^2 + c1 x + c0, whose three roots are real and positive.
+
+    Its reciprocal is the greatest root of the reversed cubic, which the trigonometric solution gives as a sum of
+    two positive terms, so that no digits are lost.
+    """
+    a, b, c = c1 / c0, c2 / c0, c3 / c0
     q = np.maximum(a**2 - 3.0 * b, 0.0) / 9.0
     r = (2.0 * a**3 - 9.0 * a * b + 27.0 * c) / 54.0
     # three equal roots make q and r zero
-    cosine = np.divide(r, q**1.5, out=np.zeros_like(r), where=q > 0.0)
-    angle = np.arccos(np.clip(cosine, -1.0, 1.0)) / 3.0
-    root: FloatArray = -2.0 * np.sqrt(q) * np.cos(angle) - a / 3.0
+    cosine = np.divide(-r, q**1.5, out=np.zeros_like(r), where=q > 0.0)
+    greatest = 2.0 * np.sqrt(q) * np.cos(np.arccos(np.clip(cosine, -1.0, 1.0)) / 3.0) - a / 3.0
+    root: FloatArray = 1.0 / greatest
     return root
 
 
