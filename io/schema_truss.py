@@ -48,11 +48,14 @@ def _point(value: object) -> tuple[float, float]:
     return x, y
 
 
-def _bar(value: object) -> tuple[str, str, Role]:
-    if not isinstance(value, list) or len(value) != 3:
-        raise InputError(f"{shown(value)} is not a bar", 'write two joints and a role, such as ["A", "B", "top chord"]')
+def _bar(value: object) -> tuple[str, str, Role, str]:
+    if not isinstance(value, list) or len(value) not in (3, 4):
+        raise InputError(
+            f"{shown(value)} is not a bar",
+            'write two joints and a role, such as ["A", "B", "top chord"]; a name may follow',
+        )
     role: Any = choose(value[2], ROLES)
-    return name(value[0]), name(value[1]), role
+    return name(value[0]), name(value[1]), role, name(value[3]) if len(value) == 4 else ""
 
 
 class _AnyTruss(Table):
@@ -113,8 +116,9 @@ class GivenTruss(_AnyTruss):
     joints: dict[Name, Annotated[tuple[float, float], field(_point)]] = key(
         'the joints, one a line under [truss.joints]: A = ["0 m", "0 m"]'
     )
-    bars: list[Annotated[tuple[str, str, Role], field(_bar)]] = key(
-        'the bars, each with its two joints and its role: [["A", "B", "top chord"], ["A", "C", "bottom chord"]]'
+    bars: list[Annotated[tuple[str, str, Role, str], field(_bar)]] = key(
+        'the bars, each with its two joints and its role: [["A", "B", "top chord"], ["A", "C", "bottom chord"]]; '
+        'a bar\'s own name may follow, ["A", "B", "top chord", "TC1"]'
     )
     joint_supports: dict[Name, Annotated[Bearing, one_of(Bearing)]] = key(
         'the bearings, under [truss.joint_supports]: A = "pinned", C = "sliding"'
@@ -128,7 +132,9 @@ class GivenTruss(_AnyTruss):
     def value(self) -> GivenInput:
         """Return the joints and bars as the truss room takes them."""
         joints = tuple((joint, x, y) for joint, (x, y) in self.joints.items())
-        return GivenInput(joints, tuple(self.bars), tuple(self.joint_supports.items()), self.overhang)
+        bars = tuple((start, end, role) for start, end, role, _ in self.bars)
+        bar_names = tuple(bar_name for *_, bar_name in self.bars if bar_name)
+        return GivenInput(joints, bars, tuple(self.joint_supports.items()), self.overhang, bar_names)
 
 
 def _way(table: Any) -> str:

@@ -28,8 +28,8 @@ _PREFIX: dict[Role, str] = {"top chord": "TC", "bottom chord": "BC", "post": "P"
 def build_given(given: GivenInput) -> Truss:
     """Build the truss from its joints and bars; joints keep their names and coordinates.
 
-    Bars are named by role and numbered from left to right, chord bars along the chord: `TC1..`, `BC1..`, `P1..`,
-    `D1..`.
+    Bars that have names keep them and their order. Without, they are named by role and numbered from left to right,
+    chord bars along the chord: `TC1..`, `BC1..`, `P1..`, `D1..`.
 
     Raises InputError (UnknownNameError for a name) and GeometryError with the names of joints and bars, key
     "truss.joints", "truss.bars" or "truss.joint_supports", for what cannot be a truss on two bearings or more. What
@@ -104,6 +104,15 @@ def _refuse_bars(given: GivenInput, names: list[str], xy: FloatArray, ends: IntA
             )
 
 
+def _refuse_bar_names(given: GivenInput) -> None:
+    if len(given.bar_names) != len(given.bars):
+        found = f"there are {len(given.bars)} bars and {len(given.bar_names)} names for them"
+        raise InputError(found, "name every bar, or none", _BARS)
+    repeated = _repeated(given.bar_names)
+    if repeated:
+        raise InputError(f"the bar name {_quoted(repeated)} is given more than once", "name every bar apart", _BARS)
+
+
 def _passed(xy: FloatArray, first: int, last: int) -> IntArray:
     """Return the joints that lie on the bar between its ends."""
     step = xy[last] - xy[first]
@@ -163,7 +172,10 @@ def _refuse_swapped_chords(truss: Truss) -> None:
 
 
 def _named_bars(given: GivenInput, names: list[str], xy: FloatArray, ends: IntArray) -> list[NamedBar]:
-    """Return the bars in the order of their numbers: the chords along themselves, webs by their centres."""
+    """Return the bars with their names, or numbered: the chords along themselves, webs by their centres."""
+    if given.bar_names:
+        _refuse_bar_names(given)
+        return [NamedBar(name, *bar) for name, bar in zip(given.bar_names, given.bars, strict=True)]
     roles = [role for _, _, role in given.bars]
     top, bottom = trace_chords(names, xy, ends, roles)
     centres = xy[ends].mean(axis=1)

@@ -40,12 +40,14 @@ class GivenInput:
 
     joints : (name, x mm, y mm) each. bars : (joint, joint, role) each. supports : (joint, "pinned" or "sliding") each.
     overhang : mm in plan, top chord beyond its end joints, each side.
+    bar_names : the names of the bars in their order, or () to number them by role from the left.
     """
 
     joints: tuple[tuple[str, float, float], ...]
     bars: tuple[tuple[str, str, Role], ...]
     supports: tuple[tuple[str, Literal["pinned", "sliding"]], ...]
     overhang: float = 0.0
+    bar_names: tuple[str, ...] = ()
 
 
 @dataclass(frozen=True)
