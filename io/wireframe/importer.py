@@ -185,7 +185,7 @@ def _given(
     others: Bearing = "sliding" if options.supports == "left pinned, right sliding" else "pinned"
     supports = tuple((names[joint], others if k else "pinned") for k, joint in enumerate(bearings))
     bars = tuple((start, end, role) for _, start, end, role in named.bars)
-    return GivenInput(joints, bars, supports, overhang)
+    return GivenInput(joints, bars, supports, overhang, tuple(name for name, *_ in named.bars))
 
 
 def _with_marks(given: GivenInput, bearing: FloatArray, flat: _Flat, log: _Log) -> Wireframe:
