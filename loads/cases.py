@@ -13,15 +13,18 @@ from spanwright.loads.inputs import JointLoad, LoadsInput, WindInput
 from spanwright.loads.joint_loads import at_eaves, at_joint, ceiling, ceiling_warnings, own_mass_loads
 from spanwright.loads.mirror import SUFFIX, is_symmetric, mirrored, mirrored_load
 from spanwright.loads.roof import Roof, roof_over
+from spanwright.loads.site import SiteActions, actions_from_site
+from spanwright.loads.site_inputs import SiteInput
 from spanwright.loads.strips import SIDES
+from spanwright.loads.walls import wall_forces, wall_sides
 from spanwright.truss.arrays import FloatArray
 from spanwright.truss.errors import InputError
 from spanwright.truss.model import Truss
 from spanwright.truss.purlins import PurlinLine
 
-__all__ = ["PERMANENT", "Case", "CaseKind", "LoadSet", "Stations", "load_cases", "own_mass_loads"]
+__all__ = ["PERMANENT", "Case", "CaseKind", "LoadSet", "Stations", "load_cases", "loads_on", "own_mass_loads"]
 
-CaseKind = Literal["permanent", "imposed", "man", "wind"]
+CaseKind = Literal["permanent", "imposed", "man", "snow", "wind"]
 PERMANENT = ("most", "least")
 """The two sets of permanent loads: the greatest and the least credible."""
 
@@ -31,7 +34,7 @@ class Case:
     """One load case, unfactored.
 
     name : unique ("most", "least", "imposed left", "man at T3", "man in TC4", "across ridge, suction mirrored").
-    kind : "permanent", "imposed", "man" (takes the place of imposed in a combination) or "wind".
+    kind : "permanent", "imposed", "man" (takes the place of imposed in a combination), "snow" or "wind".
     joint_loads : (j, 2) N, x to the right, y up.
     moments : (m,) N mm in the top chord at the stations, sagging (tension at the lower fibre) +.
     derivation : lines for the checker: what, value, unit, how.
@@ -55,17 +58,44 @@ class Case:
 
 @dataclass(frozen=True, eq=False)
 class LoadSet:
-    """All load cases of a truss, the stations of their moments, and what a user should know, in sentences."""
+    """All load cases of a truss, the stations of their moments, and what a user should know, in sentences.
+
+    cautions : what a printed copy of the loading standard must confirm. site : where loads were found from the site.
+    """
 
     cases: tuple[Case, ...]
     stations: Stations
     warnings: tuple[str, ...] = ()
+    cautions: tuple[str, ...] = ()
+    site: SiteActions | None = None
 
 
-def load_cases(truss: Truss, lines: tuple[PurlinLine, ...], loads: LoadsInput, tributary: float) -> LoadSet:
+def loads_on(
+    truss: Truss,
+    lines: tuple[PurlinLine, ...],
+    loads: LoadsInput,
+    site: SiteInput | None,
+    actions: str,
+    *,
+    spacing: float,
+    tributary: float,
+) -> LoadSet:
+    """Return every load case of a truss, with what the user left to the site, if there is one, found from it.
+
+    See `load_cases` and `site.actions_from_site`.
+    """
+    if site is None:
+        return load_cases(truss, lines, loads, tributary)
+    found = actions_from_site(truss, site, actions, loads, spacing=spacing, tributary=tributary)
+    return load_cases(truss, lines, found.loads, found.tributary, found)
+
+
+def load_cases(
+    truss: Truss, lines: tuple[PurlinLine, ...], loads: LoadsInput, tributary: float, site: SiteActions | None = None
+) -> LoadSet:
     """Return every load case; "most" and "least" come without the own mass (see `joint_loads.own_mass_loads`).
 
-    tributary : mm of roof along the ridge that the truss carries.
+    tributary : mm of roof along the ridge that the truss carries. site : adds its wind and snow.
 
     A load at a joint joins the case it names; a permanent one with a name of its own joins both sets, any other makes a
     case of that name. What joins a wind case joins its mirrored twin at the mirror image of the joint.
@@ -77,16 +107,21 @@ def load_cases(truss: Truss, lines: tuple[PurlinLine, ...], loads: LoadsInput, t
         raise InputError(
             "no purlin line carries the roof to the truss", "state where purlins stand", "restraint.purlins"
         )
-    roof = roof_over(truss, lines, tributary, man=loads.man_load > 0.0)
+    cuts = None if site is None or site.wind is None else site.wind.cuts
+    roof = roof_over(truss, lines, tributary, man=loads.man_load > 0.0, cuts=cuts)
     cases: dict[str, Case] = {}
-    for case in (*_permanent(roof, loads), *_imposed(roof, loads), *_men(roof, loads), *_wind(roof, loads)):
+    stated = (*_permanent(roof, loads), *_imposed(roof, loads), *_men(roof, loads), *_wind(roof, loads))
+    for case in (*stated, *_from_site(roof, site)):
         if case.name in cases:
             raise InputError(f'two cases are called "{case.name}"', "give every case a name of its own", "loads.wind")
         cases[case.name] = case
     warnings = [*ceiling_warnings(truss, loads.ceiling_permanent), *_wind_warnings(roof, loads)]
     for load in loads.at_joint:
         warnings += _join(roof, cases, load)
-    return LoadSet(_without_needless_twins(cases), roof.beams.stations, tuple(warnings))
+    known = _without_needless_twins(cases)
+    if site is None:
+        return LoadSet(known, roof.beams.stations, tuple(warnings))
+    return LoadSet(known, roof.beams.stations, (*site.warnings, *warnings), site.cautions, site)
 
 
 def _permanent(roof: Roof, loads: LoadsInput) -> Iterator[Case]:
@@ -131,6 +166,24 @@ def _wind(roof: Roof, loads: LoadsInput) -> Iterator[Case]:
 def _wind_case(roof: Roof, wind: WindInput) -> Case:
     case = _case(wind.name, "wind", roof.wind(wind.left, wind.right))
     return case.joined_by(roof.beams.at_joints(*at_eaves(roof.truss, wind.eaves_left, wind.eaves_right)))
+
+
+def _from_site(roof: Roof, site: SiteActions | None) -> Iterator[Case]:
+    """Yield the snow and wind cases found from the site; the first wind case tells how the peak pressure came about."""
+    if site is None:
+        return
+    for fallen in site.snow:
+        edges = (fallen.edge_left, fallen.edge_right)
+        yield _case(fallen.name, "snow", roof.snow(fallen.left, fallen.right, edges, tuple(map(str, fallen.steps))))
+    if site.wind is None:
+        return
+    walls = wall_sides(roof.truss, site.shape)
+    peak = tuple(map(str, site.wind.peak.steps))
+    for number, wind in enumerate(site.wind.cases):
+        head = (*(peak if number == 0 else (peak[-1],)), *wind.derivation)
+        case = _case(wind.name, "wind", roof.surface(site.wind.cuts, wind.net, head))
+        on_walls = wall_forces(roof.truss, walls, wind.walls, site.wind.wall_width, site.site.column_head_share)
+        yield case.joined_by(roof.beams.at_joints(*on_walls))
 
 
 def _case(name: str, kind: CaseKind, part: Part) -> Case:

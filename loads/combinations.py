@@ -22,8 +22,8 @@ ACTIONS: dict[str, tuple[str, str]] = {
 }
 """Loading standards by name: the file of their combinations in loads/data, and the edition within it."""
 
-COLUMNS = ("most", "least", "imposed", "man", "wind")
-"""Columns of such a file that hold factors: the two permanent sets, then the kinds of variable cases."""
+COLUMNS = ("most", "least", "imposed", "man", "snow", "wind")
+"""Columns of such a file that may hold factors: the two permanent sets, then the kinds of variable cases."""
 
 
 @dataclass(frozen=True)
@@ -73,7 +73,7 @@ def _rows(file: str, edition: str) -> list[dict[str, str]]:
 
 def _expand(row: dict[str, str], cases: tuple[Case, ...]) -> list[Combination]:
     """Return one combination for every way to take one case of each kind that the row gives a factor."""
-    factors = [(column, row[column]) for column in COLUMNS if row[column]]
+    factors = [(column, row[column]) for column in COLUMNS if row.get(column)]
     choices = [[(case.name, text) for case in cases if _column(case) == column] for column, text in factors]
     state = cast(LimitState, row["limit_state"])
     return [

@@ -62,6 +62,28 @@ class Roof:
         head = f"wind across the slopes, + presses in: left {self._per_metre(left)}, right {self._per_metre(right)}"
         return self._part(head, forces, carried, self._shares_again)
 
+    def surface(self, cuts: FloatArray, net: FloatArray, head: tuple[str, ...]) -> Part:
+        """Return the part of pressures normal to the roof that change along it, MPa, + presses in.
+
+        cuts : (q + 1,) x between which the pressures net (q,) hold, mm. head : how they came about.
+        """
+        at = np.clip(np.searchsorted(cuts, self.strips.middles) - 1, 0, len(net) - 1)
+        forces = self.strips.across_pieces(net[at] * self.tributary)
+        carried = [f"{say.metres(length)} of slope" for length in self.strips.lengths.sum(axis=1)]
+        part = self._part(
+            f"on {say.metres(self.tributary)} of roof along the ridge", forces, carried, self._shares_again
+        )
+        return replace(part, derivation=(*head, *part.derivation))
+
+    def snow(self, left: float, right: float, edges: tuple[float, float], head: tuple[str, ...]) -> Part:
+        """Return the part of snow, MPa on plan of each slope, and of what hangs over the eaves, N/mm along them."""
+        forces = self.strips.on_plan_pieces(self.strips.by_slope(left, right) * self.tributary)
+        forces[[0, -1], 1] -= np.array(edges) * self.tributary
+        carried = [f"{say.metres(length)} on plan" for length in self.strips.plan()]
+        line = f"snow: left {self._per_metre(left)}, right {self._per_metre(right)}, on plan"
+        part = self._part(line, forces, carried, self._shares_again)
+        return replace(part, derivation=(*head, *part.derivation))
+
     def men(self, load: float) -> Iterator[tuple[str, Part]]:
         """Yield the name of each place where a man (N) is met, and what he does there.
 
@@ -129,9 +151,11 @@ class Roof:
         return f"{say.kilopascals(pressure)} x {say.metres(self.tributary)} = {line_load:.3f} kN/m"
 
 
-def roof_over(truss: Truss, lines: tuple[PurlinLine, ...], tributary: float, *, man: bool) -> Roof:
-    """Return the roof over a truss. man : whether a man's load is to be met."""
-    carried = strips(truss, lines)
+def roof_over(
+    truss: Truss, lines: tuple[PurlinLine, ...], tributary: float, *, man: bool, cuts: FloatArray | None = None
+) -> Roof:
+    """Return the roof over a truss. man : whether a man's load is to be met. cuts : x where pressures change, mm."""
+    carried = strips(truss, lines, cuts)
     beams = chord_beams(truss, carried.places, man=man)
     on_joint = tuple(line.joint is not None for line in lines)
     return Roof(truss, tuple(line.name for line in lines), on_joint, carried, beams, tributary)

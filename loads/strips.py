@@ -42,6 +42,10 @@ class Strips:
         """Return (l, 2) N for a load down, N per mm of plan, on the whole roof or on one half alone."""
         return _down(load * self.plan(half))
 
+    def on_plan_pieces(self, load: FloatArray) -> FloatArray:
+        """Return (l, 2) N for a load (q,) down on each piece, N per mm of plan."""
+        return _down(self.lengths @ (np.abs(self.directions[:, 0]) * load))
+
     def plan(self, half: SlopeSide | None = None) -> FloatArray:
         """Return (l,) mm on plan that each line carries, of the whole roof or of one half."""
         loaded = np.array([half in (None, lies) for lies in self.half])

@@ -1,0 +1,248 @@
+"""From the zones of a roof to the pressures on one truss: by area over its own strip of roof, for every wind case."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass, replace
+from functools import cached_property
+from itertools import pairwise, product
+
+import numpy as np
+
+from spanwright.loads import derivation as say
+from spanwright.loads.coefficients import CLAUSES, Sign, roof_coefficients, wall_coefficients
+from spanwright.loads.intermediate import Intermediate
+from spanwright.loads.internal import Internal, Walls, internal_coefficients
+from spanwright.loads.roof_shape import RoofShape
+from spanwright.loads.site_inputs import Face, SiteInput
+from spanwright.loads.site_standard import PeakPressure
+from spanwright.loads.zones import (
+    DIRECTIONS,
+    Part,
+    WindFrom,
+    Zone,
+    across,
+    overlaps,
+    roof_zones,
+    shares,
+    sides,
+    wall_zones,
+    zone_measure,
+)
+from spanwright.truss.arrays import FloatArray
+
+
+@dataclass(frozen=True, eq=False)
+class SurfaceCase:
+    """One wind case: net pressures on the truss's strip, + towards the surface.
+
+    wind : where it blows from. signs : (part of the roof, signed line of its table) each.
+    external : (q,) mean external coefficient on each stretch of roof. under : (q,) mean coefficient below it: inside
+    the building, or on the wall or gable below an overhang. net : (q,) MPa, + presses the roof in.
+    cpi : internal coefficient. walls : net pressure on the left and the right wall, MPa, + presses in.
+    derivation : lines for the checker.
+    """
+
+    name: str
+    wind: WindFrom
+    signs: tuple[tuple[Part, Sign], ...]
+    external: FloatArray
+    under: FloatArray
+    net: FloatArray
+    cpi: float
+    walls: tuple[float, float]
+    derivation: tuple[str, ...]
+
+
+@dataclass(frozen=True, eq=False)
+class WindField:
+    """Wind on one truss's strip of roof and walls.
+
+    strip : z from and to, mm. cuts : (q + 1,) x at which pressures change, mm.
+    """
+
+    shape: RoofShape
+    site: SiteInput
+    peak: PeakPressure
+    pair: tuple[Intermediate, ...]
+    strip: tuple[float, float]
+
+    @cached_property
+    def zones(self) -> dict[WindFrom, tuple[Zone, ...]]:
+        """The zones of the roof for each direction."""
+        return {wind: roof_zones(self.shape, wind) for wind in DIRECTIONS}
+
+    @cached_property
+    def cuts(self) -> FloatArray:
+        """(q + 1,) x at which a zone or a wall begins or ends, mm."""
+        edges = {x for zones in self.zones.values() for zone in zones for x in (zone.x0, zone.x1)}
+        return np.unique(np.array([*edges, *self.shape.walls]))
+
+    @cached_property
+    def area(self) -> float:
+        """Area of roof on plan that the truss carries, mm2."""
+        return (self.strip[1] - self.strip[0]) * (self.shape.edges[1] - self.shape.edges[0])
+
+    @cached_property
+    def cases(self) -> tuple[SurfaceCase, ...]:
+        """Every wind case: each direction, signed line of each slope and internal pressure, those that differ."""
+        kept: list[SurfaceCase] = []
+        for case in (case for wind in DIRECTIONS for case in self._cases(wind)):
+            twin = next((at for at, other in enumerate(kept) if _alike(case, other)), None)
+            if twin is None:
+                kept.append(case)
+            else:
+                same = kept[twin]
+                kept[twin] = replace(same, derivation=(*same.derivation, f"the same as: {case.name}"))
+        return tuple(kept)
+
+    @cached_property
+    def internal(self) -> tuple[Intermediate, ...]:
+        """Where the internal coefficients of all directions come from."""
+        found = [
+            internal.source
+            for wind in DIRECTIONS
+            for internal in internal_coefficients(self.site, self.shape, wind, self.walls(wind), self.pair)
+        ]
+        return tuple(dict.fromkeys(found))
+
+    @property
+    def wall_width(self) -> float:
+        """Wall along the ridge that goes to the truss, mm."""
+        return min(self.strip[1], self.shape.length) - max(self.strip[0], 0.0)
+
+    def walls(self, wind: WindFrom) -> Walls:
+        """Return the zones of the faces with their external coefficients."""
+        values = wall_coefficients(self.shape.height / sides(self.shape, wind)[1])
+        return tuple((zone, values[zone.name]) for zone in wall_zones(self.shape, wind))
+
+    def on_wall(self, walls: Walls, face: Face, stretch: tuple[float, float]) -> float:
+        """Return the mean external coefficient of a face between two distances along it."""
+        zones = [(zone, cpe) for zone, cpe in walls if zone.face == face]
+        ends = np.array([[zone.start, zone.end] for zone, _ in zones])
+        first, last = float(ends.min()), float(ends.max())
+        ends[ends == first], ends[ends == last] = -np.inf, np.inf  # beyond its ends a face is as at them
+        lengths = overlaps(ends, stretch)
+        return float(lengths @ np.array([cpe for _, cpe in zones]) / lengths.sum())
+
+    def _cases(self, wind: WindFrom) -> list[SurfaceCase]:
+        zones, walls = self.zones[wind], self.walls(wind)
+        by_zone = shares(zones, self.cuts, self.strip)
+        inside, below = self._under(walls)
+        within = (max(self.strip[0], 0.0), min(self.strip[1], self.shape.length))
+        on_walls = [self.on_wall(walls, face, within) for face in ("left wall", "right wall")]
+        head = self._head(wind)
+        cases = []
+        for signs, cpe in self._lines(zones):
+            external: FloatArray = by_zone @ cpe
+            for internal in internal_coefficients(self.site, self.shape, wind, walls, self.pair):
+                under = below + inside * internal.cpi
+                net = self.peak.pressure * (external - under)
+                pressed = [self.peak.pressure * (on_wall - internal.cpi) for on_wall in on_walls]
+                cases.append(
+                    SurfaceCase(
+                        name=f"{_name(wind, signs)}, {internal.name}",
+                        wind=wind,
+                        signs=signs,
+                        external=external,
+                        under=under,
+                        net=net,
+                        cpi=internal.cpi,
+                        walls=(pressed[0], pressed[1]),
+                        derivation=(
+                            *head,
+                            str(internal.source),
+                            *self._stretches(zones, by_zone, external, under, net),
+                            *self._on_walls(on_walls, internal, pressed),
+                        ),
+                    )
+                )
+        return cases
+
+    def _lines(self, zones: tuple[Zone, ...]) -> list[tuple[tuple[tuple[Part, Sign], ...], FloatArray]]:
+        """Return every way to take one signed line for each part of the roof: the signs, and cpe (n,) of the zones."""
+        parts: dict[Part, list[int]] = {}
+        for at, zone in enumerate(zones):
+            parts.setdefault(zone.part, []).append(at)
+        choices = []
+        for part, members in parts.items():
+            first = zones[members[0]]
+            names = tuple(zones[at].name for at in members)
+            lines = roof_coefficients(first.table, names, float(np.degrees(first.pitch)), self.area)
+            choices.append([(part, sign, members, values) for sign, values in lines.items()])
+        found = []
+        for chosen in product(*choices):
+            cpe = np.zeros(len(zones))
+            for _, _, members, values in chosen:
+                cpe[members] = values
+            found.append((tuple((part, sign) for part, sign, _, _ in chosen), cpe))
+        return found
+
+    def _under(self, walls: Walls) -> tuple[FloatArray, FloatArray]:
+        """Return (q,) the share of each stretch that lies above the inside, and (q,) the coefficient below the rest.
+
+        Below an overhang stands the pressure of the wall or gable that the wind finds there.
+        """
+        (wall_left, wall_right), length, (start, end) = self.shape.walls, self.shape.length, self.strip
+        width = end - start
+        inside = np.full(len(self.cuts) - 1, (min(end, length) - max(start, 0.0)) / width)
+        below = np.zeros(len(inside))
+        for at, (x0, x1) in enumerate(zip(self.cuts[:-1], self.cuts[1:], strict=True)):
+            face: Face = "left wall" if x1 <= wall_left else "right wall"
+            if x1 <= wall_left or x0 >= wall_right:
+                inside[at], below[at] = 0.0, self.on_wall(walls, face, self.strip)
+                continue
+            stretch = (float(x0 - wall_left), float(x1 - wall_left))
+            if start < 0.0:
+                below[at] += -start / width * self.on_wall(walls, "near gable", stretch)
+            if end > length:
+                below[at] += (end - length) / width * self.on_wall(walls, "far gable", stretch)
+        return inside, below
+
+    def _head(self, wind: WindFrom) -> tuple[str, ...]:
+        b, d = sides(self.shape, wind)
+        e = zone_measure(self.shape, wind)
+        zone = self.zones[wind][0]
+        return (
+            f"wind from the {wind}: side across it b {say.metres(b)}, along it d {say.metres(d)}, height h "
+            f"{say.metres(self.shape.height)}, e = min(b, 2h) = {say.metres(e)}: zones by e/10 {say.metres(e / 10)}, "
+            f"e/4 {say.metres(e / 4)}, e/2 {say.metres(e / 2)}",
+            f"strip of roof from {say.metres(self.strip[0])} to {say.metres(self.strip[1])} of the near gable; "
+            f"{CLAUSES[zone.table]}, from memory",
+        )
+
+    def _stretches(
+        self, zones: tuple[Zone, ...], by_zone: FloatArray, external: FloatArray, under: FloatArray, net: FloatArray
+    ) -> tuple[str, ...]:
+        lines = []
+        changes = [
+            at for at in range(len(net)) if at == 0 or net[at] != net[at - 1] or external[at] != external[at - 1]
+        ]
+        for at, after in pairwise([*changes, len(net)]):
+            x0, x1 = self.cuts[at], self.cuts[after]
+            parts: dict[str, float] = {}
+            for zone, share in zip(zones, by_zone[at], strict=True):
+                if share > 0.0:
+                    parts[zone.name] = parts.get(zone.name, 0.0) + float(share)
+            named = ", ".join(f"{name} {share:.1%}" if len(parts) > 1 else name for name, share in parts.items())
+            lines.append(
+                f"x {say.metres(float(x0))} to {say.metres(float(x1))}, zone {named}: cpe {external[at]:+.3f}, below "
+                f"{under[at]:+.3f}: w = qp*(cpe - below) = {say.kilopascals(float(net[at]))}"
+            )
+        return tuple(lines)
+
+    def _on_walls(self, on_walls: list[float], internal: Internal, pressed: list[float]) -> tuple[str, ...]:
+        return tuple(
+            f"{side} wall: cpe {cpe:+.3f}, {internal.name}: {say.kilopascals(pressure)}, + presses in"
+            for side, cpe, pressure in zip(("left", "right"), on_walls, pressed, strict=True)
+        )
+
+
+def _name(wind: WindFrom, signs: tuple[tuple[Part, Sign], ...]) -> str:
+    words = [sign for _, sign in signs]
+    if not across(wind) or len(words) == 1:
+        words = words[:1]
+    return f"wind from {wind}, {' and '.join(words)}"
+
+
+def _alike(case: SurfaceCase, other: SurfaceCase) -> bool:
+    return np.allclose(case.net, other.net, rtol=1e-9, atol=0.0) and np.allclose(case.walls, other.walls, rtol=1e-9)

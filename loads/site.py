@@ -1,0 +1,225 @@
+"""From the site to the loads of one truss: what the user left to the site is found by the loading standard.
+
+    actions_from_site(truss, site, "SANS 10160:2019", loads, spacing=5000.0, tributary=5000.0)
+
+returns a SiteActions: the loads, complete; the strip of roof that the truss carries; the wind cases on it; snow; and
+what a printed copy of the standard must confirm. `loads.cases.load_cases` turns them into load cases.
+"""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Iterator
+from dataclasses import dataclass, replace
+from functools import cached_property
+
+from spanwright.loads import derivation as say
+from spanwright.loads.coefficients import CLAUSES
+from spanwright.loads.inputs import LoadsInput, MostLeast
+from spanwright.loads.intermediate import Intermediate, to_verify
+from spanwright.loads.pressures import WindField
+from spanwright.loads.roof_shape import RoofShape, roof_shape
+from spanwright.loads.sans_10160 import Sans10160
+from spanwright.loads.site_inputs import POSITIONS, SiteInput
+from spanwright.loads.site_standard import Imposed, SiteStandard, SnowArrangement
+from spanwright.loads.tables import read_table
+from spanwright.loads.walls import wall_sides
+from spanwright.truss.errors import InputError, UnknownNameError
+from spanwright.truss.model import Truss
+from spanwright.truss.tolerances import TOLERANCES
+
+STANDARDS: dict[str, SiteStandard] = {standard.name: standard for standard in (Sans10160("2011"), Sans10160("2019"))}
+"""Loading standards by the name that the key `actions` gives; the same names as in `combinations.ACTIONS`."""
+
+
+@dataclass(frozen=True, eq=False)
+class SiteActions:
+    """What acts on one truss, by its place in the building.
+
+    standard : name with edition. position : mm from the near gable. strip : of roof it carries, z from and to, mm.
+    loads : the loads of the project, with what was left to the site filled in. imposed : None where stated.
+    wind : None where stated. snow : arrangements; empty where none or stated.
+    permanent : what the assumed permanent load is made of; empty where stated.
+    warnings, cautions : sentences; cautions name what a printed copy of the standard must confirm.
+    """
+
+    standard: str
+    site: SiteInput
+    shape: RoofShape
+    position: float
+    strip: tuple[float, float]
+    loads: LoadsInput
+    imposed: Imposed | None
+    wind: WindField | None
+    snow: tuple[SnowArrangement, ...]
+    permanent: tuple[Intermediate, ...]
+    warnings: tuple[str, ...]
+
+    @property
+    def tributary(self) -> float:
+        """Roof along the ridge that the truss carries, mm."""
+        return self.strip[1] - self.strip[0]
+
+    @cached_property
+    def steps(self) -> tuple[Intermediate, ...]:
+        """Every value on the way, in the order of calculation."""
+        return tuple(self._steps())
+
+    @property
+    def cautions(self) -> tuple[str, ...]:
+        """What a printed copy of the standard must confirm."""
+        return to_verify(self.standard, self.steps)
+
+    def _steps(self) -> Iterator[Intermediate]:
+        yield from self.permanent
+        if self.imposed is not None:
+            yield from self.imposed.steps
+        if self.wind is not None:
+            yield from self.wind.peak.steps
+            tables = dict.fromkeys(zone.table for zones in self.wind.zones.values() for zone in zones)
+            for table in (*(CLAUSES[table] for table in tables), "cpe table of walls"):
+                yield Intermediate("cpe", table, math.nan, "-", mark="from memory")
+            yield from self.wind.internal
+        for arrangement in self.snow:
+            yield from arrangement.steps
+
+
+def actions_from_site(
+    truss: Truss, site: SiteInput, actions: str, loads: LoadsInput, *, spacing: float, tributary: float
+) -> SiteActions:
+    """Find what the user left to the site.
+
+    actions : loading standard with edition. loads : as stated; the keys in `site.derive` are replaced.
+    spacing : mm from truss to truss. tributary : mm of roof carried where it is stated, else equal to the spacing, and
+    the truss's strip follows from its neighbours and the gables.
+
+    Raises InputError where the standard has no answer: see its methods, `roof_shape` and `truss_strip`.
+    """
+    if actions not in STANDARDS:
+        raise UnknownNameError.among(actions, list(STANDARDS), what="loading standard", key="actions")
+    standard = STANDARDS[actions]
+    shape = roof_shape(truss, site)
+    wall_sides(truss, shape)
+    position = truss_position(site, spacing)
+    strip = truss_strip(shape, position, spacing, tributary)
+    area = (strip[1] - strip[0]) * (shape.edges[1] - shape.edges[0])
+    imposed = standard.imposed(site, shape, area)
+    permanent = _permanent(shape)
+    settled = loads
+    if "roof_permanent" in site.derive:
+        settled = replace(settled, roof_permanent=_total(permanent))
+    if "roof_imposed" in site.derive:
+        settled = replace(settled, roof_imposed=imposed.pressure)
+    if "man_load" in site.derive:
+        settled = replace(settled, man_load=imposed.man)
+    wind = None
+    if "wind" in site.derive:
+        peak = standard.peak_pressure(site, shape.height)
+        wind = WindField(shape, site, peak, standard.internal_pair, strip)
+    return SiteActions(
+        standard=actions,
+        site=site,
+        shape=shape,
+        position=position,
+        strip=strip,
+        loads=settled,
+        imposed=imposed if {"roof_imposed", "man_load"} & site.derive else None,
+        wind=wind,
+        snow=standard.snow(site, shape) if "snow" in site.derive else (),
+        permanent=permanent if "roof_permanent" in site.derive else (),
+        warnings=tuple(_warnings(site, loads, settled, imposed, wind)),
+    )
+
+
+def truss_position(site: SiteInput, spacing: float) -> float:
+    """Return how far the truss stands from the near gable, mm.
+
+    "end" stands at the gable, "first interior" one spacing from it, "typical interior" two, or at mid-length of a
+    shorter building: of the trusses beyond the first interior one the most exposed.
+
+    Raises InputError (key "site.truss") for a place outside the building.
+    """
+    if isinstance(site.position, str):
+        bays = POSITIONS.index(site.position)
+        position = bays * spacing if bays < 2 else min(bays * spacing, site.length / 2)
+    else:
+        position = site.position
+    if not 0.0 <= position <= site.length:
+        raise InputError(
+            f"the truss stands {say.metres(position)} from the near gable, outside a building "
+            f"{say.metres(site.length)} long",
+            f"state a distance from 0 m to {say.metres(site.length)}, or one of {', '.join(POSITIONS)}",
+            "site.truss",
+        )
+    return position
+
+
+def truss_strip(shape: RoofShape, position: float, spacing: float, tributary: float) -> tuple[float, float]:
+    """Return from where to where along the ridge, mm, a truss carries the roof.
+
+    Half-way to its neighbours, which stand one spacing away or at the gable where that is nearer; at a gable to the
+    roof's edge. A tributary width that differs from the spacing is taken as stated, about the truss and within the roof.
+    """
+    start, end = shape.ends
+    if abs(tributary - spacing) > TOLERANCES.same_point:
+        low = min(max(position - tributary / 2, start), end - tributary)
+        if low < start:
+            length = say.metres(end - start)
+            raise InputError(
+                f"a tributary width of {say.metres(tributary)} is more than the roof is long, {length}",
+                "check tributary_width and the building's length",
+                "truss.tributary_width",
+            )
+        return low, low + tributary
+    from_end = shape.length - position
+    at_near, at_far = position <= TOLERANCES.same_point, from_end <= TOLERANCES.same_point
+    return (
+        start if at_near else position - min(spacing, position) / 2,
+        end if at_far else position + min(spacing, from_end) / 2,
+    )
+
+
+def _permanent(shape: RoofShape) -> tuple[Intermediate, ...]:
+    """Return the greatest and the least of a usual sheeted roof, item by item, kPa on the slope."""
+    steps = []
+    for which, symbol in (("most", "g,most"), ("least", "g,least")):
+        for row in read_table("roof_permanent.csv"):
+            on_slope = 1.0 if row["basis"] == "slope" else math.cos(shape.left)
+            value = float(row[which]) * on_slope
+            if value:
+                meaning = f"{row['item']}, {which}, on the slope, not stated"
+                steps.append(Intermediate(symbol, meaning, value, "kPa", mark="assumed"))
+    return tuple(steps)
+
+
+def _total(permanent: tuple[Intermediate, ...]) -> MostLeast:
+    def total(symbol: str) -> float:
+        return sum(step.value for step in permanent if step.symbol == symbol) / 1e3
+
+    return MostLeast(total("g,most"), total("g,least"))
+
+
+def _warnings(
+    site: SiteInput, loads: LoadsInput, settled: LoadsInput, imposed: Imposed, wind: WindField | None
+) -> Iterator[str]:
+    if "roof_permanent" in site.derive:
+        found = settled.roof_permanent
+        yield (
+            f"roof_permanent is not stated: a usual sheeted roof is assumed, {say.kilopascals(found.most)} at most and "
+            f"{say.kilopascals(found.least)} at least; state yours"
+        )
+    if "roof_imposed" not in site.derive and abs(loads.roof_imposed - imposed.pressure) > 0.0:
+        yield (
+            f"roof_imposed as stated, {say.kilopascals(loads.roof_imposed)}, is used; the site would give "
+            f"{say.kilopascals(imposed.pressure)}"
+        )
+    if "wind" not in site.derive:
+        yield "wind as stated in [loads] is used; none is found from the site"
+    if wind is not None:
+        yield from wind.peak.warnings
+        shut = [f"{one.area / 1e6:g} m2 in the {one.face}" for one in site.openings if one.shut_in_storms]
+        if shut:
+            yield (
+                f"openings taken as shut in storms: {', '.join(shut)}; standing open in a storm is an accidental case, "
+                "which is not covered"
+            )
