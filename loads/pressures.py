@@ -214,9 +214,8 @@ class WindField:
         self, zones: tuple[Zone, ...], by_zone: FloatArray, external: FloatArray, under: FloatArray, net: FloatArray
     ) -> tuple[str, ...]:
         lines = []
-        changes = [
-            at for at in range(len(net)) if at == 0 or net[at] != net[at - 1] or external[at] != external[at - 1]
-        ]
+        same = np.isclose(by_zone[1:], by_zone[:-1]).all(axis=1) & np.isclose(net[1:], net[:-1], atol=0.0)
+        changes = [0, *(np.flatnonzero(~same) + 1).tolist()]
         for at, after in pairwise([*changes, len(net)]):
             x0, x1 = self.cuts[at], self.cuts[after]
             parts: dict[str, float] = {}

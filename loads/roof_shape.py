@@ -71,7 +71,7 @@ def roof_shape(truss: Truss, site: SiteInput) -> RoofShape:
         edges=edges,
         walls=walls,
         middle=float(xy[turn, 0]) if two else (edges[0] + edges[1]) / 2,
-        ends=(-site.gable_overhang, site.length + site.gable_overhang),
+        ends=(0.0 - site.gable_overhang, site.length + site.gable_overhang),
         length=site.length,
         width=site.width or walls[1] - walls[0],
         height=site.eaves_height + float(xy[:, 1].max()) - lower,

@@ -158,7 +158,7 @@ def truss_strip(shape: RoofShape, position: float, spacing: float, tributary: fl
     """Return from where to where along the ridge, mm, a truss carries the roof.
 
     Half-way to its neighbours, which stand one spacing away or at the gable where that is nearer; at a gable to the
-    roof's edge. A tributary width that differs from the spacing is taken as stated, about the truss and within the roof.
+    roof's edge. A tributary width that differs from the spacing is taken as stated, about the truss, within the roof.
     """
     start, end = shape.ends
     if abs(tributary - spacing) > TOLERANCES.same_point:

@@ -39,7 +39,7 @@ def wall_sides(truss: Truss, shape: RoofShape) -> tuple[WallSide, WallSide]:
         above = abs(float(truss.xy[end, 0]) - at_wall) <= TOLERANCES.same_point and end != bearing
         if eaves < face:
             raise InputError(
-                f"the {name} wall is {say.metres(eaves)} high to the roof, but the truss is {say.metres(face)} deep there",
+                f"the {name} wall is {say.metres(eaves)} high to the roof, and the truss {say.metres(face)} deep there",
                 "state the height from the ground to the roof's surface above the lower wall",
                 "site.eaves_height",
             )
