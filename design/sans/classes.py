@@ -51,10 +51,9 @@ class AngleClass(Rule):
         "area effective in compression: legs cut to the limit width",
     )
     def effective_area(self) -> FloatArray:
-        over: FloatArray = np.maximum(self.ratio_connected - self.limit, 0.0) + np.maximum(
-            self.ratio_outstanding - self.limit, 0.0
-        )
-        return self.area - self.pieces * self.thickness**2 * over
+        connected: FloatArray = np.maximum(self.ratio_connected - self.limit, 0.0)
+        outstanding: FloatArray = np.maximum(self.ratio_outstanding - self.limit, 0.0)
+        return self.area - self.pieces * self.thickness**2 * (connected + outstanding)
 
 
 @dataclass(frozen=True, eq=False)
@@ -87,10 +86,9 @@ class RectangularClass(Rule):
         "area effective in compression: walls cut to the limit width",
     )
     def effective_area(self) -> FloatArray:
-        over: FloatArray = np.maximum(self.ratio_depth - self.limit, 0.0) + np.maximum(
-            self.ratio_width - self.limit, 0.0
-        )
-        return self.area - 2 * self.thickness**2 * over
+        depth: FloatArray = np.maximum(self.ratio_depth - self.limit, 0.0)
+        width: FloatArray = np.maximum(self.ratio_width - self.limit, 0.0)
+        return self.area - 2 * self.thickness**2 * (depth + width)
 
 
 @dataclass(frozen=True, eq=False)

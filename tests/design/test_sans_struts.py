@@ -205,3 +205,41 @@ def test_eccentricity_costs_resistance() -> None:
         ratios.append(check_named(checks, "buckling with eccentric ends").ratio[0, 0])
     concentric = check_named(checks, "buckling as a concentric strut").ratio[0, 0]
     assert concentric < ratios[0] < ratios[1] < ratios[2]
+
+
+def test_every_length_has_its_own_place() -> None:
+    """Doubling one length at a time moves only the checks that go with it."""
+    pair, angle, star = named("2L", "2L 80x80x8"), named("L", "L 60x60x6"), named("2L star", "2L 60x60x6")
+    moved = {
+        ("2L", "in_plane"): {"buckling in plane", "slenderness in plane", "spacing of packs"},
+        ("2L", "out_of_plane"): {
+            "buckling out of plane, flexure and torsion",
+            "slenderness out of plane",
+            "slenderness out of plane, equivalent",
+            "spacing of packs",
+        },
+        ("2L", "torsional"): {"buckling out of plane, flexure and torsion"},
+        ("L", "torsional"): {"buckling as a concentric strut"},
+        ("L", "minor"): {
+            "buckling as a concentric strut",
+            "buckling, connected by one leg",
+            "slenderness, minor axis",
+            "slenderness, connected by one leg",
+        },
+        ("L", "in_plane"): set(),
+        ("2L star", "torsional"): {"buckling, minor axis or torsion"},
+    }
+    short = {"in_plane": 700.0, "out_of_plane": 700.0, "torsional": 700.0, "minor": 700.0}
+    for (family, length), expected in moved.items():
+        section = {"2L": pair, "L": angle, "2L star": star}[family]
+        before = SANS_10162_1.checks(section, member_demand([[-20 * KN]], 700.0, **short))
+        after = SANS_10162_1.checks(section, member_demand([[-20 * KN]], 700.0, **{**short, length: 1400.0}))
+        differ = {b.name for b, a in zip(before, after, strict=True) if not np.array_equal(b.ratio, a.ratio)}
+        assert differ - {"spacing of packs"} == expected - {"spacing of packs"}, (family, length)
+
+
+def test_the_one_leg_rule_takes_the_longer_of_panel_and_effective_length() -> None:
+    angle = named("L", "L 60x60x6")
+    for panel, minor in ((1000.0, 1500.0), (1500.0, 1000.0)):
+        checks = SANS_10162_1.checks(angle, member_demand([[-KN]], panel=panel, minor=minor))
+        assert printed(check_named(checks, "buckling, connected by one leg"))["L"] == 1500.0
