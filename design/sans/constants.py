@@ -21,10 +21,17 @@ def number(table: str, name: str) -> float:
 
 
 def verify_notes() -> tuple[str, ...]:
-    """Return what to verify against a licensed copy: the values from memory by clause, then the open doubts."""
-    clauses: dict[str, None] = {}
-    for table, entries in _tables().items():
-        for name, entry in entries.items():
-            if table != "doubts" and entry["mark"] == "memory":
-                clauses[f"{entry['clause'] or name}"] = None
-    return (f"From memory, in part or whole: {', '.join(clauses)}.", *_tables()["doubts"]["texts"])
+    """Return what to verify against a licensed copy: the clauses with values from memory, then the open doubts."""
+    clauses = {
+        entry["clause"] or name
+        for table, entries in _tables().items()
+        if table != "doubts"
+        for name, entry in entries.items()
+        if entry["mark"] == "memory"
+    }
+    listed = sorted(clauses, key=lambda clause: (not clause[0].isdigit(), *_parts(clause)))
+    return (f"Values wholly or partly from memory, by clause: {', '.join(listed)}.", *_tables()["doubts"]["texts"])
+
+
+def _parts(clause: str) -> list[int]:
+    return [int(part) for part in clause.split(".") if part.isdigit()]
