@@ -14,6 +14,7 @@ from spanwright.truss.errors import InputError, UnheldEndError
 from spanwright.truss.lengths import BucklingLengths, buckling_lengths
 from spanwright.truss.model import Truss
 from spanwright.truss.restraint import THE_ANCHOR, restrain, without
+from spanwright.truss.runs import opposite
 
 
 def lengths(truss: Truss, **changes: object) -> BucklingLengths:
@@ -292,6 +293,13 @@ def test_in_plane_a_kink_or_a_bearing_ends_a_length() -> None:
     assert lengths(kink).in_plane[kink.bar("A-S")] == pytest.approx(math.hypot(4000.0, 200.0))
     bearing = hand_made("A 0 0, T 4 3, E 8 0, S 4 0", "top A T E, bottom A S E", "A S E")
     assert lengths(bearing).in_plane[bearing.bar("A-S")] == pytest.approx(4000.0)
+
+
+def test_straight_on_is_the_opposite_direction_within_a_milliradian() -> None:
+    assert opposite((1.0, 0.0), (-1.0, 0.0))
+    assert opposite((1.0, 0.0), (-math.cos(9e-4), math.sin(9e-4)))
+    assert not opposite((1.0, 0.0), (-math.cos(1.1e-3), math.sin(1.1e-3)))
+    assert not opposite((1.0, 0.0), (1.0, 0.0))
 
 
 # Factors, twist

@@ -238,6 +238,15 @@ def test_a_missing_line_takes_its_braces_along_and_a_missing_connection_does_not
     assert "connection of purlin line 3" not in parts(connection)
 
 
+def test_a_line_between_joints_can_lose_its_connection_too() -> None:
+    truss = raised()
+    held = restrain(truss, restraint(knee_braces=("B4",), ridge_pair=200.0, anchored=(1, 6, 10)))
+    assert by(truss, held, "top") == ["purlin line 1", "purlin line 6", "purlin line 10"]
+    left = without(held, "connection of purlin line 6")
+    assert by(truss, left, "top") == ["purlin line 1", "purlin line 10"]
+    assert by(truss, left, "bottom") == by(truss, held, "bottom")
+
+
 def test_a_missing_brace_tie_or_bearing_takes_one_point() -> None:
     truss = raised()
     held = restrain(truss, restraint(knee_braces=("B2",), bottom_ties=("B4",)))
