@@ -7,6 +7,7 @@ from typing import Literal
 
 from spanwright.design.standard import Ends, Packs
 from spanwright.loads.inputs import LoadsInput
+from spanwright.loads.site_inputs import SiteInput
 from spanwright.truss.inputs import FormInput, GivenInput, RestraintInput
 from spanwright.truss.model import Role
 
@@ -54,6 +55,7 @@ class Project:
 
     title, mark, quantity : for the schedule. standard, actions : names with edition as the project file spells them.
     truss : a form or joints and bars. supports : "left pinned, right sliding", "both pinned" or "as given".
+    site : the place and the building, from which loads are found that the user did not state; None: all are stated.
     spacing : mm truss to truss; tributary : mm of roof carried, equal to the spacing unless stated.
     groups : members (bar names) that get one section, beyond the grouping by role.
     title_block : ISO 7200 fields for documents (owner, number, revision, creator, approver...), all text.
@@ -71,6 +73,7 @@ class Project:
     restraint: RestraintInput
     loads: LoadsInput
     members: MembersInput
+    site: SiteInput | None = None
     ends: Ends = Ends()
     mark: str = "R1"
     quantity: int = 1

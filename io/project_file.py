@@ -65,6 +65,7 @@ def _project(file: ProjectFile, text: str, name: str) -> Project:
         tributary=file.truss.tributary,
         restraint=file.restraint.value(),
         loads=file.loads.value(),
+        site=None if file.site is None else file.site.value(file.loads.left_open),
         members=file.members.value(),
         ends=file.connections.value(),
         mark=file.mark,

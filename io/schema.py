@@ -6,13 +6,14 @@ from collections.abc import Iterator
 from types import UnionType
 from typing import Annotated, Any, Self, Union, get_args, get_origin
 
-from pydantic import model_validator
+from pydantic import ValidationInfo, WrapValidator, model_validator
 from pydantic.fields import FieldInfo
 
 from spanwright.io.schema_fields import Name, Names, Table, Text, counted, field, key, refused, subtable
-from spanwright.io.schema_loads import LoadsTable
+from spanwright.io.schema_loads import LoadsAtSiteTable, LoadsTable
 from spanwright.io.schema_members import ConnectionsTable, MembersTable
 from spanwright.io.schema_restraint import RestraintTable
+from spanwright.io.schema_site import SiteTable
 from spanwright.io.schema_truss import FormTruss, TrussTable
 from spanwright.io.units import shown
 from spanwright.truss.errors import UnknownNameError
@@ -37,6 +38,12 @@ class TitleBlockTable(Table):
     language: Text = key("language code", "")
 
 
+def _by_site(value: Any, _: Any, info: ValidationInfo) -> LoadsTable | LoadsAtSiteTable:
+    """Read [loads]; with a site, even one that is not understood, its keys may be left out."""
+    alone = info.data.get("site", value) is None
+    return (LoadsTable if alone else LoadsAtSiteTable).model_validate(value)
+
+
 class ProjectFile(Table):
     """A project file."""
 
@@ -50,7 +57,8 @@ class ProjectFile(Table):
     )
     truss: TrussTable = subtable(FormTruss)
     restraint: RestraintTable = subtable(RestraintTable)
-    loads: LoadsTable = subtable(LoadsTable)
+    site: SiteTable | None = key("the place and the building: loads that [loads] leaves out are found from it", None)
+    loads: Annotated[LoadsTable | LoadsAtSiteTable, WrapValidator(_by_site)] = subtable(LoadsTable)
     members: MembersTable = subtable(MembersTable)
     connections: ConnectionsTable = subtable(ConnectionsTable)
     groups: dict[Name, Names] = key("members that get a section of their own", {}, otherwise="members group by role")

@@ -2,13 +2,14 @@
 
 from __future__ import annotations
 
-from typing import Annotated, Any, Literal, Self
+from typing import Annotated, Any, ClassVar, Literal, Self
 
 from pydantic import WrapValidator, model_validator
 
 from spanwright.io.schema_fields import Answer, Name, Table, field, key, one_of, ranged, refused
 from spanwright.io.units import FORCE, PRESSURE, shown
 from spanwright.loads.inputs import JointLoad, LoadsInput, MostLeast, WindInput
+from spanwright.loads.site_inputs import Derivable
 from spanwright.truss.errors import InputError
 
 CaseKind = Literal["permanent", "imposed", "wind"]
@@ -83,15 +84,36 @@ def _none_or_cases(value: Any, cases: Any) -> Any:
     return cases(value)
 
 
-class LoadsTable(Table):
-    """The table [loads]."""
+class _AnyLoads(Table):
+    ceiling_permanent: Permanent = key("on plan, at the bottom chord", "0 kPa")
+    at_joint: list[JointLoadTable] = key("loads at joints", [])
+
+    def _loads(
+        self,
+        roof_permanent: PermanentTable | None,
+        roof_imposed: float | None,
+        man_load: float | None,
+        wind: list[WindTable] | None,
+    ) -> LoadsInput:
+        """Return the loads as the loads room takes them; what is None is nothing here and is found from the site."""
+        return LoadsInput(
+            roof_permanent=MostLeast(0.0, 0.0) if roof_permanent is None else roof_permanent.value(),
+            roof_imposed=roof_imposed or 0.0,
+            wind=tuple(WindInput(w.name, w.left, w.right, w.eaves_left, w.eaves_right, w.mirrored) for w in wind or ()),
+            ceiling_permanent=self.ceiling_permanent.value(),
+            man_load=man_load or 0.0,
+            at_joint=tuple(JointLoad(p.case, p.kind, p.joint, p.down, p.right) for p in self.at_joint),
+        )
+
+
+class LoadsTable(_AnyLoads):
+    """The table [loads] of a project without a site."""
 
     roof_permanent: Permanent = key(
         "covering, purlins and services, on the slope; the truss's own mass is added. Write the greatest and the "
         'least credible value, { most = "0.25 kPa", least = "0.18 kPa" }, as the least decides under uplift; '
         "one value stands for both"
     )
-    ceiling_permanent: Permanent = key("on plan, at the bottom chord", "0 kPa")
     roof_imposed: SurfaceLoad = key(
         'the imposed load of the roof, on plan, by the loading standard for the roof\'s use, such as "0.30 kPa"'
     )
@@ -100,15 +122,32 @@ class LoadsTable(Table):
         "net wind pressures normal to the slopes; uplift decides light roofs. "
         'Write tables [[loads.wind]], or wind = "none" where no wind can act'
     )
-    at_joint: list[JointLoadTable] = key("loads at joints", [])
+
+    left_open: ClassVar[frozenset[Derivable]] = frozenset()
 
     def value(self) -> LoadsInput:
         """Return the loads as the loads room takes them."""
-        return LoadsInput(
-            roof_permanent=self.roof_permanent.value(),
-            roof_imposed=self.roof_imposed,
-            wind=tuple(WindInput(w.name, w.left, w.right, w.eaves_left, w.eaves_right, w.mirrored) for w in self.wind),
-            ceiling_permanent=self.ceiling_permanent.value(),
-            man_load=self.man_load,
-            at_joint=tuple(JointLoad(p.case, p.kind, p.joint, p.down, p.right) for p in self.at_joint),
-        )
+        return self._loads(self.roof_permanent, self.roof_imposed, self.man_load, self.wind)
+
+
+class LoadsAtSiteTable(_AnyLoads):
+    """The table [loads] of a project with a site, which finds what is left out here."""
+
+    roof_permanent: Permanent | None = key(
+        "covering, purlins and services, on the slope", None, otherwise="a usual sheeted roof is assumed"
+    )
+    roof_imposed: SurfaceLoad | None = key("imposed on plan", None, otherwise="by the loading standard")
+    man_load: ManForce | None = key("a person and tools, at one place", None, otherwise="by the loading standard")
+    wind: Annotated[list[WindTable], WrapValidator(_none_or_cases)] | None = key(
+        "net wind pressures normal to the slopes", None, otherwise="by the loading standard, from the site"
+    )
+
+    @property
+    def left_open(self) -> frozenset[Derivable]:
+        """The keys that are left to the site."""
+        keys: tuple[Derivable, ...] = ("roof_permanent", "roof_imposed", "man_load", "wind")
+        return frozenset(key for key in keys if getattr(self, key) is None)
+
+    def value(self) -> LoadsInput:
+        """Return the loads as the loads room takes them, nothing standing for what is left to the site."""
+        return self._loads(self.roof_permanent, self.roof_imposed, self.man_load, self.wind)

@@ -1,4 +1,4 @@
-"""Text with its unit, to N, mm, MPa and rad and back. Only this module knows units.
+"""Text with its unit, to N, mm, MPa, rad and m/s and back. Only this module knows units.
 
 The factors are exact: 1 in = 25.4 mm, 1 ft = 12 in, 1 lbf = 0.45359237 kg x 9.80665 m/s2 (international foot and
 avoirdupois pound of 1959; standard gravity, CGPM 1901). A bare number is refused: nobody can tell feet from metres.
@@ -24,7 +24,7 @@ _MILLION = Decimal(1_000_000)
 
 @dataclass(frozen=True)
 class Kind:
-    """A kind of quantity: its name and its units, each `times / over` of the inside unit (N, mm, MPa, rad, 1).
+    """A kind of quantity: its name and its units, each `times / over` of the inside unit.
 
     Decimal arithmetic keeps the text exact until the end: "0.18 kPa" is the double nearest to 0.00018 MPa.
     """
@@ -79,7 +79,21 @@ FORCE = Kind(
 )
 ANGLE = Kind("angle", "an", {"deg": (Decimal(math.pi), Decimal(180)), "rad": (_ONE, _ONE)})
 SHARE = Kind("percentage", "a", {"%": (_ONE, Decimal(100))})
-_KINDS = (LENGTH, PRESSURE, FORCE, ANGLE, SHARE)
+SPEED = Kind(
+    "speed",
+    "a",
+    {
+        "m/s": (_ONE, _ONE),
+        "km/h": (Decimal(10), Decimal(36)),
+        "mph": (5280 * _FOOT, Decimal(3600) * _THOUSAND),
+    },
+)
+AREA = Kind(
+    "area",
+    "an",
+    {"m2": (_MILLION, _ONE), "mm2": (_ONE, _ONE), "ft2": (_FOOT**2, _ONE)},
+)
+_KINDS = (LENGTH, PRESSURE, FORCE, ANGLE, SHARE, SPEED, AREA)
 
 _NUMBER = r"[+-]?(?:[0-9]+\.?[0-9]*|\.[0-9]+)(?:[eE][+-]?[0-9]+)?"
 _QUANTITY = re.compile(rf"({_NUMBER})\s*(.*)", re.DOTALL)
