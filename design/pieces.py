@@ -6,39 +6,40 @@ Lengths are nominal until joints are designed: no gussets, cleats, bearings, spl
 from __future__ import annotations
 
 import math
+from collections.abc import Iterator
 from dataclasses import dataclass, replace
 
-from spanwright.design.catalogue import DENSITY
-from spanwright.design.cutting import TUBES, Cut, cuts
-from spanwright.design.demand import of_bars
+from spanwright.design.cutting import Cut, cuts
+from spanwright.design.hands import SQUARE_WORDS, Ends, ends_and_hand
+from spanwright.design.lying import TUBES, lying
+from spanwright.design.packs import PACK_WIDTH, Pack, packs
 from spanwright.design.setting import Setting
 from spanwright.design.sizing import Choice
 from spanwright.design.standard import Demand
 from spanwright.design.steels import steel
-from spanwright.truss.model import Role
+from spanwright.truss.model import Truss
 from spanwright.truss.tolerances import TOLERANCES
 
-PREFIX: dict[Role, str] = {"top chord": "TC", "bottom chord": "BC", "post": "P", "diagonal": "D"}
-PACK_WIDTH = 60.0
-"""mm along the member (common practice: 50 to 75)."""
-PACK_PROJECTION = 25.0
-"""mm by which a pack is longer than the connected leg, for the welds on both edges (common practice: 20 to 30)."""
 STEEPEST_MITRE = 45.0
 """Degrees from square that any band saw reaches (common practice: 45 to 60)."""
 
-
-Shape = tuple[str, str, str, float, tuple[str, str], str]
-"""What makes pieces identical: role, section, grade, cut length, ends, hand."""
+Shape = tuple[str, str, str, float, Ends]
+"""What makes pieces identical but for their hand: role, section, grade, cut length, ends."""
 
 
 @dataclass(frozen=True)
 class Piece:
     """Identical pieces under one mark.
 
-    mark : "R1-TC1". description : "top chord". section : of one piece, ISO 5261. grade : of its steel.
-    hand : "", "L" or "R" (opposite hands). per_truss, quantity : in one truss and in all of them.
-    cut_length : mm, tip to tip. mass : kg each. paint_area : m2 each.
-    ends : preparation of the two ends, "square", "mitre 12.0 deg" or "profiled".
+    mark : "R1-TC1", after the first bar it makes up. description : "top chord". section : of one piece, ISO 5261.
+    grade : of its steel.
+    hand : "" where both hands are the same piece; else "L" or "R": seen from the inside of the angle with its
+        outstanding leg on top, the first of `ends` is at the left or at the right.
+    per_truss, quantity : in one truss and in all of them.
+    cut_length : mm, tip to tip along the piece; of webs rounded down. mass : kg each, without deduction for mitres.
+    paint_area : m2 each, the whole outline, contact faces of pairs included, ends not.
+    ends : preparation of the two ends: "square", "mitre 12.0 deg, long at heel" (degrees from square),
+        "profile to CHS 139.7x5 at 48.0 deg" (between the axes).
     bars : names of the bars it makes up in one truss. remarks : sentences.
     """
 
@@ -52,7 +53,7 @@ class Piece:
     cut_length: float
     mass: float
     paint_area: float
-    ends: tuple[str, str]
+    ends: Ends
     bars: tuple[str, ...]
     remarks: tuple[str, ...] = ()
 
@@ -61,131 +62,137 @@ class Piece:
         """Mass of all of them, kg."""
         return self.mass * self.quantity
 
-
-@dataclass(frozen=True)
-class Assembly:
-    """One truss as it is lifted: overall length and height in mm, mass of its pieces in kg, number of trusses."""
-
-    length: float
-    height: float
-    mass: float
-    quantity: int
+    @property
+    def total_paint_area(self) -> float:
+        """Paint area of all of them, m2."""
+        return self.paint_area * self.quantity
 
 
 def pieces_of(setting: Setting, wanted: Demand, choices: tuple[Choice, ...]) -> tuple[Piece, ...]:
-    """Return the pieces of a passing design, chords, posts, diagonals, then packs; nothing where a group fails."""
+    """Return the pieces of a passing design, chords, posts, diagonals, then packs; nothing where a group fails.
+
+    Raises InputError where a web has no room between the members at its ends.
+    """
     if not all(choice.passes for choice in choices):
         return ()
     raw = [piece for cut in cuts(setting, choices) for piece in _pieces(setting, cut)]
-    return (*_marked(setting, raw), *_packs(setting, wanted, choices))
+    plates = [_plate(setting, number, pack) for number, pack in enumerate(packs(setting, wanted, choices), 1)]
+    return (*_marked(setting, raw), *plates)
 
 
-def assembly(setting: Setting, pieces: tuple[Piece, ...]) -> Assembly:
-    """Return overall size and lift mass of one truss: setting-out lines plus the depth of the outermost sections."""
-    truss = setting.truss
-    slope_overhang = sum(truss.top.overhang)
-    end = truss.directions[truss.top.bars[0]]
-    length = truss.xy[:, 0].max() - truss.xy[:, 0].min() + slope_overhang * abs(float(end[0]))
-    height = truss.xy[:, 1].max() - truss.xy[:, 1].min()
-    return Assembly(float(length), float(height), sum(p.mass * p.per_truss for p in pieces), setting.project.quantity)
-
-
-def _pieces(setting: Setting, cut: Cut) -> list[Piece]:
-    section, members = cut.choice.section, setting.project.members
-    web = "chord" not in cut.choice.group.role
+def _pieces(setting: Setting, cut: Cut) -> Iterator[Piece]:
+    """Make the pieces that lie side by side in one run, as yet without marks."""
+    section, role = cut.choice.section, cut.choice.group.role
     step = TOLERANCES.same_length
-    length = step * (math.floor(cut.length / step) if web else round(cut.length / step))
-    remarks = []
-    if length > members.stock_length:
-        remarks.append(f"longer than the stock length of {members.stock_length / 1e3:g} m: a splice is needed")
-    if max(cut.mitres) > STEEPEST_MITRE:
-        remarks.append(f"mitre steeper than {STEEPEST_MITRE:g} deg from square: check the saw")
-    names = setting.truss.bar_names
-    piece = Piece(
-        mark="",
-        description=cut.choice.group.role,
-        section=section.piece_names[0],
-        grade=steel(members.steel, hollow=section.family in TUBES).name,
-        hand="",
-        per_truss=section.pieces,
-        quantity=0,
-        cut_length=float(length),
-        mass=float(section.mass[0]) / section.pieces * length / 1e3,
-        paint_area=float(section.surface[0]) / section.pieces * length / 1e3,
-        ends=_ends(cut),
-        bars=tuple(names[bar] for bar in cut.bars),
-        remarks=tuple(remarks),
-    )
-    if section.pieces == 2 and cut.mitres[0] != cut.mitres[1]:
-        return [replace(piece, hand="L", per_truss=1), replace(piece, hand="R", per_truss=1)]
-    return [piece]
+    for lies in lying(section, role):
+        length = cut.length(lies) / step
+        whole = round(length) if "chord" in role else math.floor(length + TOLERANCES.length_dust / step)
+        ends, hand = ends_and_hand(cut, lies)
+        yield Piece(
+            mark="",
+            description=role,
+            section=section.piece_names[0],
+            grade=steel(setting.project.members.steel, hollow=section.family in TUBES).name,
+            hand=hand,
+            per_truss=1,
+            quantity=0,
+            cut_length=step * whole,
+            mass=float(section.mass[0]) / section.pieces * step * whole / 1e3,
+            paint_area=float(section.surface[0]) / section.pieces * step * whole / 1e3,
+            ends=ends,
+            bars=tuple(setting.truss.bar_names[bar] for bar in cut.bars),
+            remarks=_remarks(setting, cut, step * whole),
+        )
 
 
-def _ends(cut: Cut) -> tuple[str, str]:
-    if cut.profiled:
-        return "profiled", "profiled"
-    named = sorted("square" if angle == 0.0 else f"mitre {angle:.1f} deg" for angle in cut.mitres)
-    return named[0], named[1]
+def _remarks(setting: Setting, cut: Cut, length: float) -> tuple[str, ...]:
+    """Say what the workshop should know of a piece."""
+    found = []
+    stock = setting.project.members.stock_length
+    if length > stock:
+        splices = math.ceil(length / stock) - 1
+        wanted = "1 splice" if splices == 1 else f"{splices} splices"
+        found.append(f"longer than the stock length of {stock / 1e3:g} m: {wanted} at least")
+    mitres = [math.degrees(math.atan(abs(end.slant))) for end in cut.ends if end.kind == "mitre"]
+    if mitres and max(mitres) > STEEPEST_MITRE:
+        found.append(f"a mitre of more than {STEEPEST_MITRE:g} deg from square: check that the saw reaches it")
+    if _ends_on_other_chord(setting.truss, cut):
+        found.append("meets the other chord at the heel: nominal to the joint, trim to suit the heel detail")
+    weld = _end_weld(setting, cut)
+    if length < 2.0 * weld:
+        found.append(f"too short for the end welds assumed, {weld:.0f} mm along each edge at each end")
+    return tuple(found)
+
+
+def _end_weld(setting: Setting, cut: Cut) -> float:
+    """Return mm of weld along each edge that the checks assume at an end of a web; 0 where they assume none."""
+    choice, ends = cut.choice, setting.project.ends
+    if "chord" in choice.group.role or choice.section.family in TUBES or ends.kind != "welded":
+        return 0.0
+    return ends.weld_length * float(choice.section.leg_connected[0])
+
+
+def _ends_on_other_chord(truss: Truss, cut: Cut) -> bool:
+    """Whether a chord piece without overhang ends at a joint where the other chord ends too."""
+    ends = {truss.top.joints[0], truss.top.joints[-1]} & {truss.bottom.joints[0], truss.bottom.joints[-1]}
+    for chord, bar, overhang in (
+        (truss.top, truss.top.bars[0], truss.top.overhang[0]),
+        (truss.top, truss.top.bars[-1], truss.top.overhang[1]),
+        (truss.bottom, truss.bottom.bars[0], 0.0),
+        (truss.bottom, truss.bottom.bars[-1], 0.0),
+    ):
+        joint = chord.joints[0] if bar == chord.bars[0] else chord.joints[-1]
+        if bar in cut.bars and joint in ends and overhang == 0.0:
+            return True
+    return False
 
 
 def _marked(setting: Setting, raw: list[Piece]) -> list[Piece]:
-    """Give one mark to identical pieces and add up their numbers."""
-    merged: dict[Shape, Piece] = {}
+    """Give one mark to identical pieces and add up their numbers; opposite hands share it but for the last letter."""
+    merged: dict[tuple[Shape, str], Piece] = {}
     for piece in raw:
-        key: Shape = (piece.description, piece.section, piece.grade, piece.cut_length, piece.ends, piece.hand)
+        key = (_shape(piece), piece.hand)
         if key in merged:
             known = merged[key]
-            piece = replace(known, per_truss=known.per_truss + piece.per_truss, bars=(*known.bars, *piece.bars))
+            bars, remarks = dict.fromkeys((*known.bars, *piece.bars)), dict.fromkeys((*known.remarks, *piece.remarks))
+            piece = replace(known, per_truss=known.per_truss + 1, bars=tuple(bars), remarks=tuple(remarks))
         merged[key] = piece
-    counters: dict[str, int] = {}
-    numbers: dict[Shape, int] = {}
+    marks: dict[Shape, str] = {}
     marked = []
-    for key, piece in merged.items():
-        prefix = PREFIX[piece.description]  # type: ignore[index]  # the description of a member is its role
-        shape = (*key[:-1], "")  # both hands share a number
-        if shape not in numbers:
-            counters[prefix] = counters.get(prefix, 0) + 1
-            numbers[shape] = counters[prefix]
-        mark = f"{setting.project.mark}-{prefix}{numbers[shape]}{piece.hand}"
+    for (shape, hand), piece in merged.items():
+        base = marks.setdefault(shape, _free_name(piece.bars[0], set(marks.values())))
+        mark = f"{setting.project.mark}-{base}{hand}"
         marked.append(replace(piece, mark=mark, quantity=piece.per_truss * setting.project.quantity))
     return marked
 
 
-def _packs(setting: Setting, wanted: Demand, choices: tuple[Choice, ...]) -> list[Piece]:
-    """Return the packing plates between the angles of pairs, one mark a size."""
-    sizes: dict[tuple[float, float], tuple[int, list[str]]] = {}
-    for choice in choices:
-        section = choice.section
-        if section.pieces < 2:
-            continue
-        counts = setting.standard.packs_per_panel(section, of_bars(wanted, choice.group.bars))[0]
-        size = (section.gap, float(section.leg_connected[0]) + PACK_PROJECTION)
-        count, names = sizes.get(size, (0, []))
-        names += [setting.truss.bar_names[bar] for bar in choice.group.bars]
-        sizes[size] = (count + int(counts.sum()), names)
-    return [
-        _pack(setting, number, thickness, length, count, tuple(names))
-        for number, ((thickness, length), (count, names)) in enumerate(sizes.items(), 1)
-        if count
-    ]
+def _shape(piece: Piece) -> Shape:
+    return piece.description, piece.section, piece.grade, piece.cut_length, piece.ends
 
 
-def _pack(setting: Setting, number: int, thickness: float, length: float, count: int, bars: tuple[str, ...]) -> Piece:
-    volume = PACK_WIDTH * thickness * length
-    area = 2.0 * (PACK_WIDTH * length + (PACK_WIDTH + length) * thickness)
-    fixing = "welded" if setting.project.members.packs.factor < 1.0 else "snug-tight bolted or welded"
+def _free_name(name: str, taken: set[str]) -> str:
+    """Return the name, or where another shape of the same run has it, the name with a number behind."""
+    number = 2
+    free = name
+    while free in taken:
+        free = f"{name}.{number}"
+        number += 1
+    return free
+
+
+def _plate(setting: Setting, number: int, pack: Pack) -> Piece:
     return Piece(
         mark=f"{setting.project.mark}-PK{number}",
         description="packing plate",
-        section=f"FL {PACK_WIDTH:g}x{thickness:g}",
+        section=f"FL {PACK_WIDTH:g}x{pack.thickness:g}",
         grade=setting.project.members.steel,
         hand="",
-        per_truss=count,
-        quantity=count * setting.project.quantity,
-        cut_length=length,
-        mass=volume * DENSITY * 1e-9,
-        paint_area=area * 1e-6,
-        ends=("square", "square"),
-        bars=bars,
-        remarks=(f"between the angles, equally spaced in each panel, {fixing}",),
+        per_truss=pack.count,
+        quantity=pack.count * setting.project.quantity,
+        cut_length=pack.length,
+        mass=pack.mass,
+        paint_area=pack.surface,
+        ends=(SQUARE_WORDS, SQUARE_WORDS),
+        bars=tuple(setting.truss.bar_names[bar] for bar in pack.bars),
+        remarks=pack.remarks,
     )

@@ -40,6 +40,10 @@ class Tolerances:
     same_length: float = 1.0
     """mm: pieces whose lengths round to the same multiple of this are identical (saw accuracy, EN 1090-2)."""
 
+    length_dust: float = 1e-3
+    """mm: a length this little short of a full step counts as the full step before it is rounded down, so that what
+    doubles leave does not give two marks to the two halves of a symmetrical truss."""
+
     same_point: float = 0.5
     """mm: joints given one by one that are nearer than this are one joint, which is refused."""
 

@@ -1,0 +1,92 @@
+"""What stands on every schedule, and the sheet of notes behind them."""
+
+from __future__ import annotations
+
+from spanwright import __version__
+from spanwright.design.cautions import CAUTIONS
+from spanwright.design.dispatch import assembly
+from spanwright.design.nesting import END_TRIM, KERF
+from spanwright.design.result import Design
+from spanwright.design.standard import Ends
+from spanwright.io.files import input_hash
+from spanwright.io.schedule.table import Column, Table, table
+from spanwright.io.text import kilograms, metres
+
+ESTIMATE = "ESTIMATE: no gussets, cleats, bearings, splices, bolts or welds; lengths nominal until joints are designed"
+
+COLUMNS = (Column("Note", 22), Column("Text", 125))
+
+READING = (
+    ("Marks", "One mark is one shape; the number is that of the first bar it makes up. L and R are opposite hands."),
+    (
+        "Hands",
+        "Look at the inside of the angle, its outstanding leg on top: End 1 of an L is at the left, of an R at the "
+        "right. A mark without a letter has no hand.",
+    ),
+    (
+        "Cut lengths",
+        "Tip to tip along the piece. Chords run to the joint, with the overhang, mitred where the chord kinks. Webs "
+        "end square, their nearest corner one setback along the web from the edge of the chord, whichever way the "
+        "angle is turned; they are rounded down to 1 mm. Tubes that meet tubes are cut to their face.",
+    ),
+    ("Ends", "Degrees of a mitre are from square; of a profile, between the two axes."),
+    ("Mass", "Mass per metre times cut length, nothing taken off for mitres and holes."),
+    (
+        "Paint area",
+        "Whole outline of each piece times its cut length, contact faces of pairs included; faces and edges of plates.",
+    ),
+    ("Forces", "Tension +, compression -; the greatest over the strength combinations. Utilisation is rounded up."),
+)
+
+
+def notes_table(design: Design) -> Table:
+    """Return everything that belongs to the lists in words, one row a note."""
+    rows = [
+        *_truss(design),
+        *READING,
+        ("Cutting", _cutting(design)),
+        ("Ends required", _ends(design.setting.project.ends)),
+    ]
+    rows += [("Warning", warning) for warning in design.warnings]
+    rows += [("Caution", caution) for caution in (*CAUTIONS, *design.setting.standard.verify_notes())]
+    rows += [("Default used", f"{key} = {value}") for key, value in design.setting.project.defaults_used]
+    return table("Notes", "Notes", COLUMNS, rows)
+
+
+def _truss(design: Design) -> list[tuple[str, str]]:
+    setting = design.setting
+    project, truss = setting.project, setting.truss
+    whole = assembly(setting, design.choices, design.pieces)
+    form = f"{truss.form}, diagonals {truss.lean}" if truss.lean else truss.form
+    return [
+        ("Truss", f"{project.title}; mark {project.mark}, {project.quantity} off; {form}, span {metres(truss.span)}"),
+        ("Standards", f"{setting.standard.name}; actions {project.actions}"),
+        ("Overall size", f"{metres(whole.length)} long, {metres(whole.height)} high, {whole.width:.0f} mm wide"),
+        (
+            "Mass of one truss",
+            f"{kilograms(whole.mass)} of pieces; to lift, with {project.members.fixings:.1%} for gussets and fixings: "
+            f"{kilograms(whole.lift_mass)}",
+        ),
+        *(("Transport", remark) for remark in whole.remarks),
+        ("Status", ESTIMATE),
+        ("Made from", f"{project.source_name}, input {input_hash(project.source)}, by Spanwright {__version__}"),
+    ]
+
+
+def _cutting(design: Design) -> str:
+    stock = design.setting.project.members.stock_length
+    return (
+        f"Stock bars of {metres(stock)}, {KERF:g} mm lost at each cut, {END_TRIM:g} mm trimmed off each bar (from "
+        "memory); longest piece first, then the longest that fits. Pieces longer than a bar are not counted: splice "
+        "them first."
+    )
+
+
+def _ends(ends: Ends) -> str:
+    begin = "The checks of tension assume, and so require: "
+    if ends.kind == "welded":
+        return f"{begin}end welds at least {ends.weld_length:g} times the connected leg long, along each edge of it."
+    holes = "punched" if ends.punched else "drilled"
+    return (
+        f"{begin}{ends.bolts} bolts M{ends.bolt_diameter:g} {ends.bolt_grade} in one line at each end, holes {holes}."
+    )
