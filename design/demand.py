@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable
+from dataclasses import fields, replace
 from typing import Any
 
 import numpy as np
@@ -41,6 +42,7 @@ def demand(truss: Truss, project: Project, lengths: BucklingLengths, stations: S
         one_leg=web & project.members.one_side,
         ends=project.ends,
         packs=project.members.packs,
+        gusset=project.members.gap,
     )
 
 
@@ -97,7 +99,7 @@ def _by_distance(truss: Truss, webs: IntArray, bearing: int) -> IntArray:
 
 def of_bars(whole: Demand, bars: IntArray) -> Demand:
     """Return the demand on some of the bars."""
-    return _with_arrays(whole, tuple(whole.bars[bar] for bar in bars), lambda name: getattr(whole, name)[bars])
+    return _over_bars(whole, tuple(whole.bars[bar] for bar in bars), lambda name: getattr(whole, name)[bars])
 
 
 def side_by_side(variants: list[Demand]) -> Demand:
@@ -106,25 +108,11 @@ def side_by_side(variants: list[Demand]) -> Demand:
     The end connections and packs of the first go for all.
     """
     names = tuple(bar for variant in variants for bar in variant.bars)
-    return _with_arrays(variants[0], names, lambda name: np.concatenate([getattr(v, name) for v in variants]))
+    return _over_bars(variants[0], names, lambda name: np.concatenate([getattr(v, name) for v in variants]))
 
 
-def _with_arrays(whole: Demand, bars: tuple[str, ...], array: Callable[[str], Any]) -> Demand:
-    return Demand(
-        bars=bars,
-        axial=array("axial"),
-        sideways=array("sideways"),
-        panel=array("panel"),
-        in_plane=array("in_plane"),
-        out_of_plane=array("out_of_plane"),
-        torsional=array("torsional"),
-        minor=array("minor"),
-        sag=array("sag"),
-        hog=array("hog"),
-        end_moments=array("end_moments"),
-        point_loads=array("point_loads"),
-        first_web=array("first_web"),
-        one_leg=array("one_leg"),
-        ends=whole.ends,
-        packs=whole.packs,
-    )
+def _over_bars(whole: Demand, bars: tuple[str, ...], array: Callable[[str], Any]) -> Demand:
+    """Return a demand with other bars, each array over bars made anew, the rest kept."""
+    arrays = [entry.name for entry in fields(whole) if isinstance(getattr(whole, entry.name), np.ndarray)]
+    changes: dict[str, Any] = {name: array(name) for name in arrays}
+    return replace(whole, bars=bars, **changes)

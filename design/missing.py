@@ -69,7 +69,7 @@ def _ratios(setting: Setting, wanted: Demand, choice: Choice, variants: list[Dem
     if changed:
         together = side_by_side([of_bars(variants[at], bars) for at in changed])
         found = worst_ratio(setting.standard.checks(choice.section, together))[0]
-        ratios[np.ix_(changed, bars)] = found.reshape(len(changed), len(bars))
+        ratios[np.array(changed)[:, None], bars] = found.reshape(len(changed), len(bars))
     return ratios
 
 

@@ -17,7 +17,6 @@ from spanwright.design.setting import Setting
 from spanwright.design.sizing import Choice, Governing, governing
 from spanwright.design.standard import Demand
 from spanwright.truss.arrays import BoolArray, FloatArray
-from spanwright.truss.model import ChordName
 from spanwright.truss.restraint import Held, RestraintForce
 
 
@@ -42,7 +41,7 @@ class Design:
     next_lighter: tuple[NextLighter, ...]
     serviceability: Serviceability
     missing: tuple[Missing, ...]
-    held: dict[ChordName, tuple[Held, ...]]
+    held: dict[str, tuple[Held, ...]]
     restraint_forces: tuple[RestraintForce, ...]
     anchor_force: float
     bearing_forces: tuple[BearingForce, ...]

@@ -1,0 +1,18 @@
+"""The demo projects, read once."""
+
+from __future__ import annotations
+
+from functools import cache
+from pathlib import Path
+
+from spanwright.design.project import Project
+from spanwright.io.project_file import read_project
+
+FOLDER = Path(__file__).parents[1] / "demo_projects"
+DEMOS = ("howe_workshop", "pratt_store", "fink_barn")
+
+
+@cache
+def demo(name: str) -> Project:
+    """Return the project of a demo folder."""
+    return read_project(FOLDER / name / "roof.toml")
