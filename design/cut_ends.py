@@ -65,8 +65,10 @@ def mitre(before: FloatArray, after: FloatArray, along: FloatArray) -> End:
     """Return the end of a chord piece at a kink: cut in the plane that halves the angle.
 
     before, after : (2,) unit directions of the chord on either side, left to right. along : the piece's own.
+    Square where the chord runs straight on.
     """
-    return _mitre(after - before, along)
+    turn = float(before[0] * after[1] - before[1] * after[0])
+    return _mitre(after - before, along) if abs(turn) > TOLERANCES.straight else SQUARE
 
 
 def web_end(web: Candidates, role: Role, along: FloatArray, past: list[Passing], gap: float) -> TakeOff:
@@ -120,7 +122,7 @@ def _between(first: FloatArray, second: FloatArray) -> tuple[float, float]:
 
 
 def _mitre(cut: FloatArray, along: FloatArray) -> End:
-    """Return the end of a piece cut along the line `cut`; square where the cut is so to the accuracy of a kink."""
+    """Return the end of a piece cut along the line `cut`, which crosses it; square where it does so squarely."""
     across = np.array([-along[1], along[0]])
     slant = float(cut @ along) / float(cut @ across)
     return End("mitre", slant) if abs(slant) > TOLERANCES.straight else SQUARE

@@ -27,7 +27,8 @@ READING = (
         "Cut lengths",
         "Tip to tip along the piece. Chords run to the joint, with the overhang, mitred where the chord kinks. Webs "
         "end square, their nearest corner one setback along the web from the edge of the chord, whichever way the "
-        "angle is turned; they are rounded down to 1 mm. Tubes that meet tubes are cut to their face.",
+        "angle is turned; they are rounded down to 1 mm. Tubes that meet tubes are cut to their face. Whether webs "
+        "of one joint clear each other is settled with its gusset.",
     ),
     ("Ends", "Degrees of a mitre are from square; of a profile, between the two axes."),
     ("Mass", "Mass per metre times cut length, nothing taken off for mitres and holes."),
@@ -64,7 +65,7 @@ def _truss(design: Design) -> list[tuple[str, str]]:
         ("Overall size", f"{metres(whole.length)} long, {metres(whole.height)} high, {whole.width:.0f} mm wide"),
         (
             "Mass of one truss",
-            f"{kilograms(whole.mass)} of pieces; to lift, with {project.members.fixings:.1%} for gussets and fixings: "
+            f"{kilograms(whole.mass)} of pieces; to lift, with {100.0 * project.members.fixings:g} % for gussets and fixings: "
             f"{kilograms(whole.lift_mass)}",
         ),
         *(("Transport", remark) for remark in whole.remarks),
