@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from functools import cached_property
 
 import numpy as np
 
@@ -29,7 +30,7 @@ class Choice:
     passes: bool
     joinable: BoolArray
 
-    @property
+    @cached_property
     def section(self) -> Candidates:
         """The chosen section, alone."""
         return self.candidates.take([self.index])

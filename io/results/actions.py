@@ -7,6 +7,7 @@ from typing import Any
 from spanwright.design.reactions import BearingForce
 from spanwright.design.result import Design
 from spanwright.io.results.numbers import millimetres, newtons, pairs, ratio
+from spanwright.truss.stiffness import reaction_sums
 
 
 def cases(design: Design) -> list[dict[str, Any]]:
@@ -66,11 +67,19 @@ def _bearing_force(force: BearingForce) -> dict[str, Any]:
 
 
 def equilibrium(design: Design) -> dict[str, Any]:
-    """Return how well the solution closes: joint residuals, sums, and the second, independent bar forces."""
+    """Return how well the solution closes: joint residuals, sums by case, and the second, independent bar forces."""
     solutions = design.analysis.solutions
+    sums = reaction_sums(solutions[0], design.analysis.loads)
     return {
-        "largest_residual_N": max(float(solution.largest_residual) for solution in solutions),
+        "largest_residual_N": max(solution.largest_residual for solution in solutions),
         "second_solution_difference_N": design.second_difference,
+        "reaction_sums_N": {
+            case.name: {
+                "applied": [newtons(float(value)) for value in sums.loads[:, at]],
+                "carried": [newtons(float(value)) for value in sums.reactions[:, at]],
+            }
+            for at, case in enumerate(design.analysis.cases)
+        },
     }
 
 
