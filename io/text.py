@@ -5,6 +5,10 @@ from __future__ import annotations
 import math
 
 
+FIGURES = 5
+"""Significant figures of a worked value."""
+
+
 def rounded_up(ratio: float) -> str:
     """Return a ratio rounded up to 0.01, so that what is printed never flatters; "-" where there is none.
 
@@ -29,3 +33,14 @@ def metres(length: float) -> str:
 def kilograms(mass: float) -> str:
     """Return kg to 1."""
     return f"{mass:.0f} kg"
+
+
+def figures(value: float) -> str:
+    """Write a number with five significant figures; powers of ten only where it is very large or small."""
+    if value == 0 or not math.isfinite(value):
+        return f"{value:g}"
+    size = math.floor(math.log10(abs(value)))
+    if not -4 <= size < 10:
+        return f"{value:.{FIGURES - 1}e}"
+    text = f"{value:.{max(0, FIGURES - 1 - size)}f}"
+    return text.rstrip("0").rstrip(".") if "." in text else text

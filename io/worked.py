@@ -2,17 +2,14 @@
 
 from __future__ import annotations
 
-import math
-
 from rich.console import Console
 from rich.table import Table
 from rich.text import Text
 
 from spanwright.design.standard import Check
 from spanwright.design.steps import Line, explain
-from spanwright.io.text import rounded_up
+from spanwright.io.text import figures, rounded_up
 
-_FIGURES = 5
 _FIRST = (0, 0)
 
 
@@ -50,17 +47,6 @@ def result(check: Check) -> str:
     unit = "" if check.unit == "-" else f" {check.unit}"
     verdict = "passes" if ratio <= 1 else "FAILS"
     return f"{figures(effect)}{unit} of {figures(resistance)}{unit}: {rounded_up(ratio)}, {verdict}"
-
-
-def figures(value: float) -> str:
-    """Write a number with five significant figures; powers of ten only where it is very large or small."""
-    if value == 0 or not math.isfinite(value):
-        return f"{value:g}"
-    size = math.floor(math.log10(abs(value)))
-    if not -4 <= size < 10:
-        return f"{value:.{_FIGURES - 1}e}"
-    text = f"{value:.{max(0, _FIGURES - 1 - size)}f}"
-    return text.rstrip("0").rstrip(".") if "." in text else text
 
 
 def _table() -> Table:

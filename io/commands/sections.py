@@ -96,7 +96,7 @@ def _print_list(console: Console, family: str, found: Candidates) -> None:
     from rich.table import Table
     from rich.text import Text
 
-    from spanwright.io.worked import figures
+    from spanwright.io.text import figures
 
     console.print(Text(f"\n{family}: {len(found)} sections", style="bold"))
     table = Table(box=None, pad_edge=False, header_style="bold")
@@ -115,7 +115,7 @@ def _print_one(console: Console, found: Candidates) -> None:
     from rich.table import Table
     from rich.text import Text
 
-    from spanwright.io.worked import figures
+    from spanwright.io.text import figures
 
     console.print(Text(found.names[0], style="bold"))
     table = Table(box=None, pad_edge=False, show_header=False)

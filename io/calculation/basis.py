@@ -1,0 +1,167 @@
+"""Scope and basis: what was decided, by which standards and assumptions, and what is not covered."""
+
+from __future__ import annotations
+
+from spanwright.design.cautions import CAUTIONS
+from spanwright.design.families import TUBES
+from spanwright.design.result import Design
+from spanwright.design.steels import steel
+from spanwright.io.calculation.blocks import Column, Fields, Paragraph, Points, Section, Table
+from spanwright.io.calculation.figures import fixed
+from spanwright.io.text import kilograms, kilonewtons, metres, rounded_up
+
+CONVENTIONS = (
+    "x to the right along the span, y up. Tension +, compression −. Sagging moments, which stretch the lower fibre, +. "
+    "Reactions act on the truss: + to the right and + up. In plane and out of plane name the direction in which a "
+    "member bows. Worked values are in N, mm and MPa; tables are in kN and m where their heads say so. "
+    "Utilisation is rounded up."
+)
+
+
+def summary(design: Design) -> Section:
+    """Return the result in short."""
+    greatest = float(design.utilisation.max())
+    verdict = "Every member passes." if design.passes else "NOT PASSING: see the groups and the warnings."
+    setting = design.setting
+    return Section(
+        "Result",
+        (
+            Paragraph(
+                f"{verdict} Greatest utilisation {rounded_up(greatest)}; mass {kilograms(design.mass)} a truss, "
+                f"{fixed(design.mass / (setting.truss.span * setting.project.spacing) * 1e6, 1)} kg/m² of plan, joint "
+                "to joint, without gussets and fixings."
+            ),
+            groups(design),
+            *_deflection_lines(design),
+        ),
+    )
+
+
+def groups(design: Design) -> Table:
+    """Return the groups with their sections, what governs them, and what the next lighter section fails."""
+    rows = []
+    for choice, lighter in zip(design.choices, design.next_lighter, strict=True):
+        found = design.governing_of(choice)
+        next_one = lighter.section or lighter.reason
+        if lighter.fails is not None:
+            next_one = f"{lighter.section}: {lighter.fails.check}, {rounded_up(lighter.fails.ratio)}"
+        elif lighter.section:
+            next_one = f"{lighter.section}: {lighter.reason}"
+        rows.append(
+            (choice.group.name, choice.name, rounded_up(found.ratio), found.bar, f"{found.check} ({found.clause})", next_one)
+        )
+    columns = (
+        Column("group", align="left"),
+        Column("section", align="left", share=1.3),
+        Column("use"),
+        Column("member", align="left"),
+        Column("governed by (clause)", align="left", share=1.0),
+        Column("next lighter section and what it fails", align="left", share=1.4),
+    )
+    return Table(columns, tuple(rows))
+
+
+def _deflection_lines(design: Design) -> tuple[Paragraph, ...]:
+    words = [
+        f"{row.name} {fixed(row.value, 1)} mm of {fixed(row.limit, 1)} mm (span/{row.span_over:g})"
+        + ("" if row.ratio <= 1.0 else ", EXCEEDED")
+        for row in design.serviceability.deflections
+    ]
+    greatest = {
+        direction: max(
+            (force for force in design.bearing_forces if force.factored and force.direction == direction),
+            key=lambda force: force.value,
+        )
+        for direction in ("down", "up", "sideways")
+    }
+    bearing = ", ".join(
+        f"{direction} {kilonewtons(force.value)}" + (f" at {force.joint}" if force.value else "")
+        for direction, force in greatest.items()
+    )
+    return (
+        Paragraph(f"Deflection: {'; '.join(words) or 'no serviceability combination'}."),
+        Paragraph(f"Greatest factored force on a bearing: {bearing}."),
+    )
+
+
+def basis(design: Design) -> Section:
+    """Return scope, standards, materials and conventions."""
+    setting = design.setting
+    project, truss = setting.project, setting.truss
+    lean = f", diagonals {truss.lean}" if truss.lean else ""
+    carried = "" if project.tributary == project.spacing else f"; each carries {metres(project.tributary)} of roof"
+    ends = project.ends
+    joined = (
+        f"welded, each weld along the connected leg at least {ends.weld_length:g} times that leg"
+        if ends.kind == "welded"
+        else f"bolted, {ends.bolts} bolts of {ends.bolt_diameter:g} mm, grade {ends.bolt_grade}, in one line; holes "
+        + ("punched" if ends.punched else "drilled")
+    )
+    rows = (
+        ("Structure", f"{truss.form}{lean}, span {metres(truss.span)}, {len(truss.bar_names)} members, {project.quantity} "
+                      f"off, {metres(project.spacing)} apart{carried}"),
+        ("Member standard", setting.standard.name),
+        ("Loading standard", f"{project.actions}; load factors in the table of combinations"),
+        ("Modulus of elasticity", f"{fixed(setting.standard.modulus, 0)} MPa"),
+        ("End connections assumed", f"{joined}. They become requirements on the joints."),
+        ("Restraint anchored by", project.restraint.anchored_by),
+        ("Model", "plane truss, pin joints, small displacements, linear elastic, loads at joints; the top chord besides "
+                  "as a continuous beam over its joints where purlins stand between them"),
+    )
+    return Section(
+        "Scope and basis",
+        (Fields(rows), _steels(design), Paragraph(CONVENTIONS, small=True)),
+    )
+
+
+def _steels(design: Design) -> Table:
+    rows: dict[tuple[str, ...], None] = {}
+    for choice in design.choices:
+        section = choice.section
+        grade = steel(design.setting.project.members.steel, hollow=section.family in TUBES)
+        rows[
+            (
+                choice.name,
+                grade.name,
+                fixed(float(section.steel_fy[0]), 0),
+                fixed(float(section.steel_fu[0]), 0),
+                fixed(float(section.area[0]), 0),
+                fixed(float(section.mass[0]), 2),
+                fixed(float(section.radius_in[0]), 1),
+                fixed(float(section.radius_out[0]), 1),
+                fixed(float(section.radius_minor[0]), 1),
+            )
+        ] = None
+    columns = (
+        Column("section", align="left", share=1.0),
+        Column("steel", align="left"),
+        Column("yield", "MPa"),
+        Column("tensile", "MPa"),
+        Column("area", "mm²"),
+        Column("mass", "kg/m"),
+        Column("i in plane", "mm"),
+        Column("i out of plane", "mm"),
+        Column("i least", "mm"),
+    )
+    return Table(columns, tuple(rows), title="Sections and steel", note="i is the radius of gyration of the whole member.")
+
+
+def assumptions(design: Design) -> Section:
+    """Return what is assumed by default, what is to be verified, and what is not covered."""
+    defaults = tuple(design.setting.project.defaults_used)
+    blocks: list[Table | Paragraph | Points] = []
+    if defaults:
+        columns = (Column("key of the project file", align="left", share=1.0), Column("taken", align="left", share=1.0))
+        blocks.append(
+            Table(columns, defaults, title="Assumed by default, since the project file does not say", dense=True, side_by_side=2)
+        )
+    reason = design.setting.project.restraint.reason
+    if reason:
+        blocks.append(Paragraph(f"Effective length factors differ from 1. Reason stated: {reason}"))
+    blocks += [
+        Paragraph(f"To verify against a licensed copy of {design.setting.standard.name}:"),
+        Points(design.setting.standard.verify_notes()),
+        Paragraph("Not covered, and cautions:"),
+        Points(CAUTIONS),
+    ]
+    return Section("Assumptions, and what is not covered", tuple(blocks))

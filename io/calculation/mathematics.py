@@ -1,0 +1,174 @@
+"""Formulas of the rules, which are Python expressions, as Typst mathematics: with symbols, or with numbers put in.
+
+What comes out holds only operators, our own symbols and numbers, so the template may evaluate it.
+"""
+
+from __future__ import annotations
+
+import ast
+import math
+from collections.abc import Mapping
+
+from spanwright.io.calculation.symbols import BRACED, TABLE, symbol
+from spanwright.io.text import figures
+
+FUNCTIONS = {
+    "sqrt": math.sqrt,
+    "min": min,
+    "max": max,
+    "abs": abs,
+    "sin": math.sin,
+    "cos": math.cos,
+    "tan": math.tan,
+    "log": math.log,
+    "atan": math.atan,
+    "floor": math.floor,
+    "ceil": math.ceil,
+    "where": lambda condition, yes, no: yes if condition else no,
+}
+"""What a formula may call; see `spanwright.design.steps`."""
+
+CONSTANTS = {"pi": math.pi}
+
+_SUM, _PRODUCT, _POWER, _ATOM = range(4)
+_THIN = "\u2009"
+
+
+def evaluate(expression: str, values: Mapping[str, float]) -> float:
+    """Return the value of a formula of our own rules."""
+    code = compile(expression, "<formula>", "eval")
+    return float(eval(code, {"__builtins__": {}}, {**FUNCTIONS, **CONSTANTS, **values}))
+
+
+def with_symbols(expression: str) -> str:
+    """Return a formula as mathematics."""
+    return _Symbols().written(expression)
+
+
+def with_numbers(expression: str, values: Mapping[str, float]) -> str:
+    """Return a formula as mathematics with printed numbers in place of its symbols; of a choice only what applies."""
+    return _Numbers(values).written(expression)
+
+
+def symbols_in(expression: str) -> tuple[str, ...]:
+    """Return the symbols that a formula uses, each once."""
+    names = [node.id for node in ast.walk(ast.parse(expression, mode="eval")) if isinstance(node, ast.Name)]
+    return tuple(dict.fromkeys(name for name in names if name not in FUNCTIONS and name not in CONSTANTS))
+
+
+def number(value: float) -> str:
+    """Return a number as mathematics, as `figures` prints it: thousands apart, powers of ten raised."""
+    text = figures(abs(value))
+    mantissa, _, exponent = text.partition("e")
+    sign = "-" if value < 0 and text != "0" else ""
+    power = f" times 10^({int(exponent)})" if exponent else ""
+    return f'{sign}"{grouped(mantissa)}"{power}'
+
+
+def grouped(text: str) -> str:
+    """Return a plain number with thin spaces between thousands, from five digits on."""
+    whole, point, decimals = text.partition(".")
+    digits = whole.lstrip("-")
+    if len(digits) < 5:
+        return text
+    return f"{whole[: -len(digits)]}{int(digits):,}".replace(",", _THIN) + point + decimals
+
+
+class _Writer:
+    """Writes one expression; `part` returns its mathematics and how tightly it binds."""
+
+    times = " thin "
+
+    def written(self, expression: str) -> str:
+        return self.part(ast.parse(expression, mode="eval").body)[0]
+
+    def leaf(self, name: str) -> tuple[str, int]:
+        raise NotImplementedError
+
+    def choice(self, condition: ast.expr, yes: ast.expr, no: ast.expr) -> tuple[str, int]:
+        raise NotImplementedError
+
+    def part(self, node: ast.expr) -> tuple[str, int]:
+        match node:
+            case ast.Constant(value=float() | int() as value):
+                return _bound(number(value))
+            case ast.Name(id=name):
+                return (name, _ATOM) if name in CONSTANTS else self.leaf(name)
+            case ast.UnaryOp(op=ast.USub(), operand=operand):
+                return f"-{self.held(operand, _PRODUCT)}", _SUM
+            case ast.BinOp(left=left, op=operator, right=right):
+                return self.joined(left, operator, right)
+            case ast.Compare(left=left, ops=[operator], comparators=[right]):
+                return f"{self.part(left)[0]} {_COMPARED[type(operator)]} {self.part(right)[0]}", _SUM
+            case ast.Call(func=ast.Name(id="where"), args=[condition, yes, no]):
+                return self.choice(condition, yes, no)
+            case ast.Call(func=ast.Name(id=name), args=arguments):
+                return f"{name}({', '.join(self.part(argument)[0] for argument in arguments)})", _ATOM
+        raise ValueError(f"a formula may not hold {ast.unparse(node)}")
+
+    def joined(self, left: ast.expr, operator: ast.operator, right: ast.expr) -> tuple[str, int]:
+        match operator:
+            case ast.Add():
+                return f"{self.part(left)[0]} + {self.part(right)[0]}", _SUM
+            case ast.Sub():
+                return f"{self.part(left)[0]} - {self.held(right, _PRODUCT)}", _SUM
+            case ast.Mult():
+                return f"{self.held(left, _PRODUCT)}{self.times}{self.held(right, _PRODUCT)}", _PRODUCT
+            case ast.Div():
+                return f"frac({self.part(left)[0]}, {self.part(right)[0]})", _POWER
+            case ast.Pow():
+                return f"{self.held(left, _ATOM)}^({self.raised(right)})", _POWER
+        raise ValueError(f"a formula may not hold {type(operator).__name__}")
+
+    def held(self, node: ast.expr, least: int) -> str:
+        """Return a part in brackets where it binds less tightly than it must."""
+        text, binding = self.part(node)
+        return text if binding >= least else f"({text})"
+
+    def raised(self, node: ast.expr) -> str:
+        """Return an exponent, its fraction on one line."""
+        match node:
+            case ast.BinOp(left=left, op=ast.Div(), right=right):
+                return f"{self.part(left)[0]} slash {self.held(right, _ATOM)}"
+        return self.part(node)[0]
+
+
+class _Symbols(_Writer):
+    def leaf(self, name: str) -> tuple[str, int]:
+        return symbol(name), _POWER if name in BRACED else _ATOM
+
+    def choice(self, condition: ast.expr, yes: ast.expr, no: ast.expr) -> tuple[str, int]:
+        rows = []
+        while True:
+            rows.append(f'{self.part(yes)[0]} & quad "if" {self.part(condition)[0]}')
+            match no:
+                case ast.Call(func=ast.Name(id="where"), args=[condition, yes, no]):
+                    continue
+            break
+        rows.append(f'{self.part(no)[0]} & quad "else"')
+        return f"cases({', '.join(rows)})", _PRODUCT
+
+
+class _Numbers(_Writer):
+    times = " times "
+
+    def __init__(self, values: Mapping[str, float]) -> None:
+        self.values = values
+
+    def leaf(self, name: str) -> tuple[str, int]:
+        return _bound(number(self.values[name]))
+
+    def choice(self, condition: ast.expr, yes: ast.expr, no: ast.expr) -> tuple[str, int]:
+        return self.part(yes if evaluate(ast.unparse(condition), self.values) else no)
+
+
+def _bound(text: str) -> tuple[str, int]:
+    """Return a number with how tightly it binds: a sign or a power of ten asks for brackets."""
+    if text.startswith("-"):
+        return text, _SUM
+    return text, _PRODUCT if "times" in text else _ATOM
+
+
+_COMPARED = {ast.LtE: "<=", ast.Lt: "<", ast.GtE: ">=", ast.Gt: ">"}
+
+__all__ = ["TABLE", "evaluate", "grouped", "number", "symbols_in", "with_numbers", "with_symbols"]

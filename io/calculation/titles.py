@@ -1,0 +1,43 @@
+"""The title block, with the data fields of ISO 7200; what is not given is left for signature."""
+
+from __future__ import annotations
+
+from spanwright.design.project import Project
+
+KIND = "Structural calculation"
+
+FIELDS = (
+    ("owner", "Legal owner"),
+    ("client", "Client"),
+    ("project", "Project"),
+    ("department", "Department"),
+    ("reference", "Technical reference"),
+    ("number", "Identification number"),
+    ("status", "Document status"),
+    ("language", "Language"),
+)
+"""Keys of [title_block] with their names in print; printed where given, and the number always."""
+
+SIGNED = (
+    ("revision", "Revision"),
+    ("creator", "Prepared"),
+    ("checker", "Checked"),
+    ("approver", "Approved"),
+    ("date", "Date of issue"),
+)
+"""Fields that are left blank for the hand where they are not given."""
+
+
+def title_block(project: Project, date: str) -> dict[str, object]:
+    """Return the title block: fields that are given, and fields for signature."""
+    given = project.title_block
+    values = given | ({"date": date} if date else {})
+    return {
+        "kind": KIND,
+        "title": project.title,
+        "supplementary": given.get("supplementary_title", ""),
+        "mark": project.mark,
+        "fields": [(name, given[key]) for key, name in FIELDS if given.get(key)],
+        "signed": [(name, values.get(key, "")) for key, name in SIGNED],
+        "author": given.get("creator", ""),
+    }
