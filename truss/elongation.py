@@ -19,15 +19,19 @@ def held_directions(truss: Truss, supports: tuple[Support, ...] | None = None) -
     return held
 
 
+MOST_DENSE = 100
+"""Bars up to which a full matrix is quicker to make and to use than a sparse one (tests/benchmarks/solver.py)."""
+
+
 @dataclass(frozen=True, eq=False)
 class Elongation:
     """How bars and joints act on each other.
 
-    matrix : (b, 2 j) sparse; its columns stand for x0, y0, x1, y1, ... of the joints. Times displacements it gives
-    elongations; its transpose times bar forces gives the joint loads that these forces carry.
+    matrix : (b, 2 j), sparse for many bars; its columns stand for x0, y0, x1, y1, ... of the joints. Times
+    displacements it gives elongations; its transpose times bar forces gives the joint loads that these forces carry.
     """
 
-    matrix: csr_array[np.float64]
+    matrix: FloatArray | csr_array[np.float64]
 
     def of_bars(self, displacements: FloatArray) -> FloatArray:
         """Return (b, c) mm that bars grow longer by joint displacements (2 j, c) mm."""
@@ -41,7 +45,11 @@ class Elongation:
 def elongation_of(truss: Truss) -> Elongation:
     """Return how the bars and joints of a truss act on each other."""
     cosines: FloatArray = np.hstack([-truss.directions, truss.directions])
-    freedoms = 2 * truss.ends.astype(np.int32)[:, [0, 0, 1, 1]] + np.array([0, 1, 0, 1], dtype=np.int32)
-    starts = np.arange(0, cosines.size + 1, 4, dtype=np.int32)
-    matrix = csr_array((cosines.ravel(), freedoms.ravel(), starts), shape=(len(truss.ends), 2 * len(truss.xy)))
-    return Elongation(matrix)
+    freedoms = 2 * truss.ends[:, [0, 0, 1, 1]] + np.array([0, 1, 0, 1])
+    bars, joints = len(truss.ends), len(truss.xy)
+    if bars <= MOST_DENSE:
+        dense = np.zeros((bars, 2 * joints))
+        dense[np.arange(bars)[:, None], freedoms] = cosines
+        return Elongation(dense)
+    starts = np.arange(0, cosines.size + 1, 4)
+    return Elongation(csr_array((cosines.ravel(), freedoms.ravel(), starts), shape=(bars, 2 * joints)))

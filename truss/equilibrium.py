@@ -55,7 +55,7 @@ def second_solution(
 def _equilibrium(truss: Truss, held: BoolArray) -> csc_array[np.float64]:
     """Return (2 j, b + r): times bar forces and reactions it gives the joint loads that they carry."""
     reactions = eye_array(held.size, format="csc")[:, held.ravel()]
-    return csc_array(hstack([elongation_of(truss).matrix.T, -reactions], format="csc"))
+    return csc_array(hstack([csc_array(elongation_of(truss).matrix.T), -reactions]))
 
 
 def difference(forces: FloatArray, second: FloatArray) -> float:

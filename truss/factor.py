@@ -80,14 +80,16 @@ def _assembled(truss: Truss, stiffness: FloatArray, order: IntArray) -> FloatArr
     ends = 2 * place[truss.ends]
     near, far = np.minimum(ends[:, 0], ends[:, 1]), np.maximum(ends[:, 0], ends[:, 1])
     width = int((far - near).max(initial=0)) + 1
-    down, right = 1, width  # steps to the next row and to the next column
 
+    # the ten elements on and below the diagonal of a bar's 4 x 4 matrix: three of each end, four between the ends
     x, y = truss.directions.T
     along = stiffness * np.array([x * x, x * y, y * y])
-    own = np.array([[0], [down], [down + right]])
-    joint = np.array([[0], [down], [right], [down + right]])
-    where = np.concatenate([near * (1 + width) + own, far * (1 + width) + own, far + near * width + joint])
-    what = np.concatenate([along, along, -along[[0, 1, 1, 2]]])
+    first = np.array([near * (1 + width), far * (1 + width), far + near * width])
+    down, right = 1, width  # from an element to the next row and to the next column
+    steps = np.array([0, down, down + right, 0, down, down + right, 0, down, right, down + right])
+    where = first[[0, 0, 0, 1, 1, 1, 2, 2, 2, 2]] + steps[:, None]
+    what = along[[0, 1, 2, 0, 1, 2, 0, 1, 1, 2]]
+    np.negative(what[6:], out=what[6:])
     size = 2 * len(order) * (width + 1)
     flat = np.bincount(where.ravel(), what.ravel(), minlength=size).astype(np.float64, copy=False)
     return flat.reshape(-1, width + 1).T

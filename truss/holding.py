@@ -15,9 +15,6 @@ NEIGHBOURS = 12
 PAIRS_TRIED = 50
 """Possible new bars looked at, most strained first, for one that crosses no other."""
 
-NOTICEABLE = 0.1
-"""Share of the largest displacement from which a bearing that moves is the place for a support."""
-
 Hold = tuple[int, int] | Support
 """A bar between two joints, or a support in one direction."""
 
@@ -26,8 +23,8 @@ def what_would_hold(truss: Truss, held: BoolArray, motions: FloatArray) -> tuple
     """Return one hold for each motion, which together stop them all.
 
     held : (j, 2). motions : (m, j, 2), independent, largest displacement 1. For each motion in turn: the bar between
-    neighbours that it would strain most, or where it strains none, a support that it would push most. What is left of
-    the other motions once this one is stopped goes on to the next.
+    neighbours that it would strain most, preferably one that crosses no other; where it strains none, a support. What
+    this leaves free of the other motions goes on to the next.
     """
     left = motions.copy()
     holds: list[Hold] = []
@@ -58,16 +55,17 @@ def _resisted(truss: Truss, hold: Hold, motions: FloatArray) -> FloatArray:
 
 
 def _new_bar(truss: Truss, motion: FloatArray) -> tuple[int, int] | None:
-    pairs = _open_pairs(truss, np.flatnonzero(np.abs(motion).max(axis=1) > TOLERANCES.motionless))
+    small = TOLERANCES.motionless * np.abs(motion).max()
+    pairs = _open_pairs(truss, np.flatnonzero(np.abs(motion).max(axis=1) > small))
     along = truss.xy[pairs[:, 1]] - truss.xy[pairs[:, 0]]
     lengths = np.hypot(along[:, 0], along[:, 1])
     elongations = np.abs(np.sum((motion[pairs[:, 1]] - motion[pairs[:, 0]]) * along, axis=1)) / lengths
     strains = elongations / lengths
-    straining = np.flatnonzero(elongations > TOLERANCES.motionless * np.abs(motion).max())
-    # strains that differ by rounding only rank by joint number
+    straining = np.flatnonzero(elongations > small)
+    # equal strains, but for rounding, rank by length to the mm and then by joint number
     steps = np.rint(strains[straining] / (TOLERANCES.motionless * strains.max(initial=0.0)))
-    ranked = straining[np.argsort(-steps, kind="stable")][:PAIRS_TRIED]
-    possible = [(int(a), int(b)) for a, b in pairs[ranked] if not _meets_joint(truss, int(a), int(b))]
+    ranked = straining[np.lexsort((np.rint(lengths[straining]), -steps))][:PAIRS_TRIED]
+    possible = [(int(first), int(second)) for first, second in pairs[ranked]]
     clear = (pair for pair in possible if not _crosses_bar(truss, *pair))
     return next(clear, possible[0] if possible else None)
 
@@ -81,20 +79,6 @@ def _open_pairs(truss: Truss, moving: IntArray) -> IntArray:
     numbers = np.unique(pairs[pairs[:, 0] < pairs[:, 1]] @ [joints, 1])
     taken = np.sort(truss.ends, axis=1) @ [joints, 1]
     return np.column_stack(np.divmod(np.setdiff1d(numbers, taken), joints))
-
-
-def _meets_joint(truss: Truss, first: int, second: int) -> bool:
-    """Whether a third joint lies on the line between two."""
-    along = truss.xy[second] - truss.xy[first]
-    share = (truss.xy - truss.xy[first]) @ along / (along @ along)
-    off = np.hypot(*(truss.xy - truss.xy[first] - share[:, None] * along).T)
-    return bool(np.any((off < TOLERANCES.same_point) & (share > 0.0) & (share < 1.0) & _others(truss, first, second)))
-
-
-def _others(truss: Truss, first: int, second: int) -> BoolArray:
-    others = np.ones(len(truss.xy), dtype=bool)
-    others[[first, second]] = False
-    return others
 
 
 def _crosses_bar(truss: Truss, first: int, second: int) -> bool:
@@ -115,11 +99,9 @@ def _side(start: FloatArray, end: FloatArray, point: FloatArray) -> FloatArray:
 
 
 def _new_support(truss: Truss, held: BoolArray, motion: FloatArray) -> Support:
-    """Return a support in the direction and at the joint that moves most; bearings first, then the lowest, leftmost."""
+    """Return a support in the direction and at the joint that move most: of equals bearings first, then the lowest."""
     pushed = np.abs(motion)
-    bearings = held.any(axis=1)
-    if pushed[bearings].max(initial=0.0) > NOTICEABLE * pushed.max():
-        pushed[~bearings] = 0.0
     joints, axes = np.nonzero(pushed > (1.0 - TOLERANCES.motionless) * pushed.max())
-    best = np.lexsort((truss.xy[joints, 0], truss.xy[joints, 1]))[0]
+    bearing = held[joints].any(axis=1)
+    best = np.lexsort((truss.xy[joints, 0], truss.xy[joints, 1], ~bearing))[0]
     return Support(int(joints[best]), bool(axes[best] == 0), bool(axes[best] == 1))

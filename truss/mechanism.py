@@ -48,23 +48,12 @@ def free_motions(truss: Truss, held: BoolArray) -> tuple[FloatArray, int]:
     moved[loose[:told], range(told)] = 1.0
     forces = -elongation.carried(stiffness[:, None] * elongation.of_bars(moved))
     forces[fixed.ravel()] = 0.0
-    motions = _taken_apart((factor.displacements(forces) + moved).T)
+    motions = (factor.displacements(forces) + moved).T.copy()
     for motion in motions:
         motion[np.abs(motion) < TOLERANCES.motionless * np.abs(motion).max()] = 0.0
         sinking = motion[1::2].sum() <= 0.0
         motion *= (1.0 if sinking else -1.0) / np.hypot(motion[::2], motion[1::2]).max()
     return motions.reshape(told, *held.shape), len(loose)
-
-
-def _taken_apart(motions: FloatArray) -> FloatArray:
-    """Combine motions (m, 2 j) so that none moves the degree of freedom in which another is largest."""
-    apart = motions.copy()
-    for row, motion in enumerate(apart):
-        lead = np.abs(motion).argmax()
-        motion /= motion[lead]
-        others = np.arange(len(apart)) != row
-        apart[others] -= np.outer(apart[others, lead], motion)
-    return apart
 
 
 def _explained(truss: Truss, held: BoolArray, motions: FloatArray, independent: int) -> MechanismError:

@@ -179,6 +179,21 @@ def test_independent_motions_are_told_apart() -> None:
     assert sorted(moving, key=min) == [{"X"}, {"Y"}]
 
 
+def test_holds_are_chosen_for_what_earlier_ones_leave_free() -> None:
+    truss = with_joint(parallel_chords(6), "X", (4500, 2000), to=("T1", "T2"), instead_of="TC2")
+    truss = with_joint(truss, "Y", (13500, 0), to=("B4", "B5"), instead_of="BC5")
+    x, y = np.zeros((2, len(truss.joint_names), 2))
+    x[truss.joint("X"), 1] = y[truss.joint("Y"), 1] = -1.0
+    holds = what_would_hold(truss, held_directions(truss), np.stack([x, x + 0.2 * y]))
+    assert [truss.joint_names[hold[1]] for hold in holds if isinstance(hold, tuple)] == ["X", "Y"]
+
+
+def test_a_truss_hung_from_its_top_chord_is_to_be_held_at_a_bearing() -> None:
+    with pytest.raises(MechanismError) as refused:
+        refuse_mechanism(parallel_chords(6, supports={"T0": "y", "T6": "y"}))
+    assert refused.value.remedy == "a support that holds T0 sideways would hold it"
+
+
 def test_many_motions_are_counted_and_the_first_ones_told() -> None:
     truss = parallel_chords(12, without=[f"D{i}" for i in range(1, 13)])
     with pytest.raises(MechanismError) as refused:
