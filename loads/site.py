@@ -20,7 +20,7 @@ from spanwright.loads.intermediate import Intermediate, to_verify
 from spanwright.loads.pressures import WindField
 from spanwright.loads.roof_shape import RoofShape, roof_shape
 from spanwright.loads.sans_10160 import Sans10160
-from spanwright.loads.site_inputs import POSITIONS, SiteInput
+from spanwright.loads.site_inputs import POSITIONS, NamedPosition, SiteInput
 from spanwright.loads.site_standard import Imposed, SiteStandard, SnowArrangement
 from spanwright.loads.tables import read_table
 from spanwright.loads.walls import wall_sides
@@ -129,6 +129,14 @@ def actions_from_site(
         permanent=permanent if "roof_permanent" in site.derive else (),
         warnings=tuple(_warnings(site, loads, settled, imposed, wind)),
     )
+
+
+def at_every_position(site: SiteInput, spacing: float) -> dict[NamedPosition, SiteInput]:
+    """Return the site with the truss at the end, at the first interior place and at the typical interior one, as far as
+    the building is long enough to have them.
+    """
+    bays = site.length / spacing
+    return {name: replace(site, position=name) for at, name in enumerate(POSITIONS) if bays >= 2 * at or at == 0}
 
 
 def truss_position(site: SiteInput, spacing: float) -> float:
