@@ -11,7 +11,7 @@ a joint eliminated late: rounding in that pivot grows with the third power of th
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 import numpy as np
 from scipy.linalg.lapack import dpbtrf, dpbtrs
@@ -27,19 +27,22 @@ class Factor:
     """A factorised stiffness matrix.
 
     freedoms : (2 j,) degrees of freedom in the order of elimination.
+    held : (2 j,) whether each of them, in that order, is held.
     band : (width + 1, 2 j) the lower Cholesky factor in band storage.
     loose : a degree of freedom that takes part in a mechanism, or None where the truss stands. Where there is one,
         the factor must not be used.
     """
 
     freedoms: IntArray
+    held: BoolArray
     band: FloatArray
     loose: int | None = None
 
     def displacements(self, forces: FloatArray) -> FloatArray:
-        """Return (2 j, ...) mm for forces (2 j, ...) N, which must be zero where held."""
-        ordered = np.asfortranarray(forces[self.freedoms])
-        solved, _ = dpbtrs(self.band, ordered, lower=1, overwrite_b=1)
+        """Return (2 j, c) mm for forces (2 j, c) N; what acts where the truss is held goes into the supports."""
+        ordered = np.take(forces.T, self.freedoms, axis=1)
+        ordered[:, self.held] = 0.0
+        solved, _ = dpbtrs(self.band, ordered.T, lower=1, overwrite_b=1)
         displacements = np.empty_like(forces)
         displacements[self.freedoms] = solved
         return displacements
@@ -55,14 +58,15 @@ def factorise(truss: Truss, elongation: Elongation, stiffness: FloatArray, held:
     band = _assembled(truss, stiffness, order)
     stiffest = np.repeat(band[0].reshape(-1, 2).max(axis=1), 2)  # of the two directions at each joint
     stiffest[stiffest == 0.0] = 1.0  # a joint without bars
-    _hold(band, held[order].ravel(), stiffest)
+    fixed = held[order].ravel()
+    _hold(band, fixed, stiffest)
     band, stopped = dpbtrf(band, lower=1, overwrite_ab=1)  # stopped: number of the first pivot not above zero, or 0
     sound = stopped - 1 if stopped else len(stiffest)
     weak = np.flatnonzero(band[0, :sound] ** 2 < TOLERANCES.pivot * stiffest[:sound])
     if weak.size or stopped:
-        return Factor(freedoms, band, int(freedoms[weak[0] if weak.size else sound]))
-    factor = Factor(freedoms, band)
-    return Factor(freedoms, band, _moves_without_strain(factor, elongation, held.ravel()))
+        return Factor(freedoms, fixed, band, int(freedoms[weak[0] if weak.size else sound]))
+    factor = Factor(freedoms, fixed, band)
+    return replace(factor, loose=_moves_without_strain(factor, elongation))
 
 
 def _along_longer_side(xy: FloatArray) -> IntArray:
@@ -104,11 +108,9 @@ def _hold(band: FloatArray, held: BoolArray, diagonal: FloatArray) -> None:
     band[0, columns] = diagonal[columns]
 
 
-def _moves_without_strain(factor: Factor, elongation: Elongation, fixed: BoolArray) -> int | None:
+def _moves_without_strain(factor: Factor, elongation: Elongation) -> int | None:
     """Return the degree of freedom that moves most if arbitrary forces hardly strain a bar, else None."""
-    trial = np.cos(np.arange(len(fixed)))
-    trial[fixed] = 0.0
-    motion = factor.displacements(trial)
+    motion = factor.displacements(np.cos(np.arange(len(factor.freedoms)))[:, None])
     size = np.abs(motion)
     strained = np.abs(elongation.of_bars(motion)).max(initial=0.0)
     return int(size.argmax()) if strained < TOLERANCES.strainless * size.max(initial=0.0) else None

@@ -47,7 +47,6 @@ def free_motions(truss: Truss, held: BoolArray) -> tuple[FloatArray, int]:
     moved = np.zeros((held.size, told))
     moved[loose[:told], range(told)] = 1.0
     forces = -elongation.carried(stiffness[:, None] * elongation.of_bars(moved))
-    forces[fixed.ravel()] = 0.0
     motions = (factor.displacements(forces) + moved).T.copy()
     for motion in motions:
         motion[np.abs(motion) < TOLERANCES.motionless * np.abs(motion).max()] = 0.0

@@ -82,18 +82,18 @@ def solve(
         refuse_mechanism(truss, supports)
         raise InputError("the bars' axial stiffnesses differ too much to solve", "state EA in N", "axial_stiffness")
 
-    fixed = np.flatnonzero(held)
     applied = loads.reshape(2 * joints, -1)
     unforced = _unforced_elongation(truss, elongation, held, shape, strains, settlements)
-    driving = applied.copy() if unforced is None else applied + elongation.carried(stiffness[:, None] * unforced)
-    driving[fixed] = 0.0
+    driving = applied if unforced is None else applied + elongation.carried(stiffness[:, None] * unforced)
     displacements = factor.displacements(driving)
     forces = elongation.of_bars(displacements)
     if unforced is not None:
         forces -= unforced
     forces *= stiffness[:, None]
 
-    residuals = applied - elongation.carried(forces)
+    residuals = elongation.carried(forces)
+    np.subtract(applied, residuals, out=residuals)
+    fixed = np.flatnonzero(held)
     reactions = np.zeros_like(residuals)
     reactions[fixed] = -residuals[fixed]
     residuals[fixed] = 0.0
