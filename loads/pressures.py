@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterator
 from dataclasses import dataclass, replace
 from functools import cached_property
 from itertools import pairwise, product
@@ -83,6 +84,11 @@ class WindField:
         return (self.strip[1] - self.strip[0]) * (self.shape.edges[1] - self.shape.edges[0])
 
     @cached_property
+    def coefficients(self) -> dict[WindFrom, tuple[dict[Sign, float], ...]]:
+        """External coefficients of each zone, on the signed lines that its part of the roof has."""
+        return {wind: tuple(self._of_zones(zones)) for wind, zones in self.zones.items()}
+
+    @cached_property
     def cases(self) -> tuple[SurfaceCase, ...]:
         """Every wind case: each direction, signed line of each slope and internal pressure, those that differ."""
         kept: list[SurfaceCase] = []
@@ -132,7 +138,7 @@ class WindField:
         on_walls = [self.on_wall(walls, face, within) for face in ("left wall", "right wall")]
         head = self._head(wind)
         cases = []
-        for signs, cpe in self._lines(zones):
+        for signs, cpe in self._lines(wind):
             external: FloatArray = by_zone @ cpe
             for internal in internal_coefficients(self.site, self.shape, wind, walls, self.pair):
                 under = below + inside * internal.cpi
@@ -158,23 +164,21 @@ class WindField:
                 )
         return cases
 
-    def _lines(self, zones: tuple[Zone, ...]) -> list[tuple[tuple[tuple[Part, Sign], ...], FloatArray]]:
+    def _of_zones(self, zones: tuple[Zone, ...]) -> Iterator[dict[Sign, float]]:
+        for zone in zones:
+            names = tuple(other.name for other in zones if other.part == zone.part)
+            lines = roof_coefficients(zone.table, names, float(np.degrees(zone.pitch)), self.area)
+            yield {sign: float(values[names.index(zone.name)]) for sign, values in lines.items()}
+
+    def _lines(self, wind: WindFrom) -> list[tuple[tuple[tuple[Part, Sign], ...], FloatArray]]:
         """Return every way to take one signed line for each part of the roof: the signs, and cpe (n,) of the zones."""
-        parts: dict[Part, list[int]] = {}
-        for at, zone in enumerate(zones):
-            parts.setdefault(zone.part, []).append(at)
-        choices = []
-        for part, members in parts.items():
-            first = zones[members[0]]
-            names = tuple(zones[at].name for at in members)
-            lines = roof_coefficients(first.table, names, float(np.degrees(first.pitch)), self.area)
-            choices.append([(part, sign, members, values) for sign, values in lines.items()])
+        zones, values = self.zones[wind], self.coefficients[wind]
+        parts = {zone.part: value.keys() for zone, value in zip(zones, values, strict=True)}
         found = []
-        for chosen in product(*choices):
-            cpe = np.zeros(len(zones))
-            for _, _, members, values in chosen:
-                cpe[members] = values
-            found.append((tuple((part, sign) for part, sign, _, _ in chosen), cpe))
+        for signs in product(*parts.values()):
+            taken = dict(zip(parts, signs, strict=True))
+            cpe = [value[taken[zone.part]] for zone, value in zip(zones, values, strict=True)]
+            found.append((tuple(taken.items()), np.array(cpe)))
         return found
 
     def _under(self, walls: Walls) -> tuple[FloatArray, FloatArray]:

@@ -68,7 +68,7 @@ class SiteActions:
     @property
     def cautions(self) -> tuple[str, ...]:
         """What a printed copy of the standard must confirm."""
-        return to_verify(self.standard, self.steps)
+        return to_verify(self.standard, self.steps[len(self.permanent) :])
 
     def _steps(self) -> Iterator[Intermediate]:
         yield from self.permanent
