@@ -6,7 +6,9 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from spanwright.design.analysis import Analysis
 from spanwright.design.demand import of_bars
+from spanwright.design.serviceability import serviceability
 from spanwright.design.setting import Setting, demand_of
 from spanwright.design.sizing import Choice, Governing, governing
 
@@ -44,7 +46,16 @@ def _one(setting: Setting, choices: tuple[Choice, ...], at: int) -> NextLighter:
     bars = tuple(setting.truss.bar_names[bar] for bar in choice.group.bars)
     worst = governing(checks, bars, names)
     if worst.ratio <= 1.0:
-        return NextLighter(
-            section.names[0], None, "it passes with its own mass, but not beside the others' first choice"
-        )
+        worst = _deflection(setting, analysis) or worst
+    if worst.ratio <= 1.0:
+        return NextLighter(section.names[0], None, "it passes with its own mass, but did not beside the first choices")
     return NextLighter(section.names[0], worst)
+
+
+def _deflection(setting: Setting, analysis: Analysis) -> Governing | None:
+    """Return the deflection that exceeds its limit most, as what governs, or None."""
+    rows = serviceability(setting.truss, setting.project.deflection, analysis).deflections
+    worst = max(rows, key=lambda row: row.ratio, default=None)
+    if worst is None or worst.ratio <= 1.0:
+        return None
+    return Governing(f"deflection, {worst.name}", "Annex D", "limit", worst.joint, worst.combination, worst.ratio)

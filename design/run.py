@@ -23,6 +23,7 @@ from spanwright.design.serviceability import serviceability
 from spanwright.design.setting import Setting, demand_of
 from spanwright.design.sizing import Choice, choose, fitting
 from spanwright.design.standard import Demand
+from spanwright.design.stiffening import stiffened
 from spanwright.design.warnings import warnings_of
 from spanwright.loads.cases import load_cases
 from spanwright.loads.combinations import combine
@@ -46,9 +47,10 @@ def design(project: Project) -> Design:
     while True:  # a group never returns to a lighter section, so the loop ends
         analysis, wanted, choices = size(setting, floors)
         chosen = [choice.index for choice in choices]
-        if chosen == floors:
+        heavier = stiffened(setting, analysis, choices) if chosen == floors else chosen
+        if heavier is None:
             break
-        floors = chosen
+        floors = heavier
     return finish(setting, analysis, wanted, choices)
 
 

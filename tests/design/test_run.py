@@ -38,11 +38,6 @@ ROLE_TO_GROUP: dict[Role, str] = {
     "post": "posts",
     "diagonal": "diagonals",
 }
-    "top chord": "top chord",
-    "bottom chord": "bottom chord",
-    "post": "posts",
-    "diagonal": "diagonals",
-}
 
 
 def sections_of(done: Design) -> dict[str, str]:

@@ -11,6 +11,7 @@ from demos import DEMOS, demo
 from spanwright.design.result import Design
 from spanwright.design.run import design
 from spanwright.design.serviceability import below_bearing_line
+from spanwright.truss.model import Role
 from spanwright.truss.stiffness import solve
 
 
@@ -44,11 +45,30 @@ def test_settlement_of_both_bearings_alike_is_no_deflection(done: Design) -> Non
     assert np.abs(below_bearing_line(truss, sunk)).max() < 1e-9
 
 
-def test_a_limit_that_is_exceeded_fails_the_design() -> None:
+def test_steel_is_added_where_it_lowers_deflection_until_the_limit_holds() -> None:
     project = demo("pratt_store")
-    strict = design(replace(project, deflection=replace(project.deflection, total=2000.0)))
-    assert not strict.passes
+    loose = design(project)
+    total = next(row for row in loose.serviceability.deflections if row.name == "total")
+    tighter = 0.8 * total.value
+    strict = design(replace(project, deflection=replace(project.deflection, total=loose.setting.truss.span / tighter)))
+    assert strict.passes
+    assert strict.mass > loose.mass
+    fails = [lighter.fails for lighter in strict.next_lighter if lighter.fails is not None]
+    assert any(failed.check == "deflection, total" for failed in fails)
+
+
+def test_given_sections_that_deflect_too_much_fail_the_design() -> None:
+    project = demo("howe_workshop")
+    sections: dict[Role, str] = {
+        "top chord": "2L 80x80x8",
+        "bottom chord": "2L 80x80x8",
+        "post": "L 80x80x8",
+        "diagonal": "L 80x80x8",
+    }
+    given = replace(project, members=replace(project.members, by_role=sections))
+    strict = design(replace(given, deflection=replace(project.deflection, total=5000.0)))
     assert all(choice.passes for choice in strict.choices)
+    assert not strict.passes
 
 
 def test_the_sliding_end_moves_and_the_pinned_one_does_not(done: Design) -> None:
