@@ -74,19 +74,19 @@ def mitre(before: FloatArray, after: FloatArray, along: FloatArray) -> End:
 def web_end(web: Candidates, role: Role, along: FloatArray, past: list[Passing], gap: float) -> TakeOff:
     """Return what a web loses at a joint.
 
-    along : (2,) unit direction of the piece. past : members that run past the end. gap : mm beyond their edges.
-    A tube that meets only tubes is cut to their face. Any other web is cut square, its nearest corner `gap` along the
-    web from the edge. Where several members pass, the one that takes most decides.
+    along : (2,) unit direction of the piece. past : members that run past the end. gap : mm.
+    A tube that meets only tubes is cut to their face. Any other web is cut square, its nearest corner `gap` clear of
+    the edge. Where several members pass, the one that takes most decides; where none does, the gap is to the joint.
     """
     if past and web.family in TUBES and all(other.section.family in TUBES for other in past):
         return max((_to_face(web, along, other) for other in past), key=lambda found: found.length)
     half = edges(web, role)[1]
-    return TakeOff(max((_to_corner(half, along, other) for other in past), default=0.0) + gap, SQUARE)
+    return TakeOff(max((_to_corner(half, along, other, gap) for other in past), default=gap), SQUARE)
 
 
-def _to_corner(half: float, along: FloatArray, other: Passing) -> float:
+def _to_corner(half: float, along: FloatArray, other: Passing, gap: float) -> float:
     cosine, sine = _between(along, other.direction)
-    return (other.edge + half * cosine) / sine if sine > TOLERANCES.straight else 0.0
+    return (other.edge + gap + half * cosine) / sine if sine > TOLERANCES.straight else gap
 
 
 def _to_face(web: Candidates, along: FloatArray, other: Passing) -> TakeOff:

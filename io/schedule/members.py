@@ -26,7 +26,7 @@ COLUMNS = (
     Column("in combination", 20),
     Column("Greatest moment (sagging +), kNm", 9, 2),
     Column("Packs between joints", 8, 0),
-    Column("Utilisation", 10, 2),
+    Column("Utilisation", 11, 2),
     Column("Governing check", 18),
     Column("Clause", 9),
 )

@@ -26,8 +26,8 @@ READING = (
     (
         "Cut lengths",
         "Tip to tip along the piece. Chords run to the joint, with the overhang, mitred where the chord kinks. Webs "
-        "end square, their nearest corner one setback along the web from the edge of the chord, whichever way the "
-        "angle is turned; they are rounded down to 1 mm. Tubes that meet tubes are cut to their face. Whether webs "
+        "end square, their nearest corner one setback clear of the edge of the chord whichever way the angle is "
+        "turned; they are rounded down to 1 mm. Tubes that meet tubes are cut to their face. Whether webs "
         "of one joint clear each other is settled with its gusset.",
     ),
     ("Ends", "Degrees of a mitre are from square; of a profile, between the two axes."),
@@ -65,8 +65,8 @@ def _truss(design: Design) -> list[tuple[str, str]]:
         ("Overall size", f"{metres(whole.length)} long, {metres(whole.height)} high, {whole.width:.0f} mm wide"),
         (
             "Mass of one truss",
-            f"{kilograms(whole.mass)} of pieces; to lift, with {100.0 * project.members.fixings:g} % for gussets and fixings: "
-            f"{kilograms(whole.lift_mass)}",
+            f"{kilograms(whole.mass)} of pieces; to lift, with {100.0 * project.members.fixings:g} % for gussets "
+            f"and fixings: {kilograms(whole.lift_mass)}",
         ),
         *(("Transport", remark) for remark in whole.remarks),
         ("Status", ESTIMATE),
