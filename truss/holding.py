@@ -72,10 +72,10 @@ def _new_bar(truss: Truss, motion: FloatArray) -> tuple[int, int] | None:
 
 def _open_pairs(truss: Truss, moving: IntArray) -> IntArray:
     """Return (p, 2) pairs of a moving joint and one near it that no bar connects, each once."""
-    reach = min(NEIGHBOURS + 1, len(truss.xy))  # the joint itself is its own nearest
+    joints = len(truss.xy)
+    reach = min(NEIGHBOURS + 1, joints)  # the joint itself is its own nearest
     near = KDTree(truss.xy).query(truss.xy[moving], reach)[1].reshape(len(moving), reach)
     pairs = np.sort(np.column_stack([np.repeat(moving, reach), near.ravel()]), axis=1)
-    joints = len(truss.xy)
     numbers = np.unique(pairs[pairs[:, 0] < pairs[:, 1]] @ [joints, 1])
     taken = np.sort(truss.ends, axis=1) @ [joints, 1]
     return np.column_stack(np.divmod(np.setdiff1d(numbers, taken), joints))

@@ -74,6 +74,13 @@ def test_a_load_on_a_support_goes_straight_into_it() -> None:
     assert solution.reactions[truss.joint("A"), :, 0] == pytest.approx([-300.0, 500.0])
 
 
+def test_a_supported_joint_without_bars_takes_its_own_load() -> None:
+    truss = bare_truss({"A": (0, 0), "B": (2500, 0), "C": (9000, 0)}, by_pairs("A-B"), {"A": "xy", "B": "y", "C": "xy"})
+    solution = solve(truss, np.array([EA]), at_joint(truss, "C", 30.0, -20.0))
+    assert solution.reactions[2, :, 0] == pytest.approx([-30.0, 20.0])
+    assert not solution.displacements.any()
+
+
 def test_cases_are_solved_side_by_side() -> None:
     truss = gable()
     loads = np.random.default_rng(3).normal(size=(6, 2, 5)) * 1e4
