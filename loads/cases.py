@@ -15,8 +15,8 @@ from spanwright.loads.mirror import SUFFIX, is_symmetric, mirrored, mirrored_loa
 from spanwright.loads.roof import Roof, roof_over
 from spanwright.loads.site import SiteActions, actions_from_site
 from spanwright.loads.site_inputs import SiteInput
+from spanwright.loads.site_parts import snow_parts, wind_parts
 from spanwright.loads.strips import SIDES
-from spanwright.loads.walls import wall_forces, wall_sides
 from spanwright.truss.arrays import FloatArray
 from spanwright.truss.errors import InputError
 from spanwright.truss.model import Truss
@@ -24,7 +24,7 @@ from spanwright.truss.purlins import PurlinLine
 
 __all__ = ["PERMANENT", "Case", "CaseKind", "LoadSet", "Stations", "load_cases", "loads_on", "own_mass_loads"]
 
-CaseKind = Literal["permanent", "imposed", "man", "snow", "wind"]
+CaseKind = Literal["permanent", "imposed", "man", "snow", "exceptional snow", "wind"]
 PERMANENT = ("most", "least")
 """The two sets of permanent loads: the greatest and the least credible."""
 
@@ -34,7 +34,8 @@ class Case:
     """One load case, unfactored.
 
     name : unique ("most", "least", "imposed left", "man at T3", "man in TC4", "across ridge, suction mirrored").
-    kind : "permanent", "imposed", "man" (takes the place of imposed in a combination), "snow" or "wind".
+    kind : "permanent", "imposed", "man" (takes the place of imposed in a combination), "snow", "exceptional snow" or
+        "wind".
     joint_loads : (j, 2) N, x to the right, y up.
     moments : (m,) N mm in the top chord at the stations, sagging (tension at the lower fibre) +.
     derivation : lines for the checker: what, value, unit, how.
@@ -111,7 +112,8 @@ def load_cases(
     roof = roof_over(truss, lines, tributary, man=loads.man_load > 0.0, cuts=cuts)
     cases: dict[str, Case] = {}
     stated = (*_permanent(roof, loads), *_imposed(roof, loads), *_men(roof, loads), *_wind(roof, loads))
-    for case in (*stated, *_from_site(roof, site)):
+    derived = () if site is None else (*_snow(roof, site), *_wind_from(roof, site))
+    for case in (*stated, *derived):
         if case.name in cases:
             raise InputError(f'two cases are called "{case.name}"', "give every case a name of its own", "loads.wind")
         cases[case.name] = case
@@ -168,22 +170,15 @@ def _wind_case(roof: Roof, wind: WindInput) -> Case:
     return case.joined_by(roof.beams.at_joints(*at_eaves(roof.truss, wind.eaves_left, wind.eaves_right)))
 
 
-def _from_site(roof: Roof, site: SiteActions | None) -> Iterator[Case]:
-    """Yield the snow and wind cases found from the site; the first wind case tells how the peak pressure came about."""
-    if site is None:
-        return
-    for fallen in site.snow:
-        edges = (fallen.edge_left, fallen.edge_right)
-        yield _case(fallen.name, "snow", roof.snow(fallen.left, fallen.right, edges, tuple(map(str, fallen.steps))))
-    if site.wind is None:
-        return
-    walls = wall_sides(roof.truss, site.shape)
-    peak = tuple(map(str, site.wind.peak.steps))
-    for number, wind in enumerate(site.wind.cases):
-        head = (*(peak if number == 0 else (peak[-1],)), *wind.derivation)
-        case = _case(wind.name, "wind", roof.surface(site.wind.cuts, wind.net, head))
-        on_walls = wall_forces(roof.truss, walls, wind.walls, site.wind.wall_width, site.site.column_head_share)
-        yield case.joined_by(roof.beams.at_joints(*on_walls))
+def _snow(roof: Roof, site: SiteActions) -> Iterator[Case]:
+    for name, part in snow_parts(roof, site.snow):
+        yield _case(name, "snow", part)
+
+
+def _wind_from(roof: Roof, site: SiteActions) -> Iterator[Case]:
+    if site.wind is not None:
+        for name, part, on_walls in wind_parts(roof, site.wind):
+            yield _case(name, "wind", part).joined_by(on_walls)
 
 
 def _case(name: str, kind: CaseKind, part: Part) -> Case:

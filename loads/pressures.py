@@ -5,14 +5,14 @@ from __future__ import annotations
 from collections.abc import Iterator
 from dataclasses import dataclass, replace
 from functools import cached_property
-from itertools import pairwise, product
+from itertools import product
 
 import numpy as np
 
-from spanwright.loads import derivation as say
-from spanwright.loads.coefficients import CLAUSES, Sign, roof_coefficients, wall_coefficients
+from spanwright.loads import wind_derivation as told
+from spanwright.loads.coefficients import Sign, roof_coefficients, wall_coefficients
 from spanwright.loads.intermediate import Intermediate
-from spanwright.loads.internal import Internal, Walls, internal_coefficients
+from spanwright.loads.internal import Walls, internal_coefficients
 from spanwright.loads.roof_shape import RoofShape
 from spanwright.loads.site_inputs import Face, SiteInput
 from spanwright.loads.site_standard import PeakPressure
@@ -27,7 +27,6 @@ from spanwright.loads.zones import (
     shares,
     sides,
     wall_zones,
-    zone_measure,
 )
 from spanwright.truss.arrays import FloatArray
 
@@ -136,7 +135,7 @@ class WindField:
         inside, below = self._under(walls)
         within = (max(self.strip[0], 0.0), min(self.strip[1], self.shape.length))
         on_walls = [self.on_wall(walls, face, within) for face in ("left wall", "right wall")]
-        head = self._head(wind)
+        head = told.zones(self.shape, wind, zones[0].table, self.strip)
         cases = []
         for signs, cpe in self._lines(wind):
             external: FloatArray = by_zone @ cpe
@@ -157,8 +156,8 @@ class WindField:
                         derivation=(
                             *head,
                             str(internal.source),
-                            *self._stretches(zones, by_zone, external, under, net),
-                            *self._on_walls(on_walls, internal, pressed),
+                            *told.stretches(zones, self.cuts, by_zone, external, under, net),
+                            *told.walls(on_walls, internal.name, pressed),
                         ),
                     )
                 )
@@ -201,43 +200,6 @@ class WindField:
             if end > length:
                 below[at] += (end - length) / width * self.on_wall(walls, "far gable", stretch)
         return inside, below
-
-    def _head(self, wind: WindFrom) -> tuple[str, ...]:
-        b, d = sides(self.shape, wind)
-        e = zone_measure(self.shape, wind)
-        zone = self.zones[wind][0]
-        return (
-            f"wind from the {wind}: side across it b {say.metres(b)}, along it d {say.metres(d)}, height h "
-            f"{say.metres(self.shape.height)}, e = min(b, 2h) = {say.metres(e)}: zones by e/10 {say.metres(e / 10)}, "
-            f"e/4 {say.metres(e / 4)}, e/2 {say.metres(e / 2)}",
-            f"strip of roof from {say.metres(self.strip[0])} to {say.metres(self.strip[1])} of the near gable; "
-            f"{CLAUSES[zone.table]}, from memory",
-        )
-
-    def _stretches(
-        self, zones: tuple[Zone, ...], by_zone: FloatArray, external: FloatArray, under: FloatArray, net: FloatArray
-    ) -> tuple[str, ...]:
-        lines = []
-        same = np.isclose(by_zone[1:], by_zone[:-1]).all(axis=1) & np.isclose(net[1:], net[:-1], atol=0.0)
-        changes = [0, *(np.flatnonzero(~same) + 1).tolist()]
-        for at, after in pairwise([*changes, len(net)]):
-            x0, x1 = self.cuts[at], self.cuts[after]
-            parts: dict[str, float] = {}
-            for zone, share in zip(zones, by_zone[at], strict=True):
-                if share > 0.0:
-                    parts[zone.name] = parts.get(zone.name, 0.0) + float(share)
-            named = ", ".join(f"{name} {share:.1%}" if len(parts) > 1 else name for name, share in parts.items())
-            lines.append(
-                f"x {say.metres(float(x0))} to {say.metres(float(x1))}, zone {named}: cpe {external[at]:+.3f}, below "
-                f"{under[at]:+.3f}: w = qp*(cpe - below) = {say.kilopascals(float(net[at]))}"
-            )
-        return tuple(lines)
-
-    def _on_walls(self, on_walls: list[float], internal: Internal, pressed: list[float]) -> tuple[str, ...]:
-        return tuple(
-            f"{side} wall: cpe {cpe:+.3f}, {internal.name}: {say.kilopascals(pressure)}, + presses in"
-            for side, cpe, pressure in zip(("left", "right"), on_walls, pressed, strict=True)
-        )
 
 
 def _name(wind: WindFrom, signs: tuple[tuple[Part, Sign], ...]) -> str:

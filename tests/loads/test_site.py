@@ -12,8 +12,8 @@ from roofs import hand_made, mono_pitch
 from spanwright.loads.cases import Case, LoadSet, loads_on
 from spanwright.loads.inputs import JointLoad, LoadsInput, MostLeast, WindInput
 from spanwright.loads.internal import face_size
+from spanwright.loads.place import at_every_position, truss_position
 from spanwright.loads.roof_shape import roof_shape
-from spanwright.loads.site import at_every_position, truss_position
 from spanwright.loads.site_inputs import Derivable, NamedPosition, Opening, SiteInput
 from spanwright.truss.errors import InputError, UnknownNameError
 from spanwright.truss.forms import build_form
