@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 import numpy as np
-from scipy.spatial import KDTree
 
 from spanwright.truss.arrays import BoolArray, FloatArray, IntArray
 from spanwright.truss.model import Support, Truss
@@ -72,6 +71,8 @@ def _new_bar(truss: Truss, motion: FloatArray) -> tuple[int, int] | None:
 
 def _open_pairs(truss: Truss, moving: IntArray) -> IntArray:
     """Return (p, 2) pairs of a moving joint and one near it that no bar connects, each once."""
+    from scipy.spatial import KDTree  # heavy, and needed for mechanisms only
+
     joints = len(truss.xy)
     reach = min(NEIGHBOURS + 1, joints)  # the joint itself is its own nearest
     near = KDTree(truss.xy).query(truss.xy[moving], reach)[1].reshape(len(moving), reach)
