@@ -12,7 +12,7 @@ from spanwright.loads.inputs import JointLoad, LoadsInput, MostLeast, WindInput
 from spanwright.loads.site_inputs import Derivable
 from spanwright.truss.errors import InputError
 
-CaseKind = Literal["permanent", "imposed", "wind"]
+CaseKind = Literal["permanent", "imposed", "snow", "wind"]
 
 _surface_load = ranged(PRESSURE, "kPa", "0 kPa", "20 kPa")
 SurfaceLoad = Annotated[float, field(_surface_load)]
@@ -62,7 +62,7 @@ class JointLoadTable(Table):
 
     case: Name = key("the case of this load; the name of an existing case joins that case")
     kind: Annotated[CaseKind, one_of(CaseKind)] = key(
-        'what acts; it sets the load factors. Write "permanent", "imposed" or "wind"'
+        'what acts; it sets the load factors. Write "permanent", "imposed", "snow" or "wind"'
     )
     joint: Name = key('the joint that carries the load, such as "B6"')
     down: PointForce = key("downward", "0 kN")

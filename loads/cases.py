@@ -171,8 +171,8 @@ def _wind_case(roof: Roof, wind: WindInput) -> Case:
 
 
 def _snow(roof: Roof, site: SiteActions) -> Iterator[Case]:
-    for name, part in snow_parts(roof, site.snow):
-        yield _case(name, "snow", part)
+    for name, kind, part in snow_parts(roof, site.snow):
+        yield _case(name, kind, part)
 
 
 def _wind_from(roof: Roof, site: SiteActions) -> Iterator[Case]:

@@ -2,28 +2,60 @@
 
 from __future__ import annotations
 
-import csv
+import math
+from collections.abc import Callable
 from dataclasses import dataclass
-from importlib.resources import files
 from itertools import product
 from typing import Literal, cast
 
 import numpy as np
 
 from spanwright.loads.cases import Case
+from spanwright.loads.intermediate import Intermediate, Mark, to_verify
+from spanwright.loads.partial_factors import en_1990_factors
+from spanwright.loads.site_inputs import SiteInput
+from spanwright.loads.tables import read_table
 from spanwright.truss.arrays import FloatArray
-from spanwright.truss.errors import UnknownNameError
+from spanwright.truss.errors import InputError, UnknownNameError
 
-LimitState = Literal["STR", "STR-P", "EQU", "SLS", "SLS variable"]
+LimitState = Literal["STR", "STR-P", "EQU", "SLS", "SLS variable", "SLS quasi-permanent"]
+Factors = dict[str, Intermediate]
 
-ACTIONS: dict[str, tuple[str, str]] = {
-    "SANS 10160:2011": ("combinations_sans_10160.csv", "2011"),
-    "SANS 10160:2019": ("combinations_sans_10160.csv", "2019"),
+
+@dataclass(frozen=True)
+class Actions:
+    """A loading standard as its combinations know it.
+
+    file : of its combinations, in loads/data. column : the file's column that tells editions or expressions apart;
+    takes : which of them hold, beside those marked "all".
+    factors : finds the values that the file names instead of numbers.
+    """
+
+    file: str
+    column: str
+    takes: tuple[str, ...]
+    factors: Callable[[SiteInput | None], Factors] = lambda _: {}
+
+    def rows(self) -> list[dict[str, str]]:
+        """Return the rows that hold."""
+        return [row for row in read_table(self.file) if row[self.column] in (*self.takes, "all")]
+
+
+_SANS = "combinations_sans_10160.csv"
+_EN = "combinations_en_1990.csv"
+ACTIONS: dict[str, Actions] = {
+    "SANS 10160:2011": Actions(_SANS, "edition", ("2011",)),
+    "SANS 10160:2019": Actions(_SANS, "edition", ("2019",)),
+    "EN 1990:2002, 6.10": Actions(_EN, "expression", ("6.10",), en_1990_factors),
+    "EN 1990:2002, 6.10a and 6.10b": Actions(_EN, "expression", ("6.10a", "6.10b"), en_1990_factors),
 }
-"""Loading standards by name: the file of their combinations in loads/data, and the edition within it."""
+"""Loading standards by name."""
 
-COLUMNS = ("most", "least", "imposed", "man", "snow", "wind")
-"""Columns of such a file that may hold factors: the two permanent sets, then the kinds of variable cases."""
+COLUMNS = ("most", "least", "imposed", "man", "snow", "exceptional snow", "wind")
+"""Columns of such a file that may hold factors: the two permanent sets, then the kinds of variable cases.
+
+A factor is a number or a product ("gQ*psi0_wind") of numbers and of values that the standard leaves to the site.
+"""
 
 
 @dataclass(frozen=True)
@@ -33,7 +65,7 @@ class Combination:
     name : unique, as printed ("1.2 most + 1.6 imposed"); where two limit states hold the same sum, the later one in
         the standard's file is printed with its limit state ("EQU: 0.9 least + 1.3 west gale").
     limit_state : "STR" and "STR-P" are for members, "EQU" for reactions only, "SLS" for total deflection,
-        "SLS variable" for the deflection of one variable action alone.
+        "SLS variable" for the deflection of the variable actions alone, "SLS quasi-permanent" for what lasts.
     factors : (case name, factor) each.
     """
 
@@ -42,17 +74,39 @@ class Combination:
     factors: tuple[tuple[str, float], ...]
 
 
-def combine(cases: tuple[Case, ...], actions: str) -> tuple[Combination, ...]:
-    """Return every combination of a loading standard; UnknownNameError (key "actions") where nobody knows it."""
-    if actions not in ACTIONS:
-        raise UnknownNameError.among(actions, list(ACTIONS), what="loading standard", key="actions")
+def combine(cases: tuple[Case, ...], actions: str, site: SiteInput | None = None) -> tuple[Combination, ...]:
+    """Return every combination of a loading standard.
+
+    site : its altitude and nation set the factors that the standard leaves to them; None: the recommended values, for a
+    site not above 1000 m.
+
+    Raises UnknownNameError (key "actions") for a standard nobody knows, and InputError (key "actions") for a case of a
+    kind that the standard does not combine: it would act nowhere.
+    """
+    standard = _standard(actions)
+    rows, values = standard.rows(), standard.factors(site)
+    _refuse_lost(cases, rows, actions)
     combinations: dict[str, Combination] = {}
-    for row in _rows(*ACTIONS[actions]):
-        for combination in _expand(row, cases):
+    for row in rows:
+        for combination in _expand(row, cases, values):
             if combination.name in combinations:
                 combination = _told_apart(combination)
             combinations[combination.name] = combination
     return tuple(combinations.values())
+
+
+def combination_factors(actions: str, site: SiteInput | None = None) -> tuple[Intermediate, ...]:
+    """Return the values that a standard's combinations take from the site; UnknownNameError as `combine`."""
+    return tuple(_standard(actions).factors(site).values())
+
+
+def combination_cautions(actions: str, site: SiteInput | None = None) -> tuple[str, ...]:
+    """Return what a printed copy of the standard must confirm of its combinations; UnknownNameError as `combine`."""
+    tables = (
+        Intermediate("", f"combinations for {row['limit_state']}", math.nan, "-", mark=cast(Mark, row["mark"]))
+        for row in _standard(actions).rows()
+    )
+    return to_verify(actions, (*combination_factors(actions, site), *tables))
 
 
 def factor_matrix(combinations: tuple[Combination, ...], cases: tuple[Case, ...]) -> FloatArray:
@@ -65,25 +119,42 @@ def factor_matrix(combinations: tuple[Combination, ...], cases: tuple[Case, ...]
     return matrix
 
 
-def _rows(file: str, edition: str) -> list[dict[str, str]]:
-    text = files("spanwright.loads.data").joinpath(file).read_text(encoding="utf-8")
-    table = csv.DictReader(line for line in text.splitlines() if not line.startswith("#"))
-    return [row for row in table if row["edition"] in (edition, "all")]
+def _standard(actions: str) -> Actions:
+    if actions not in ACTIONS:
+        raise UnknownNameError.among(actions, list(ACTIONS), what="loading standard", key="actions")
+    return ACTIONS[actions]
 
 
-def _expand(row: dict[str, str], cases: tuple[Case, ...]) -> list[Combination]:
-    """Return one combination for every way to take one case of each kind that the row gives a factor."""
-    factors = [(column, row[column]) for column in COLUMNS if row.get(column)]
-    choices = [[(case.name, text) for case in cases if _column(case) == column] for column, text in factors]
+def _refuse_lost(cases: tuple[Case, ...], rows: list[dict[str, str]], actions: str) -> None:
+    for case in cases:
+        if not any(row.get(_column(case)) for row in rows):
+            raise InputError(
+                f'{actions} has no combination with {case.kind}, of which "{case.name}" is a case',
+                "choose a loading standard that has, or leave the case out",
+                "actions",
+            )
+
+
+def _expand(row: dict[str, str], cases: tuple[Case, ...], values: Factors) -> list[Combination]:
+    """Return one combination for every way to take one case of each kind that the row gives a factor.
+
+    None where a factor is 0: the standard's file has a row without that action.
+    """
+    factors = {column: _factor(row[column], values) for column in COLUMNS if row.get(column)}
+    if not all(factors.values()):
+        return []
+    choices = [[(case.name, factor) for case in cases if _column(case) == column] for column, factor in factors.items()]
     state = cast(LimitState, row["limit_state"])
     return [
-        Combination(
-            " + ".join(f"{text} {name}" for name, text in terms),
-            state,
-            tuple((name, float(text)) for name, text in terms),
-        )
+        Combination(" + ".join(f"{factor} {name}" for name, factor in terms), state, terms)
         for terms in product(*choices)
     ]
+
+
+def _factor(text: str, values: Factors) -> float:
+    """Return a factor, rounded to what is printed."""
+    parts = text.split("*")
+    return round(math.prod(values[part].value if part in values else float(part) for part in parts), 6)
 
 
 def _column(case: Case) -> str:

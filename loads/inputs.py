@@ -35,7 +35,7 @@ class JointLoad:
     """A load at one joint; the name of an existing case joins that case. N; `right` + to the right."""
 
     case: str
-    kind: Literal["permanent", "imposed", "wind"]
+    kind: Literal["permanent", "imposed", "snow", "wind"]
     joint: str
     down: float = 0.0
     right: float = 0.0

@@ -15,6 +15,7 @@ from functools import cached_property
 
 from spanwright.loads import derivation as say
 from spanwright.loads.coefficients import CLAUSES
+from spanwright.loads.eurocode import Eurocode
 from spanwright.loads.inputs import LoadsInput, MostLeast
 from spanwright.loads.intermediate import Intermediate, to_verify
 from spanwright.loads.place import truss_position, truss_strip
@@ -28,7 +29,10 @@ from spanwright.loads.walls import wall_sides
 from spanwright.truss.errors import UnknownNameError
 from spanwright.truss.model import Truss
 
-STANDARDS: dict[str, SiteStandard] = {standard.name: standard for standard in (Sans10160("2011"), Sans10160("2019"))}
+STANDARDS: dict[str, SiteStandard] = {
+    standard.name: standard
+    for standard in (Sans10160("2011"), Sans10160("2019"), Eurocode("6.10"), Eurocode("6.10a and 6.10b"))
+}
 """Loading standards by the name that the key `actions` gives; the same names as in `combinations.ACTIONS`."""
 
 

@@ -7,15 +7,16 @@ from collections.abc import Iterator
 from spanwright.loads.bending import Part
 from spanwright.loads.pressures import WindField
 from spanwright.loads.roof import Roof
-from spanwright.loads.site_standard import SnowArrangement
+from spanwright.loads.site_standard import SnowArrangement, SnowKind
 from spanwright.loads.walls import wall_forces, wall_sides
 
 
-def snow_parts(roof: Roof, snow: tuple[SnowArrangement, ...]) -> Iterator[tuple[str, Part]]:
-    """Yield the name of each arrangement of snow and what it does."""
+def snow_parts(roof: Roof, snow: tuple[SnowArrangement, ...]) -> Iterator[tuple[str, SnowKind, Part]]:
+    """Yield the name and the kind of each arrangement of snow and what it does."""
     for fallen in snow:
         edges = (fallen.edge_left, fallen.edge_right)
-        yield fallen.name, roof.snow(fallen.left, fallen.right, edges, tuple(map(str, fallen.steps)))
+        part = roof.snow(fallen.left, fallen.right, edges, tuple(map(str, fallen.steps)))
+        yield fallen.name, fallen.kind, part
 
 
 def wind_parts(roof: Roof, field: WindField) -> Iterator[tuple[str, Part, Part]]:

@@ -3,11 +3,14 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
-from typing import Protocol
+from typing import Literal, Protocol
 
 from spanwright.loads.intermediate import Intermediate
 from spanwright.loads.roof_shape import RoofShape
 from spanwright.loads.site_inputs import SiteInput
+
+SnowKind = Literal["snow", "exceptional snow"]
+"""Of a load case: exceptional falls are an accidental action."""
 
 
 @dataclass(frozen=True)
@@ -41,6 +44,7 @@ class SnowArrangement:
     edge_left: float = 0.0
     edge_right: float = 0.0
     steps: tuple[Intermediate, ...] = ()
+    kind: SnowKind = "snow"
 
 
 class SiteStandard(Protocol):
