@@ -73,9 +73,9 @@ class WindField:
 
     @cached_property
     def cuts(self) -> FloatArray:
-        """(q + 1,) x at which a zone or a wall begins or ends, mm."""
+        """(q + 1,) x at which a zone, a wall or a slope begins or ends, mm."""
         edges = {x for zones in self.zones.values() for zone in zones for x in (zone.x0, zone.x1)}
-        return np.unique(np.array([*edges, *self.shape.walls]))
+        return np.unique(np.array([*edges, *self.shape.walls, self.shape.middle]))
 
     @cached_property
     def area(self) -> float:
