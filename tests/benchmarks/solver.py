@@ -3,7 +3,7 @@
 Truss: parallel chords with a support every 20 panels, 20 load cases. Ours is `solve` as users call it: ordering,
 assembly, factor, judgement of mechanisms, cases and bar forces, and also checks of input, reactions and residuals.
 Reference: the bars' matrices by broadcasting, `coo_array` to `csc_array`, SuperLU factor and solve of the same matrix,
-without bar forces; "from triplets" leaves the bars' matrices out too. Ratio: the median of rounds; the aim is at most 1.
+without bar forces; "from triplets" leaves the bars' matrices out too. Ratio: median of rounds; the aim is at most 1.
 """
 
 from __future__ import annotations
