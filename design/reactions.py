@@ -12,7 +12,7 @@ from spanwright.truss.arrays import FloatArray
 from spanwright.truss.model import Truss
 
 Direction = Literal["down", "up", "sideways"]
-VARIABLE = ("imposed", "man", "wind")
+VARIABLE = ("imposed", "man", "snow", "wind")
 
 
 @dataclass(frozen=True)

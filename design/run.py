@@ -79,7 +79,7 @@ def prepare(project: Project) -> Setting:
         restraint=restraint,
         lengths=buckling_lengths(truss, restraint, project.restraint),
         load_set=load_set,
-        combinations=combine(load_set.cases, project.actions),
+        combinations=combine(load_set.cases, project.actions, project.site),
         groups=groups,
         options=tuple(sections_for(group, project.members) for group in groups),
     )

@@ -14,7 +14,7 @@ from typing import Any, Literal
 
 from spanwright.loads import derivation as say
 from spanwright.loads.intermediate import Intermediate, Mark
-from spanwright.loads.national import national_value, refuse_not_covered
+from spanwright.loads.national import national_basis, national_value, refuse_not_covered
 from spanwright.loads.return_period import return_period_factor, return_period_formula
 from spanwright.loads.roof_shape import RoofShape
 from spanwright.loads.site_inputs import SiteInput
@@ -57,7 +57,8 @@ class Eurocode:
         """
         pitch = math.degrees(min(abs(shape.left), abs(shape.right)))
         pressure, man = national_value(site.national, "qk", pitch), national_value(site.national, "Qk")
-        steps = (Intermediate("a", "pitch of the flatter slope", pitch, "deg"), pressure, man)
+        flatter = Intermediate("a", "pitch of the flatter slope", pitch, "deg")
+        steps = (*national_basis(site.national), flatter, pressure, man)
         return Imposed(pressure.value / 1e3, man.value * 1e3, steps)
 
     def peak_pressure(self, site: SiteInput, height: float) -> PeakPressure:
@@ -86,6 +87,7 @@ def _peak_steps(site: SiteInput, height: float) -> Iterator[Intermediate]:
     )
     probability = return_period_factor(site.return_period, shape.value, exponent.value)
     speed = probability * direction.value * season.value * basic
+    yield from national_basis(site.national)
     yield Intermediate("vb0", "basic speed, 10-minute mean", basic, "m/s", _SPEED, mark="stated")
     yield Intermediate("T", "return period", site.return_period, "years", mark="stated")
     yield from (shape, exponent)

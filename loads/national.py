@@ -33,29 +33,36 @@ def nations() -> tuple[str, ...]:
 
 
 def national_value(nation: str, symbol: str, at: float = 0.0) -> Intermediate:
-    """Return a value as a nation has it; "" or "recommended" stands for the recommended values.
+    """Return a value as a nation has it, or the recommended one where nothing is known of the nation's own.
 
-    at : for a value that runs over something, such as the pitch in degrees.
+    nation : "" or "recommended" stands for the recommended values. at : for a value that runs over something, such as
+    the pitch in degrees.
 
-    Where nothing is known of the nation's own value, the recommended one stands in and is marked "assumed".
     Raises UnknownNameError (key "site.national_values") for a nation nobody knows.
     """
-    known = _values(RECOMMENDED)[symbol]
+    recommended = _values(RECOMMENDED)[symbol]
+    own = _own(nation).get(symbol)
+    if own is None:
+        return _on_curve(recommended, at)
+    found, model = _on_curve(own, at), recommended[0].value
+    return replace(
+        found,
+        meaning=f"{model.meaning}, {nation}",
+        unit=model.unit,
+        clause=found.clause or f"annex to {model.clause}",
+    )
+
+
+def national_basis(nation: str) -> tuple[Intermediate, ...]:
+    """Return, as an assumption to verify, how many values of a nation's own are known; nothing for recommended values.
+
+    Raises UnknownNameError as `national_value`.
+    """
+    own = _own(nation)
     if nation in ("", RECOMMENDED):
-        return _on_curve(known, at)
-    if nation not in nations():
-        raise UnknownNameError.among(nation, [RECOMMENDED, *nations()], what="set of national values", key=_KEY)
-    own = _values(nation).get(symbol)
-    if own is not None:
-        found, model = _on_curve(own, at), known[0].value
-        return replace(
-            found,
-            meaning=f"{model.meaning}, {nation}",
-            unit=model.unit,
-            clause=found.clause or f"annex to {model.clause}",
-        )
-    found = _on_curve(known, at)
-    return replace(found, meaning=f"{found.meaning}, recommended, {nation}'s own not known here", mark="assumed")
+        return ()
+    meaning = f"values of {nation} known here: {', '.join(own)}; the recommended ones stand for all others"
+    return (Intermediate("known", meaning, len(own), "-", mark="assumed"),)
 
 
 def refuse_not_covered(nation: str, part: str, remedy: str, key: str) -> None:
@@ -63,6 +70,14 @@ def refuse_not_covered(nation: str, part: str, remedy: str, key: str) -> None:
     for row in read_table("national_not_covered.csv"):
         if (row["nation"], row["part"]) == (nation, part):
             raise InputError(f"{part} in the {nation} is not covered: {row['reason']}", remedy, key)
+
+
+def _own(nation: str) -> dict[str, tuple[_Value, ...]]:
+    if nation in ("", RECOMMENDED):
+        return {}
+    if nation not in nations():
+        raise UnknownNameError.among(nation, [RECOMMENDED, *nations()], what="set of national values", key=_KEY)
+    return _values(nation)
 
 
 def _on_curve(rows: tuple[_Value, ...], at: float) -> Intermediate:
