@@ -67,7 +67,7 @@ class Eurocode:
         Raises InputError for a speed that is missing or implausible, for a terrain that is missing or unknown, above
         200 m, and where the nation has a method of its own.
         """
-        refuse_not_covered(site.national, "EN 1991-1-4", "state wind pressures in [loads]", _NATIONAL)
+        refuse_not_covered(site.national, "EN 1991-1-4", "state wind pressures in [loads]", "site.national_values")
         steps = tuple(_peak_steps(site, height))
         return PeakPressure(steps[-1].value / 1e3, steps, tuple(_warnings(height)))
 
@@ -76,30 +76,14 @@ class Eurocode:
         return () if site.snow is None else snow_arrangements(site.snow, site, shape)
 
 
-_NATIONAL = "site.national_values"
-
-
 def _peak_steps(site: SiteInput, height: float) -> Iterator[Intermediate]:
     """Yield every value from the basic speed to the peak pressure."""
-    basic = _refuse_speed(site.wind_speed)
-    direction, season, shape, exponent, turbulence, density = (
-        national_value(site.national, symbol) for symbol in ("cdir", "cseason", "K", "n", "kl", "rho")
-    )
-    probability = return_period_factor(site.return_period, shape.value, exponent.value)
-    speed = probability * direction.value * season.value * basic
-    yield from national_basis(site.national)
-    yield Intermediate("vb0", "basic speed, 10-minute mean", basic, "m/s", _SPEED, mark="stated")
-    yield Intermediate("T", "return period", site.return_period, "years", mark="stated")
-    yield from (shape, exponent)
-    formula = return_period_formula(shape.value, exponent.value)
-    yield Intermediate("cprob", "return period factor", probability, "-", _SPEED, formula, "seen")
-    yield from (direction, season)
-    yield Intermediate("vb", "basic speed at the site", speed, "m/s", _SPEED, "cprob*cdir*cseason*vb0", "seen")
-    roughness = tuple(_roughness(site.terrain, height))
-    yield from roughness
-    z, z0, cr = (next(step.value for step in roughness if step.symbol == symbol) for symbol in ("z", "z0", "cr"))
-    mean = cr * site.topography * speed
-    intensity = turbulence.value / (site.topography * math.log(z / z0))
+    found = (*_speed(site), *_roughness(site.terrain, height))
+    yield from found
+    value = {step.symbol: step.value for step in found}
+    turbulence, density = (national_value(site.national, symbol) for symbol in ("kl", "rho"))
+    mean = value["cr"] * site.topography * value["vb"]
+    intensity = turbulence.value / (site.topography * math.log(value["z"] / value["z0"]))
     peak = _values()["gust"]["peak"]
     pressure = (1.0 + peak * intensity) * density.value * mean**2 / 2 / 1e3
     yield Intermediate("co", "orography", site.topography, "-", _MEAN, mark="stated")
@@ -109,6 +93,24 @@ def _peak_steps(site: SiteInput, height: float) -> Iterator[Intermediate]:
     yield density
     formula = f"(1 + {peak:g}*Iv)*rho*vm**2/2/1000"
     yield Intermediate("qp", "peak velocity pressure", pressure, "kPa", _PEAK, formula, "seen")
+
+
+def _speed(site: SiteInput) -> Iterator[Intermediate]:
+    """Yield what leads to the basic speed at the site (EN 1991-1-4 cl. 4.2)."""
+    basic = _refuse_speed(site.wind_speed)
+    shape, exponent, direction, season = (
+        national_value(site.national, symbol) for symbol in ("K", "n", "cdir", "cseason")
+    )
+    probability = return_period_factor(site.return_period, shape.value, exponent.value)
+    speed = probability * direction.value * season.value * basic
+    formula = return_period_formula(shape.value, exponent.value)
+    yield from national_basis(site.national)
+    yield Intermediate("vb0", "basic speed, 10-minute mean", basic, "m/s", _SPEED, mark="stated")
+    yield Intermediate("T", "return period", site.return_period, "years", mark="stated")
+    yield from (shape, exponent)
+    yield Intermediate("cprob", "return period factor", probability, "-", _SPEED, formula, "seen")
+    yield from (direction, season)
+    yield Intermediate("vb", "basic speed at the site", speed, "m/s", _SPEED, "cprob*cdir*cseason*vb0", "seen")
 
 
 def _roughness(category: str | None, height: float) -> Iterator[Intermediate]:

@@ -6,12 +6,12 @@ The printed standard was not at hand: values from memory are marked so (loads/da
 
 from __future__ import annotations
 
-import math
 from dataclasses import dataclass
 from typing import Any, Literal
 
 import numpy as np
 
+from spanwright.loads import return_period
 from spanwright.loads.intermediate import Intermediate, Mark
 from spanwright.loads.roof_shape import RoofShape
 from spanwright.loads.site_inputs import SiteInput
@@ -75,10 +75,11 @@ class Sans10160:
         peak = roughness[-1].value * site.topography * gust * mean
         pressure = 0.5 * density * peak**2 / 1e3
         remembered: Mark = "from memory"
+        formula = return_period.return_period_formula(**_values()["return_period"])
         steps = (
             Intermediate("vb0", f"basic speed, {edition['map']}", basic, "m/s", _SPEED, mark="stated"),
             Intermediate("T", "return period", site.return_period, "years", mark="stated"),
-            Intermediate("cprob", "return period factor", probability, "-", _SPEED, _CPROB, "seen"),
+            Intermediate("cprob", "return period factor", probability, "-", _SPEED, formula, "seen"),
             Intermediate("vb", "basic speed for the return period", mean, "m/s", _SPEED, "cprob*vb0", remembered),
             Intermediate("cg", "gust factor", gust, "-", _PEAK, mark=remembered),
             *roughness,
@@ -101,17 +102,9 @@ class Sans10160:
         )
 
 
-_CPROB = "((1 - 0.2*log(-log(1 - 1/T)))/(1 - 0.2*log(-log(0.98))))**0.5"
-
-
 def return_period_factor(years: float) -> float:
     """Return cprob for a return period (10160-3 cl. 7.2): 1 for 50 years."""
-    values = _values()["return_period"]
-
-    def reduced(period: float) -> float:
-        return 1.0 - float(values["shape"]) * math.log(-math.log(1.0 - 1.0 / period))
-
-    return float((reduced(years) / reduced(values["reference"])) ** values["exponent"])
+    return return_period.return_period_factor(years, **_values()["return_period"])
 
 
 def air_density(altitude: float) -> float:
