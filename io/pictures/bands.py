@@ -8,8 +8,9 @@ from itertools import pairwise
 
 import numpy as np
 
+from spanwright.io.pictures.lettering import cut_to, height_of, width_of
 from spanwright.io.pictures.runs import ChordHolding, Holder, Stretch
-from spanwright.io.pictures.sheet import Across, Sheet, cut_to, height_of, rectangle, width_of
+from spanwright.io.pictures.sheet import Across, Sheet, rectangle
 from spanwright.io.pictures.style import BODY, FAINT, HAIR, INK, PAPER, SMALL, SOFT, THICK, THIN
 from spanwright.io.pictures.view import View
 from spanwright.io.text import kilonewtons, metres

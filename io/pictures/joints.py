@@ -3,7 +3,8 @@
 from __future__ import annotations
 
 from spanwright.io.pictures.labels import Occupied, Words, place_near
-from spanwright.io.pictures.sheet import Sheet, disc, height_of, width_of
+from spanwright.io.pictures.lettering import height_of, width_of
+from spanwright.io.pictures.sheet import Sheet, disc
 from spanwright.io.pictures.style import INK, PAPER, SMALL, SOFT, THIN
 from spanwright.truss.arrays import FloatArray
 from spanwright.truss.model import Truss

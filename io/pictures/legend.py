@@ -8,8 +8,9 @@ from functools import partial
 
 import numpy as np
 
+from spanwright.io.pictures.lettering import height_of, width_of
 from spanwright.io.pictures.members import BARS, hatching
-from spanwright.io.pictures.sheet import Sheet, height_of, rectangle, width_of
+from spanwright.io.pictures.sheet import Sheet, rectangle
 from spanwright.io.pictures.style import BANDS, BODY, INK, PAPER, SOFT, THICK, THIN, Pen
 from spanwright.io.pictures.symbols import DASHES, TIE_WIDTH, bearing_outline, fill, purlin_square, stroke, tie_oblong
 from spanwright.io.pictures.values import draw_balloon
@@ -66,14 +67,22 @@ def draw_legend(sheet: Sheet, lines: list[list[Sign]], left: float, bottom: floa
     return top
 
 
-def member_signs() -> tuple[Sign, ...]:
-    """Return the signs of the bands of utilisation, of members over 1.00 and hatched, of compression and tension."""
+def band_signs() -> tuple[Sign, ...]:
+    """Return the signs of the bands of utilisation, of members over 1.00 and of hatched ones."""
+    first, *others = BANDS
     return (
-        *(Sign(_SAMPLE, partial(_swatch, colour=band.colour), band.words) for band in BANDS),
+        Sign(_SAMPLE, partial(_swatch, colour=first.colour), f"utilisation, strength: {first.words}"),
+        *(Sign(_SAMPLE, partial(_swatch, colour=band.colour), band.words) for band in others),
         Sign(_SAMPLE, _over, "over 1.00"),
         Sign(_SAMPLE, _hatched, "fails a limit (slenderness, packs)"),
-        Sign(_SAMPLE, partial(_bar, width=_PEN.strut), "C: governed in compression"),
-        Sign(_SAMPLE, partial(_bar, width=_PEN.tie), "T: in tension"),
+    )
+
+
+def member_signs() -> tuple[Sign, ...]:
+    """Return the signs of compression, of tension and of the member that governs its group."""
+    return (
+        Sign(_SAMPLE, partial(_bar, width=_PEN.strut), "C: compression governs"),
+        Sign(_SAMPLE, partial(_bar, width=_PEN.tie), "T: tension governs"),
         Sign(2.0 * _PEN.balloon, _balloon, "governs its group"),
     )
 

@@ -3,7 +3,8 @@
 from __future__ import annotations
 
 from spanwright.design.result import Design
-from spanwright.io.pictures.sheet import POINTS_PER_MM, Sheet, width_of
+from spanwright.io.pictures.lettering import POINTS_PER_MM, width_of
+from spanwright.io.pictures.sheet import Sheet
 from spanwright.io.pictures.style import INK, SMALL, SOFT
 from spanwright.io.text import kilonewtons
 from spanwright.truss.arrays import FloatArray
@@ -34,7 +35,7 @@ def _forces(design: Design) -> str:
     standard, project = design.setting.standard, design.setting.project
     return (
         f"Forces at restraints: {standard.restraint_share:.1%} of the greatest compression beside them "
-        f"by clause {standard.restraint_clause}, to either side; at the anchor, from {project.quantity} trusses "
+        f"by clause {standard.restraint_clause}, to either side; at the anchor, from {project.quantity} off "
         f"together, {kilonewtons(design.anchor_force)}."
     )
 

@@ -8,7 +8,8 @@ from spanwright import __version__
 from spanwright.design.cautions import SHORT_CAUTION
 from spanwright.design.result import Design
 from spanwright.io.files import input_hash
-from spanwright.io.pictures.sheet import Sheet, cut_to, height_of, rectangle, width_of
+from spanwright.io.pictures.lettering import cut_to, height_of, width_of
+from spanwright.io.pictures.sheet import Sheet, rectangle
 from spanwright.io.pictures.style import BODY, BOLD, HEADING, INK, MARGIN, PAGE, PAPER, SMALL, SOFT, THIN, TITLE
 from spanwright.io.pictures.view import View
 from spanwright.io.text import metres, rounded_up

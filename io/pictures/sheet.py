@@ -5,7 +5,6 @@ from __future__ import annotations
 import warnings
 from collections.abc import Iterator, Sequence
 from contextlib import contextmanager
-from functools import lru_cache
 from io import BytesIO
 from pathlib import Path
 from typing import Any, Literal
@@ -14,25 +13,17 @@ import matplotlib
 import numpy as np
 from matplotlib.collections import LineCollection, PolyCollection
 from matplotlib.figure import Figure
-from matplotlib.font_manager import FontProperties
 from matplotlib.text import Text
-from matplotlib.textpath import text_to_path
 from matplotlib.transforms import Affine2D
 
 from spanwright.io.files import write_atomically
+from spanwright.io.pictures.lettering import MM_PER_INCH, POINTS_PER_MM, Weight, font_of, plain
 from spanwright.io.pictures.style import BODY, INK, PAGE
 from spanwright.truss.arrays import FloatArray
 
-Weight = Literal["normal", "bold"]
 Across = Literal["left", "center", "right"]
-Upward = Literal["baseline", "center", "bottom", "top", "center_baseline"]
 
-MM_PER_INCH = 25.4
-POINTS_PER_MM = 72.0 / MM_PER_INCH
 DOTS_PER_INCH = 200
-
-CAPITAL = 0.73
-"""Height of a capital letter or a figure over the size of the font (DejaVu Sans)."""
 
 _PNG = {"Software": "Spanwright"}
 _SVG = {"Creator": "Spanwright", "Date": None}
@@ -40,6 +31,7 @@ _SVG = {"Creator": "Spanwright", "Date": None}
 _LineStyle = tuple[float, float, str, tuple[float, float] | None]
 _AreaStyle = tuple[float, str, str, float]
 _ABOVE_AREAS = 0.01
+
 _SETTINGS: dict[Any, Any] = {
     "svg.fonttype": "none",
     "svg.hashsalt": "spanwright",
@@ -108,21 +100,20 @@ class Sheet:
         size: float = BODY,
         *,
         across: Across = "left",
-        upward: Upward = "baseline",
         angle: float = 0.0,
         colour: str = INK,
         weight: Weight = "normal",
         order: float = 5.0,
         mark: str | None = None,
     ) -> None:
-        """Write one line at x, y in mm, turned by `angle` in degrees about that point; `mark` is its id in the SVG."""
+        """Write one line on x, y in mm, turned by `angle` in degrees about that point; `mark` is its id in the SVG."""
         written = Text(
             x,
             y,
             plain(words),
-            fontproperties=_font(size, weight),
+            fontproperties=font_of(size, weight),
             horizontalalignment=across,
-            verticalalignment=upward,
+            verticalalignment="baseline",
             rotation=angle,
             rotation_mode="anchor",
             color=colour,
@@ -171,39 +162,6 @@ class Sheet:
         self.figure.savefig(svg, format="svg", metadata=_SVG)
         write_atomically(folder / f"{name}.png", png.getvalue())
         write_atomically(folder / f"{name}.svg", svg.getvalue())
-
-
-def plain(words: str) -> str:
-    """Return text on one line, without the control characters that no font draws and no XML file may hold."""
-    return "".join(letter for letter in " ".join(words.split()) if letter.isprintable())
-
-
-@lru_cache(maxsize=64)
-def _font(size: float, weight: Weight) -> FontProperties:
-    return FontProperties(family="sans-serif", size=size, weight=weight)
-
-
-@lru_cache(maxsize=4096)
-def width_of(words: str, size: float, weight: Weight = "normal") -> float:
-    """Return the width of one line of text, mm."""
-    points, _, _ = text_to_path.get_text_width_height_descent(plain(words), _font(size, weight), ismath=False)
-    return float(points) / POINTS_PER_MM
-
-
-def height_of(size: float) -> float:
-    """Return the height of a capital letter or a figure, mm."""
-    return CAPITAL * size / POINTS_PER_MM
-
-
-def cut_to(words: str, width: float, size: float, weight: Weight = "normal") -> str:
-    """Return text that is no wider than `width` mm, with an ellipsis where its end had to go."""
-    words = plain(words)
-    if width_of(words, size, weight) <= width:
-        return words
-    kept = len(words)
-    while kept and width_of(words[:kept].rstrip() + "\u2026", size, weight) > width:
-        kept -= 1
-    return words[:kept].rstrip() + "\u2026"
 
 
 def rectangle(x: float, y: float, width: float, height: float) -> FloatArray:

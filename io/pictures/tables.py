@@ -7,7 +7,8 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from spanwright.io.pictures.sheet import POINTS_PER_MM, Sheet, cut_to, height_of, width_of
+from spanwright.io.pictures.lettering import POINTS_PER_MM, cut_to, height_of, width_of
+from spanwright.io.pictures.sheet import Sheet
 from spanwright.io.pictures.style import BODY, HAIR, INK, SMALL, SOFT, THICK
 
 GAP = 4.0

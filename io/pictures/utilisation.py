@@ -11,10 +11,11 @@ from spanwright.design.sizing import Governing
 from spanwright.io.pictures.boxes import box, boxes_along
 from spanwright.io.pictures.joints import draw_joint_names, draw_joints
 from spanwright.io.pictures.labels import Occupied
-from spanwright.io.pictures.legend import draw_legend, holding_signs, in_lines, member_signs
+from spanwright.io.pictures.legend import band_signs, draw_legend, holding_signs, in_lines, member_signs
+from spanwright.io.pictures.lettering import width_of
 from spanwright.io.pictures.members import Member, draw_members
 from spanwright.io.pictures.page import FOOT_TOP, HEADING_BOTTOM, LEFT, RIGHT, draw_foot, draw_heading, draw_scale
-from spanwright.io.pictures.sheet import Sheet, width_of
+from spanwright.io.pictures.sheet import Sheet
 from spanwright.io.pictures.state import GroupState, group_states, member_states
 from spanwright.io.pictures.style import SMALL, Pen, pen_for
 from spanwright.io.pictures.symbols import draw_holding, draw_overhangs, taken_by_signs
@@ -101,7 +102,7 @@ def _draw_beneath(sheet: Sheet, groups: tuple[GroupState, ...], restraint: Restr
     for group, middle in zip(groups, rows, strict=False):
         draw_balloon(sheet, np.array([LEFT + 1.8, middle]), group.letter, Pen(1.0))
     width = RIGHT - LEFT
-    lines = [*in_lines(member_signs(), width), *in_lines(holding_signs(restraint), width)]
+    lines = [*in_lines(band_signs(), width), *in_lines((*member_signs(), *holding_signs(restraint)), width)]
     return draw_legend(sheet, lines, LEFT, top + 1.5)
 
 

@@ -9,8 +9,9 @@ import numpy as np
 
 from spanwright.io.pictures.boxes import corners
 from spanwright.io.pictures.labels import Occupied, Words, place_along, readable_angle
+from spanwright.io.pictures.lettering import Weight, height_of, width_of
 from spanwright.io.pictures.members import Member
-from spanwright.io.pictures.sheet import Sheet, Weight, disc, height_of, width_of
+from spanwright.io.pictures.sheet import Sheet, disc
 from spanwright.io.pictures.state import MemberState, letters_from
 from spanwright.io.pictures.style import BODY, INK, PAPER, SMALL, THIN, Pen
 from spanwright.truss.arrays import FloatArray
