@@ -85,7 +85,7 @@ class Sans10160:
             *roughness,
             Intermediate("co", "topography", site.topography, "-", _PEAK, mark="stated"),
             Intermediate("vp", "peak speed", peak, "m/s", _PEAK, "cr*co*cg*vb", remembered),
-            Intermediate("H", "altitude of the site", site.altitude / 1e3, "m", mark="stated"),
+            Intermediate("alt", "altitude of the site", site.altitude / 1e3, "m", mark="stated"),
             Intermediate("rho", "air density", density, "kg/m3", "10160-3 Table 4", mark=remembered),
             Intermediate("qp", "peak wind pressure", pressure, "kPa", _PRESSURE, "rho*vp**2/2/1000", "seen"),
         )

@@ -8,7 +8,7 @@ from itertools import pairwise
 import numpy as np
 
 from spanwright.design.result import Design
-from spanwright.io.pictures.lettering import cut_to
+from spanwright.io.pictures.lettering import cut_to, height_of
 from spanwright.io.pictures.page import FOOT_TOP, HEADING_BOTTOM, LEFT, RIGHT, draw_foot, draw_heading
 from spanwright.io.pictures.sheet import Across, Sheet, rectangle
 from spanwright.io.pictures.style import FAINT, HAIR, INK, PALE, SMALL, SOFT, THICK, THIN
@@ -145,9 +145,9 @@ def _draw_wall(sheet: Sheet, view: View, bearing: FloatArray, pressure: float, h
     middle = (head + foot) / 2.0
     if abs(height) > 0.4:
         sheet.lines([_arrow(middle + off, middle) if height > 0.0 else _arrow(middle, middle + off)], HAIR, order=2.5)
-    place = middle + off + np.array([0.6 * outward, 0.0])
+    place = middle + off + np.array([0.6 * outward, -height_of(TINY) / 2.0])
     side: Across = "left" if outward > 0 else "right"
-    sheet.text(place[0], place[1], signed(pressure * 1e3), TINY, across=side, upward="center_baseline")
+    sheet.text(place[0], place[1], signed(pressure * 1e3), TINY, across=side)
 
 
 def _arrow(tail: FloatArray, tip: FloatArray) -> FloatArray:

@@ -124,14 +124,15 @@ def _draw_letter(sheet: Sheet, view: View, field: WindField, zone: Zone) -> None
     low, _, high, _ = _box(view, zone.x0, zone.z0, zone.x1, zone.z1)
     wide, tall = high - low
     x, y = (low + high) / 2.0
+    y -= height_of(SMALL) / 2.0
     if width_of(zone.name, SMALL) + 0.4 <= wide and height_of(SMALL) + 0.4 <= tall:
-        sheet.text(x, y, zone.name, SMALL, across="center", upward="center_baseline")
+        sheet.text(x, y, zone.name, SMALL, across="center")
     elif zone.x0 == field.shape.edges[0]:
-        sheet.text(low[0] - 0.8, y, zone.name, SMALL, across="right", upward="center_baseline")
+        sheet.text(low[0] - 0.8, y, zone.name, SMALL, across="right")
     elif zone.x1 == field.shape.edges[1]:
-        sheet.text(high[0] + 0.8, y, zone.name, SMALL, upward="center_baseline")
+        sheet.text(high[0] + 0.8, y, zone.name, SMALL)
     elif zone.z0 == field.shape.ends[0]:
-        sheet.text(x, low[1] - 0.8, zone.name, SMALL, across="center", upward="top")
+        sheet.text(x, low[1] - 0.8 - height_of(SMALL), zone.name, SMALL, across="center")
     elif zone.z1 == field.shape.ends[1]:
         sheet.text(x, high[1] + 0.8, zone.name, SMALL, across="center")
 

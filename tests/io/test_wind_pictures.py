@@ -1,0 +1,171 @@
+"""The pictures of wind from the site: what they show, to scale, the same bytes each time."""
+
+from __future__ import annotations
+
+import re
+from dataclasses import replace
+from pathlib import Path
+
+import numpy as np
+import pytest
+from matplotlib.collections import PolyCollection
+from matplotlib.colors import to_rgba
+from roofs import mono_pitch
+
+from spanwright.design.result import Design
+from spanwright.design.run import finish, prepare, size
+from spanwright.io.pictures.sheet import Sheet, drawing_board
+from spanwright.io.pictures.style import PALE
+from spanwright.io.pictures.wind import wind_sheets
+from spanwright.io.pictures.wind_cases import LONGEST
+from spanwright.io.pictures.wind_zones import wind_zones_sheet
+from spanwright.io.project_file import parse_project
+from spanwright.loads.cases import loads_on
+from spanwright.loads.combinations import combine
+from spanwright.loads.pressures import WindField
+from spanwright.loads.site import actions_from_site
+from spanwright.truss.arrays import FloatArray
+from spanwright.truss.forms import build_form
+from spanwright.truss.inputs import FormInput
+from spanwright.truss.model import Truss
+
+SHED = """
+title = "Shed"
+actions = "SANS 10160:2019"
+[truss]
+form = "Howe"
+span = "15 m"
+pitch = "12 deg"
+overhang = "0.6 m"
+spacing = "5 m"
+[site]
+length = "40 m"
+eaves_height = "6 m"
+terrain = "B"
+basic_wind_speed = "36 m/s"
+[restraint]
+anchored_purlins = "all"
+anchored_by = "diaphragm"
+bearings_held = true
+[members]
+steel = "S355JR"
+top_chord = "2L 100x100x8"
+bottom_chord = "2L 100x100x8"
+posts = "L 80x80x8"
+diagonals = "L 80x80x8"
+"""
+
+
+@pytest.fixture(scope="module")
+def design() -> Design:
+    """A truss of given sections, so that one pass designs it."""
+    project = parse_project(SHED)
+    setting = prepare(project)
+    load_set = loads_on(
+        setting.truss,
+        setting.restraint.lines,
+        project.loads,
+        project.site,
+        project.actions,
+        spacing=project.spacing,
+        tributary=project.tributary,
+    )
+    setting = replace(setting, load_set=load_set, combinations=combine(load_set.cases, project.actions, project.site))
+    return finish(setting, *size(setting, [0] * len(setting.groups)))
+
+
+@pytest.fixture(scope="module")
+def field(design: Design) -> WindField:
+    site = design.setting.load_set.site
+    assert site is not None
+    assert site.wind is not None
+    return site.wind
+
+
+@pytest.fixture(scope="module")
+def written(design: Design, tmp_path_factory: pytest.TempPathFactory) -> Path:
+    folder = tmp_path_factory.mktemp("wind")
+    with drawing_board():
+        for name, sheet in wind_sheets(design).items():
+            sheet.write(folder, name)
+    return folder
+
+
+def words(path: Path) -> list[str]:
+    return re.findall(r">([^<>]+)</text>", path.read_text(encoding="utf-8"))
+
+
+def test_both_pictures_are_written(written: Path) -> None:
+    assert sorted(path.name for path in written.iterdir()) == [
+        "wind_pressures.png",
+        "wind_pressures.svg",
+        "wind_zones.png",
+        "wind_zones.svg",
+    ]
+
+
+def test_no_picture_of_wind_that_is_stated(design: Design) -> None:
+    setting = replace(design.setting, load_set=replace(design.setting.load_set, site=None))
+    assert wind_sheets(replace(design, setting=setting)) == {}
+
+
+def test_every_zone_and_coefficient_is_named(written: Path) -> None:
+    """At 12 degrees, by hand in our rule sheet: F -1.14/+0.14, J -0.88/+0.06; along the ridge F -1.39."""
+    text = " ".join(words(written / "wind_zones.svg"))
+    for expected in (
+        "F \u22121.14 / +0.14",
+        "J \u22120.88 / +0.06",
+        "F \u22121.39",
+        "from the far gable",
+        "vb0",
+        "from memory",
+    ):
+        assert expected in text
+    letters = [entry for entry in words(written / "wind_zones.svg") if entry in tuple("FGHIJ")]
+    assert {letter: letters.count(letter) for letter in "FGHIJ"} == {"F": 8, "G": 6, "H": 6, "I": 6, "J": 2}
+
+
+def test_every_case_is_shown_with_its_pressures(field: WindField, written: Path) -> None:
+    text = words(written / "wind_pressures.svg")
+    for case in field.cases:
+        assert case.name in text
+        assert f"{case.walls[0] * 1e3:+.2f}".replace("-", "\u2212") in text
+    assert len([line for line in text if line.startswith("roof in all")]) == len(field.cases)
+
+
+def test_blocks_are_as_high_as_their_pressures(design: Design, field: WindField) -> None:
+    sheet = wind_sheets(design)["wind_pressures"]
+    sheet.finish()
+    expected = np.array([abs(value) for case in field.cases for value in (*case.net, *case.walls)])
+    expected = expected / max(abs(case.net).max() for case in field.cases) * LONGEST
+    heights = np.array([float(np.hypot(*(block[3] - block[0]))) for block in blocks(sheet)])
+    assert heights.max() == pytest.approx(max(expected))
+    assert all(np.isclose(expected, height).any() for height in heights)
+    assert all(np.isclose(heights, height).any() for height in expected)
+
+
+def blocks(sheet: Sheet) -> list[FloatArray]:
+    pale = [one for one in sheet.figure.findobj(PolyCollection) if np.allclose(one.get_facecolor(), to_rgba(PALE))]
+    return [np.asarray(path.vertices) for collection in pale for path in collection.get_paths()]
+
+
+def test_the_same_design_gives_the_same_bytes(design: Design, written: Path, tmp_path: Path) -> None:
+    with drawing_board():
+        wind_sheets(design)["wind_zones"].write(tmp_path, "wind_zones")
+    for name in ("wind_zones.svg", "wind_zones.png"):
+        assert (tmp_path / name).read_bytes() == (written / name).read_bytes()
+
+
+@pytest.mark.parametrize(
+    "truss", [mono_pitch(), build_form(FormInput("Pratt", 20e3, 0.05, 900.0, 8))], ids=["monopitch", "flat"]
+)
+def test_other_roofs_are_drawn(design: Design, truss: Truss, tmp_path: Path) -> None:
+    project = design.setting.project
+    assert project.site is not None
+    found = actions_from_site(truss, project.site, project.actions, project.loads, spacing=5e3, tributary=5e3)
+    assert found.wind is not None
+    with drawing_board():
+        wind_zones_sheet(design, found, found.wind).write(tmp_path, "wind_zones")
+    shown = " ".join(words(tmp_path / "wind_zones.svg"))
+    for zone in (zone for zones in found.wind.zones.values() for zone in zones):
+        assert f"{zone.name} \u2212" in shown
