@@ -105,6 +105,14 @@ def test_webs_in_line_through_an_inner_joint_are_one_piece_and_others_end_at_it(
     assert {"D3 D4", "D5 D6", "D2", "P3", "P5"} <= set(found)
 
 
+def test_webs_in_line_of_two_groups_are_two_pieces_that_end_beside_their_joint() -> None:
+    """Each stands one setback of 20 from M1, half-way along 4500: 2250 - 20 - 106.06 and 2250 - 20 - 229.45."""
+    where = shop(FINK, more='[groups]\nupper = ["D4", "D5"]')
+    assert {"D3", "D4", "D5", "D6"} <= set(bars_by_cut(where))
+    assert length(cut_of(where, "D3")) == pytest.approx(2123.94, abs=ROUNDING)
+    assert length(cut_of(where, "D4")) == pytest.approx(2000.55, abs=ROUNDING)
+
+
 def test_webs_in_line_at_a_chord_are_two_pieces() -> None:
     truss = hand_made(
         "A 0 0, T1 4 3, T2 8 3, E 12 0, B1 4 0, B2 8 0, C1 4 -3, C2 8 -3",
@@ -255,6 +263,27 @@ def test_a_profile_to_a_round_tube_reaches_its_deepest_point(degrees: float, web
         # a point s up the web from the joint: height s sin a + across cos a, and sideways `beside`
         depths.append((math.sqrt(max(radius**2 - beside**2, 0.0)) - across * math.cos(angle)) / math.sin(angle))
     assert found.length - found.end.beyond == pytest.approx(min(depths), abs=0.05)
+
+
+def test_round_tubes_are_measured_to_the_tips_of_their_saddles() -> None:
+    """A web of 60.3 meets one of 139.7 square: the saddle is sqrt(69.85^2 - 30.15^2) = 63.01 from the axis.
+
+    At 85 degrees it is as deep, farther round. The post is 900 between joints: 900 - 2 x 63.01.
+    """
+    round_tubes = {
+        "top_chord": "CHS 139.7x5",
+        "bottom_chord": "CHS 139.7x5",
+        "posts": "CHS 60.3x4",
+        "diagonals": "CHS 60.3x4",
+    }
+    assert length(cut_of(shop(PRATT, sections=round_tubes), "P0")) == pytest.approx(773.98, abs=0.02)
+
+
+def test_the_angles_of_a_starred_pair_are_in_opposite_corners() -> None:
+    upper, lower = lying(find("2L star 60x60x6", steel="S355JR", gap=8.0), "top chord")
+    assert (upper.lower, upper.upper, lower.lower, lower.upper) == (4.0, 64.0, -64.0, -4.0)
+    assert (upper.heel_up, lower.heel_up) == (False, True)
+    assert upper.far != lower.far
 
 
 def test_edges_of_a_web_allow_for_either_way_round() -> None:

@@ -4,17 +4,22 @@ from __future__ import annotations
 
 from collections import Counter
 from dataclasses import replace
+from typing import cast
 
 import numpy as np
 import pytest
 from demos import DEMOS, demo
-from workshop import FINK, HOWE, PRATT, Shop, shop
+from roofs import parallel
+from workshop import FINK, HOWE, PRATT, Shop, hand_made_shop, shop
 
+from spanwright.design.candidates import Candidates
 from spanwright.design.cutting import cuts
 from spanwright.design.packs import packs_by_bar
 from spanwright.design.pieces import Piece
 from spanwright.design.result import Design
 from spanwright.design.run import design
+from spanwright.design.standard import Demand, Standard
+from spanwright.truss.arrays import IntArray
 from spanwright.truss.errors import InputError
 
 
@@ -85,6 +90,17 @@ def test_webs_are_rounded_down_and_chords_to_the_nearest() -> None:
             assert abs(piece.cut_length - round(piece.cut_length)) == 0.0
         else:
             assert 0.0 <= cut.axis - piece.cut_length < 1.0
+
+
+def test_the_dust_of_doubles_does_not_make_two_marks_of_one_piece() -> None:
+    """Posts of a flat truss, 2000 between joints and 1900 between chords of 100 mm; one is 1e-7 mm too short."""
+    truss = parallel()
+    xy = truss.xy.copy()
+    xy[truss.joint_names.index("T1")] -= (0.0, 1e-7)
+    tubes = dict.fromkeys(("top_chord", "bottom_chord"), "SHS 100x100x5") | {"diagonals": "SHS 50x50x4"}
+    where = hand_made_shop(replace(truss, xy=xy), tubes)
+    post = next(piece for piece in where.pieces if "B1-T1" in piece.bars)
+    assert (post.bars, post.cut_length) == (("B1-T1", "B2-T2", "B3-T3"), 1900.0)
 
 
 def test_mass_and_paint_area_are_the_handbook_s_times_the_length() -> None:
@@ -205,6 +221,21 @@ def test_packs_of_one_size_share_a_mark_and_say_where_they_go() -> None:
     assert pack.remarks[0] == "3 in each of TC1 to TC10, 394 mm apart"
     assert pack.remarks[1] == f"{tie} in each of BC1 to BC10, {1500 / (tie + 1):.0f} mm apart"
     assert "welded;" in pack.remarks[2]
+
+
+class PacksInStrutsOnly:
+    """A standard that asks for no packs in one of the bars."""
+
+    def packs_per_panel(self, candidates: Candidates, demand: Demand) -> IntArray:
+        return np.array([[0 if bar == "BC1" else candidates.pieces - 1 for bar in demand.bars]])
+
+
+def test_members_without_packs_are_not_among_those_of_the_plate() -> None:
+    where = shop(HOWE)
+    standard = cast(Standard, PacksInStrutsOnly())
+    pack = Shop(replace(where.setting, standard=standard), where.demand, where.choices).piece("R1-PK2")
+    assert pack.bars == tuple(f"BC{number}" for number in range(2, 11))
+    assert pack.per_truss == 9
 
 
 def test_a_pack_of_a_starred_pair_reaches_over_both_legs() -> None:

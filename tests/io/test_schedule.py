@@ -5,10 +5,12 @@ from __future__ import annotations
 import csv
 import zipfile
 from dataclasses import replace
+from datetime import datetime
 from functools import cache
 from pathlib import Path
 from typing import Any
 
+import numpy as np
 import openpyxl
 import pytest
 from demos import DEMOS, demo
@@ -176,6 +178,13 @@ def test_moments_stand_where_the_chord_bends(tmp_path: Path) -> None:
     assert all(moments[bar] is None for bar in moments if not bar.startswith("TC"))
 
 
+def test_a_moment_that_hogs_is_negative(tmp_path: Path) -> None:
+    store = done("pratt_store")
+    demand = replace(store.demand, sag=np.full_like(store.demand.sag, 2e6), hog=np.full_like(store.demand.hog, 3e6))
+    rows = table(workbook(replace(store, demand=demand), tmp_path)["Members"])
+    assert {row["Greatest moment (sagging +), kNm"] for row in rows} == {-3.0}
+
+
 def test_the_cutting_list_cuts_what_the_parts_list_asks_for(result: Design, tmp_path: Path) -> None:
     sheets = workbook(result, tmp_path)
     stock = result.setting.project.members.stock_length
@@ -222,6 +231,8 @@ def test_the_same_design_gives_the_same_bytes(result: Design, tmp_path: Path) ->
     for name in ("schedule.csv", "schedule.xlsx"):
         first, second = ((folder / name).read_bytes() for folder in folders)
         assert first == second
+    # and on another day
+    assert openpyxl.load_workbook(folders[0] / "schedule.xlsx").properties.created == datetime(2000, 1, 1)
 
 
 HOSTILE = [
