@@ -22,6 +22,7 @@ from spanwright.io.pictures.style import BODY, INK, PAGE
 from spanwright.truss.arrays import FloatArray
 
 Across = Literal["left", "center", "right"]
+Upward = Literal["baseline", "center", "bottom", "top", "center_baseline"]
 
 DOTS_PER_INCH = 200
 
@@ -100,20 +101,21 @@ class Sheet:
         size: float = BODY,
         *,
         across: Across = "left",
+        upward: Upward = "baseline",
         angle: float = 0.0,
         colour: str = INK,
         weight: Weight = "normal",
         order: float = 5.0,
         mark: str | None = None,
     ) -> None:
-        """Write one line on x, y in mm, turned by `angle` in degrees about that point; `mark` is its id in the SVG."""
+        """Write one line at x, y in mm, turned by `angle` in degrees about that point; `mark` is its id in the SVG."""
         written = Text(
             x,
             y,
             plain(words),
             fontproperties=font_of(size, weight),
             horizontalalignment=across,
-            verticalalignment="baseline",
+            verticalalignment=upward,
             rotation=angle,
             rotation_mode="anchor",
             color=colour,
