@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import io
 from dataclasses import dataclass
-from datetime import UTC, datetime
+from datetime import datetime
 
 import xlsxwriter
 from xlsxwriter.format import Format
@@ -19,7 +19,7 @@ LONGEST_CELL = 2000
 LONGEST_HEADING = 110
 LONGEST_PAGE_HEADER = 80
 """Characters of user text in a page header, whose whole may have 255."""
-UNDATED = datetime(2000, 1, 1, tzinfo=UTC).replace(tzinfo=None)
+UNDATED = datetime(2000, 1, 1)
 """Written as the date of creation, so that the same input gives the same bytes."""
 
 
