@@ -1,4 +1,7 @@
-"""From the zones of a roof to the pressures on one truss: by area over its own strip of roof, for every wind case."""
+"""From the zones of a roof to the pressures on one truss: by area over its own strip of roof, for every wind case.
+
+Friction along the roof is left out: it goes to the bracing, not to the trusses.
+"""
 
 from __future__ import annotations
 

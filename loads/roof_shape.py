@@ -61,6 +61,12 @@ def roof_shape(truss: Truss, site: SiteInput) -> RoofShape:
     )
     bearings = truss.xy[[truss.bearing_joints[0], truss.bearing_joints[-1]], 0]
     walls = (float(bearings[0]), float(bearings[1]))
+    if site.width is not None and site.width < walls[1] - walls[0] - TOLERANCES.same_point:
+        raise InputError(
+            f"the building is {site.width / 1e3:g} m wide, less than the truss spans, {(walls[1] - walls[0]) / 1e3:g} m",
+            "state its width from wall to wall, or leave the key out",
+            "site.width",
+        )
     at_walls = np.interp(walls, xy[:, 0], xy[:, 1])
     lower = float(at_walls.min())
     two = kind in ("duopitch", "trough")

@@ -125,6 +125,8 @@ def _draw_letter(sheet: Sheet, view: View, field: WindField, zone: Zone) -> None
     wide, tall = high - low
     x, y = (low + high) / 2.0
     y -= height_of(SMALL) / 2.0
+    if field.shape.two_slopes and zone.x0 < field.shape.middle < zone.x1:
+        x -= wide / 4.0  # clear of the ridge
     if width_of(zone.name, SMALL) + 0.4 <= wide and height_of(SMALL) + 0.4 <= tall:
         sheet.text(x, y, zone.name, SMALL, across="center")
     elif zone.x0 == field.shape.edges[0]:
@@ -168,7 +170,7 @@ def _draw_caption(sheet: Sheet, field: WindField, wind: WindFrom, cell: _Cell, b
 
 
 def _coefficients(values: dict[Sign, float]) -> str:
-    return " / ".join(signed(value) for value in values.values())
+    return " / ".join(dict.fromkeys(signed(value) for value in values.values()))
 
 
 def signed(value: float) -> str:

@@ -268,6 +268,7 @@ def test_doors_shut_in_storms_count_as_closed_and_are_named() -> None:
     [
         ({"position": 41e3}, "site.truss", "outside a building"),
         ({"position": "first interior", "length": 4e3}, "site.truss", "outside a building"),
+        ({"width": 15e3}, "site.width", "less than the truss spans"),
         ({"eaves_height": 800.0}, "site.eaves_height", "1.000 m deep"),
         ({"wind_speed": 28.0}, "site.basic_wind_speed", "does not go with"),
         ({"openings": (Opening("left wall", 75e6), Opening("near gable", 40e6))}, "site.openings", "canopy"),
