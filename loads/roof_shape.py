@@ -61,9 +61,10 @@ def roof_shape(truss: Truss, site: SiteInput) -> RoofShape:
     )
     bearings = truss.xy[[truss.bearing_joints[0], truss.bearing_joints[-1]], 0]
     walls = (float(bearings[0]), float(bearings[1]))
-    if site.width is not None and site.width < walls[1] - walls[0] - TOLERANCES.same_point:
+    span = walls[1] - walls[0]
+    if site.width is not None and site.width < span - TOLERANCES.same_point:
         raise InputError(
-            f"the building is {site.width / 1e3:g} m wide, less than the truss spans, {(walls[1] - walls[0]) / 1e3:g} m",
+            f"the building is {site.width / 1e3:g} m wide, less than the truss spans, {span / 1e3:g} m",
             "state its width from wall to wall, or leave the key out",
             "site.width",
         )
@@ -79,7 +80,7 @@ def roof_shape(truss: Truss, site: SiteInput) -> RoofShape:
         middle=float(xy[turn, 0]) if two else (edges[0] + edges[1]) / 2,
         ends=(0.0 - site.gable_overhang, site.length + site.gable_overhang),
         length=site.length,
-        width=site.width or walls[1] - walls[0],
+        width=site.width or span,
         height=site.eaves_height + float(xy[:, 1].max()) - lower,
         eaves=(site.eaves_height + float(at_walls[0]) - lower, site.eaves_height + float(at_walls[1]) - lower),
     )
