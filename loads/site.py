@@ -72,7 +72,13 @@ class SiteActions:
     @property
     def cautions(self) -> tuple[str, ...]:
         """What a printed copy of the standard must confirm."""
-        return to_verify(self.standard, self.steps[len(self.permanent) :])
+        return to_verify(self.standard, (*self.steps[len(self.permanent) :], *self._tables()))
+
+    def _tables(self) -> Iterator[Intermediate]:
+        if self.wind is not None:
+            used = dict.fromkeys(zone.table for zones in self.wind.zones.values() for zone in zones)
+            for table in (*(CLAUSES[table] for table in used), "cpe table of walls"):
+                yield Intermediate("cpe", table, math.nan, "-", mark="from memory")
 
     def _steps(self) -> Iterator[Intermediate]:
         yield from self.permanent
@@ -80,9 +86,6 @@ class SiteActions:
             yield from self.imposed.steps
         if self.wind is not None:
             yield from self.wind.peak.steps
-            tables = dict.fromkeys(zone.table for zones in self.wind.zones.values() for zone in zones)
-            for table in (*(CLAUSES[table] for table in tables), "cpe table of walls"):
-                yield Intermediate("cpe", table, math.nan, "-", mark="from memory")
             yield from self.wind.internal
         for arrangement in self.snow:
             yield from arrangement.steps
@@ -109,17 +112,11 @@ def actions_from_site(
     area = (strip[1] - strip[0]) * (shape.edges[1] - shape.edges[0])
     imposed = standard.imposed(site, shape, area)
     permanent = _permanent(shape)
-    settled = loads
-    if "roof_permanent" in site.derive:
-        settled = replace(settled, roof_permanent=_total(permanent))
-    if "roof_imposed" in site.derive:
-        settled = replace(settled, roof_imposed=imposed.pressure)
-    if "man_load" in site.derive:
-        settled = replace(settled, man_load=imposed.man)
     wind = None
     if "wind" in site.derive:
         peak = standard.peak_pressure(site, shape.height)
         wind = WindField(shape, site, peak, standard.internal_pair, strip)
+    settled = _settled(site, loads, imposed, permanent)
     return SiteActions(
         standard=actions,
         site=site,
@@ -132,6 +129,16 @@ def actions_from_site(
         snow=standard.snow(site, shape) if "snow" in site.derive else (),
         permanent=permanent if "roof_permanent" in site.derive else (),
         warnings=tuple(_warnings(site, loads, settled, imposed, wind)),
+    )
+
+
+def _settled(site: SiteInput, loads: LoadsInput, imposed: Imposed, permanent: tuple[Intermediate, ...]) -> LoadsInput:
+    """Return the loads with what was left to the site filled in."""
+    return replace(
+        loads,
+        roof_permanent=_total(permanent) if "roof_permanent" in site.derive else loads.roof_permanent,
+        roof_imposed=imposed.pressure if "roof_imposed" in site.derive else loads.roof_imposed,
+        man_load=imposed.man if "man_load" in site.derive else loads.man_load,
     )
 
 
