@@ -9,6 +9,7 @@ import numpy as np
 
 from spanwright.design.analysis import Analysis
 from spanwright.design.certificate import NextLighter
+from spanwright.design.dispatch import Assembly, assembly
 from spanwright.design.missing import Missing
 from spanwright.design.pieces import Piece
 from spanwright.design.reactions import BearingForce
@@ -30,7 +31,7 @@ class Design:
     restraint_forces : what each counted restraint must resist; anchor_force : their sum at the anchor, N, for all
         trusses of the project.
     second_difference : N, largest difference of the bar forces found without stiffness.
-    pieces : what the workshop cuts, empty where the design does not pass.
+    pieces : what the workshop cuts, empty where a member does not pass.
     warnings : sentences.
     """
 
@@ -70,6 +71,11 @@ class Design:
         """(b,) True where a pass-or-fail row (slenderness, pack spacing) fails."""
         failed: BoolArray = self._greatest("limit") > 1.0
         return failed
+
+    @cached_property
+    def assembly(self) -> Assembly:
+        """One truss as it leaves the workshop; its mass is that of the pieces."""
+        return assembly(self.setting, self.choices, self.pieces)
 
     def _greatest(self, kind: str) -> FloatArray:
         greatest = np.zeros(len(self.setting.truss.bar_names))

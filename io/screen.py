@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from pathlib import Path
+
 from rich.console import Console
 from rich.markup import escape
 from rich.table import Table
@@ -15,8 +17,11 @@ MISSING_SHOWN = 3
 """Rows of what the roof cannot lose that fit on the screen; the rest is in the files."""
 
 
-def print_summary(design: Design, console: Console | None = None) -> None:
-    """Print mass, deflection, each group's section with what governs it, what the roof cannot lose, and warnings."""
+def print_summary(design: Design, console: Console | None = None, *, written_to: Path | None = None) -> None:
+    """Print mass, deflection, each group's section with what governs it, what the roof cannot lose, and warnings.
+
+    written_to : the folder that holds the files of this design, if any were written.
+    """
     out = console or Console(highlight=False)
     setting = design.setting
     project, truss = setting.project, setting.truss
@@ -43,6 +48,8 @@ def print_summary(design: Design, console: Console | None = None) -> None:
         out.print(f"warning: {escape(warning)}")
     verdict = "every member passes" if design.passes else "NOT PASSING"
     out.print(f"[bold]{verdict}[/bold]   greatest utilisation {rounded_up(float(design.utilisation.max()))}")
+    if written_to is not None:
+        out.print(f"written to {escape(str(written_to))}" + ("" if design.pieces else "; no schedule and no drawing"))
     out.print(f"[dim]{SHORT_CAUTION}[/dim]")
 
 

@@ -38,6 +38,9 @@ def arguments(parser: ArgumentParser) -> None:
     parser.add_argument("project", type=Path, metavar="PROJECT.toml", help="the project file")
     parser.add_argument("--out", type=Path, metavar="DIR", help="folder for results (default: PROJECT.out beside it)")
     parser.add_argument("--no-pictures", action="store_true", help="leave out the pictures, which take longest")
+    parser.add_argument(
+        "--every-member", action="store_true", help="work every member in calculation.pdf, not one of each group"
+    )
 
 
 def run(arguments: Namespace) -> int:
@@ -64,6 +67,7 @@ def carry_out(arguments: Namespace, station: Callable[[Project], Design]) -> int
         result = station(project)
     except SpanwrightError as error:
         raise error.located(file=str(path)) from error
-    write_all(result, arguments.out or path.with_name(f"{path.stem}.out"), pictures=not arguments.no_pictures)
-    print_summary(result)
+    folder = arguments.out or path.with_name(f"{path.stem}.out")
+    write_all(result, folder, pictures=not arguments.no_pictures)
+    print_summary(result, written_to=folder)
     return 0 if result.passes else 1

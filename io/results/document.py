@@ -11,7 +11,7 @@ from spanwright.design.cautions import CAUTIONS
 from spanwright.design.result import Design
 from spanwright.io.files import input_hash, write_atomically
 from spanwright.io.results.actions import cases, combinations, deflection, equilibrium, reactions
-from spanwright.io.results.members import groups, members, pieces
+from spanwright.io.results.members import assembly_of, groups, members, pieces
 from spanwright.io.results.numbers import kilograms, millimetres
 from spanwright.io.results.restraint import restraint
 
@@ -54,6 +54,7 @@ def document(design: Design) -> dict[str, Any]:
         "members": members(design),
         "groups": groups(design),
         "pieces": pieces(design),
+        "assembly": assembly_of(design),
         "restraint": restraint(design),
         "equilibrium": equilibrium(design),
         "deflection": deflection(design),

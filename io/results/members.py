@@ -128,7 +128,24 @@ def pieces(design: Design) -> list[dict[str, Any]]:
             "quantity": piece.quantity,
             "cut_length_mm": millimetres(piece.cut_length),
             "mass_kg": kilograms(piece.mass),
+            "ends": list(piece.ends),
             "bars": list(piece.bars),
+            "remarks": list(piece.remarks),
         }
         for piece in design.pieces
     ]
+
+
+def assembly_of(design: Design) -> dict[str, Any] | None:
+    """Return one truss as it is lifted; None where the design does not pass."""
+    if not design.pieces:
+        return None
+    whole = design.assembly
+    return {
+        "length_mm": millimetres(whole.length),
+        "height_mm": millimetres(whole.height),
+        "width_mm": millimetres(whole.width),
+        "mass_kg": kilograms(whole.mass),
+        "lift_mass_kg": kilograms(whole.lift_mass),
+        "remarks": list(whole.remarks),
+    }

@@ -4,7 +4,6 @@ from __future__ import annotations
 
 from spanwright import __version__
 from spanwright.design.cautions import CAUTIONS
-from spanwright.design.dispatch import assembly
 from spanwright.design.nesting import END_TRIM, KERF
 from spanwright.design.result import Design
 from spanwright.design.standard import Ends
@@ -57,7 +56,7 @@ def notes_table(design: Design) -> Table:
 def _truss(design: Design) -> list[tuple[str, str]]:
     setting = design.setting
     project, truss = setting.project, setting.truss
-    whole = assembly(setting, design.choices, design.pieces)
+    whole = design.assembly
     form = f"{truss.form}, diagonals {truss.lean}" if truss.lean else truss.form
     return [
         ("Truss", f"{project.title}; mark {project.mark}, {project.quantity} off; {form}, span {metres(truss.span)}"),
