@@ -1,0 +1,208 @@
+"""Cross-sections through each kind of member, with which way round it stands, gap and packing plates, dimensioned."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from dataclasses import dataclass
+
+import numpy as np
+
+from spanwright.design.name_ranges import in_ranges
+from spanwright.design.pieces import Piece
+from spanwright.design.result import Design
+from spanwright.design.sizing import Choice
+from spanwright.io.drawing.cross_shapes import Shape, shapes
+from spanwright.io.drawing.dimensions import Dimension
+from spanwright.io.drawing.lettering import LARGE, STEP, TEXT, wrapped
+from spanwright.io.drawing.pen import Pen
+from spanwright.io.drawing.standards import (
+    DIMENSIONS,
+    GUSSETS,
+    NOTES,
+    PACKS,
+    SECTION_HATCH,
+    SECTIONS,
+    SETTING_OUT,
+)
+from spanwright.truss.arrays import FloatArray
+
+SIDE, LINE = 20.0, 8.0
+"""mm on paper kept for dimensions on each side of the steel, and from line to line."""
+OVER = 12.0
+"""mm on paper kept for dimensions above and below the steel."""
+BEYOND = 5.0
+"""mm on paper by which centre lines and gussets pass the steel."""
+NARROWEST = 62.0
+"""mm on paper: least width of one cross-section, for its caption."""
+HATCH = 1.4
+"""mm on paper between hatching lines (ISO 128-3: at least 0.7)."""
+
+
+@dataclass(frozen=True, eq=False)
+class Cell:
+    """One cross-section: what it goes through, its pieces, its packing plate (4, 2) or None, gusset faces, caption."""
+
+    choice: Choice
+    pieces: tuple[Shape, ...]
+    pack: FloatArray | None
+    gusset: float
+    title: str
+    caption: tuple[str, ...]
+
+    @property
+    def steel(self) -> FloatArray:
+        """(n, 2) mm, all points of steel, packing plate included."""
+        rings = [ring for piece in self.pieces for ring in piece.rings]
+        return np.vstack([*rings, *([] if self.pack is None else [self.pack])])
+
+
+@dataclass(frozen=True, eq=False)
+class CrossSections:
+    """Cross-sections 1:scale in `columns` columns; cell : (2,) width and height of each on paper, mm."""
+
+    scale: int
+    columns: int
+    cells: tuple[Cell, ...]
+    cell: FloatArray
+
+    @property
+    def size(self) -> FloatArray:
+        """(2,) width and height on paper, mm."""
+        return self.cell * np.array([self.columns, -(-len(self.cells) // self.columns)])
+
+
+def cross_sections(design: Design, scale: int, columns: int) -> CrossSections:
+    """Return the cross-sections of a passing design, one for each group of members."""
+    bare = [_cell(design, choice, NARROWEST) for choice in design.choices]
+    steel = np.max([np.ptp(cell.steel, axis=0) for cell in bare], axis=0) / scale
+    width = max(NARROWEST, float(steel[0]) + 2.0 * SIDE)
+    cells = tuple(_cell(design, choice, width - 4.0) for choice in design.choices)
+    lines = max(len(cell.caption) for cell in cells)
+    height = float(steel[1]) + 2.0 * OVER + LARGE * STEP + lines * TEXT * STEP + 4.0
+    return CrossSections(scale, min(columns, len(cells)), cells, np.array([width, height]))
+
+
+def _cell(design: Design, choice: Choice, width: float) -> Cell:
+    gap = design.setting.project.members.gap
+    truss, section = design.setting.truss, choice.section
+    names = [truss.bar_names[bar] for bar in choice.group.bars]
+    packs = [piece for piece in design.pieces if piece.description == "packing plate" and set(piece.bars) & set(names)]
+    texts = [choice.name, in_ranges(names)]
+    texts += [f"packs {piece.mark}: {piece.section} - {piece.cut_length:.0f}" for piece in packs]
+    return Cell(
+        choice,
+        shapes(section, choice.group.role, gap),
+        _pack(choice, packs[0]) if packs else None,
+        gap if section.family == "L" else 0.0,
+        choice.group.name.upper(),
+        tuple(line for text in texts for line in wrapped(text, width, most=2)),
+    )
+
+
+def _pack(choice: Choice, piece: Piece) -> FloatArray:
+    """Return the packing plate between the legs of a pair, its middle half-way down the connected legs."""
+    rings = [ring for shape in shapes(choice.section, choice.group.role, 0.0) for ring in shape.rings]
+    y = np.vstack(rings)[:, 1]
+    middle, half = (float(y.min()) + float(y.max())) / 2.0, piece.cut_length / 2.0
+    across = choice.section.gap / 2.0
+    return np.array(
+        [[-across, middle - half], [across, middle - half], [across, middle + half], [-across, middle + half]]
+    )
+
+
+def draw_cross_sections(pen: Pen, found: CrossSections, corner: FloatArray) -> None:
+    """Draw cross-sections in model space, the upper left corner of all at `corner` (2,), mm."""
+    for place, cell in enumerate(found.cells):
+        row, column = divmod(place, found.columns)
+        left = corner + found.scale * found.cell * np.array([column, -row])
+        _draw_cell(pen, cell, left, found.cell)
+
+
+def _draw_cell(pen: Pen, cell: Cell, corner: FloatArray, size: FloatArray) -> None:
+    unit = pen.scale
+    x = corner[0] + size[0] / 2.0 * unit
+    y = corner[1] - (LARGE + 1.0) * unit
+    pen.text(NOTES, (x, y), cell.title, LARGE, across="centre")
+    for line in cell.caption:
+        y -= TEXT * STEP * unit
+        pen.text(NOTES, (x, y), line, across="centre")
+    steel = cell.steel
+    low, high = steel.min(axis=0), steel.max(axis=0)
+    middle = np.array([x, (y - 2.0 * unit + corner[1] - size[1] * unit) / 2.0])
+    origin = middle - np.array([(low[0] + high[0]) / 2.0, (low[1] + high[1]) / 2.0])
+    for piece in cell.pieces:
+        rings = [ring + origin for ring in piece.rings]
+        for ring in rings:
+            pen.path(SECTIONS, ring, closed=True)
+        pen.hatching(SECTION_HATCH, rings, HATCH)
+    if cell.pack is not None:
+        pen.path(PACKS, cell.pack + origin, closed=True)
+    _draw_axes(pen, cell, origin, low, high)
+    for one in _dimensions(cell, unit):
+        pen.dimension(DIMENSIONS, one.start + origin, one.end + origin, one.line + origin, one.angle)
+
+
+def _draw_axes(pen: Pen, cell: Cell, origin: FloatArray, low: FloatArray, high: FloatArray) -> None:
+    """Draw the plane of the truss, the setting-out line's level, and the faces of the gusset of a single angle."""
+    beyond = BEYOND * pen.scale
+    left, right = min(float(low[0]), -cell.gusset / 2.0) - beyond / 2.0, float(high[0]) + beyond / 2.0
+    bottom, top = float(low[1]) - beyond, float(high[1]) + beyond
+    pen.line(SETTING_OUT, origin + [0.0, bottom], origin + [0.0, top])
+    pen.line(SETTING_OUT, origin + [left, 0.0], origin + [right, 0.0])
+    if cell.gusset:
+        for side in (-1.0, 1.0):
+            at = side * cell.gusset / 2.0
+            pen.line(GUSSETS, origin + [at, bottom], origin + [at, top])
+
+
+def _dimensions(cell: Cell, unit: float) -> Iterator[Dimension]:
+    """Return what a cross-section is dimensioned with, from its own origin."""
+    section = cell.choice.section
+    low, high = cell.steel.min(axis=0), cell.steel.max(axis=0)
+    rings = np.vstack([ring for piece in cell.pieces for ring in piece.rings])
+    if section.family in ("L", "2L", "2L star"):
+        yield from _of_angles(cell, rings, low, high, unit)
+    else:
+        depth, width, wall = (float(value[0]) for value in (section.depth, section.width, section.thickness))
+        yield _upright("depth", 0.0, -depth / 2.0, depth / 2.0, float(low[0]) - LINE * unit)
+        if section.family != "CHS":
+            yield _level("width", 0.0, -width / 2.0, width / 2.0, float(high[1]) + LINE * unit)
+        yield _level("wall", 0.0, width / 2.0 - wall, width / 2.0, float(low[1]) - LINE * unit)
+    if cell.pack is not None:
+        x, (bottom, top) = float(cell.pack[1, 0]), cell.pack[[1, 2], 1]
+        yield _upright("pack length", x, float(bottom), float(top), float(high[0]) + 2.0 * LINE * unit)
+
+
+def _of_angles(cell: Cell, rings: FloatArray, low: FloatArray, high: FloatArray, unit: float) -> Iterator[Dimension]:
+    section = cell.choice.section
+    leg, out, t = (float(value[0]) for value in (section.leg_connected, section.leg_outstanding, section.thickness))
+    back = section.gap / 2.0 if section.pieces == 2 else cell.gusset / 2.0
+    upper, lower = float(rings[:, 1].max()), float(rings[:, 1].min())
+    heel_up = cell.choice.group.role != "bottom chord"
+    star = section.family == "2L star"
+    heel = section.gap / 2.0 if star else upper if heel_up else lower
+    inward = 1.0 if star or not heel_up else -1.0
+    left, right = float(min(low[0], -back)) - LINE * unit, float(high[0]) + LINE * unit
+    level = upper + LINE * unit if heel_up or star else lower - LINE * unit
+    legs_low, legs_high = sorted((heel, heel + inward * leg))
+    yield _upright("connected leg", back, legs_low, legs_high, left)
+    if not star:
+        yield _upright("setting-out line", back, *sorted((heel, 0.0)), left - LINE * unit)
+    yield _upright("thickness", back + out, *sorted((heel, heel + inward * t)), right)
+    yield _level("outstanding leg", heel, back, back + out, level)
+    if section.pieces == 2:
+        yield _level("gap", heel, -back, back, level)
+        if not star:
+            yield _level("outstanding leg", heel, -back - out, -back, level)
+        else:
+            yield _upright("gap", back, -back, back, left - LINE * unit)
+    elif cell.gusset:
+        yield _level("gusset", heel, -back, back, level)
+
+
+def _level(what: str, y: float, left: float, right: float, at: float) -> Dimension:
+    return Dimension(what, np.array([left, y]), np.array([right, y]), np.array([left, at]), 0.0)
+
+
+def _upright(what: str, x: float, bottom: float, top: float, at: float) -> Dimension:
+    return Dimension(what, np.array([x, bottom]), np.array([x, top]), np.array([at, bottom]), 90.0)

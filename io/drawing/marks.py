@@ -1,0 +1,167 @@
+"""Marks and section names along the members, joint names and the numbers of purlin lines, so that none overlap."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator, Sequence
+from dataclasses import dataclass
+
+import numpy as np
+
+from spanwright.design.cutting import Cut, cuts
+from spanwright.design.lying import edges
+from spanwright.design.result import Design
+from spanwright.io.drawing.holding import PURLIN, Signs
+from spanwright.io.drawing.lettering import TEXT, width_of
+from spanwright.io.drawing.pen import Pen
+from spanwright.io.drawing.places import Occupied, along_member, near_point, with_leader
+from spanwright.io.drawing.standards import JOINTS, MARKS, PURLINS, Layer
+from spanwright.io.pictures.boxes import box, boxes_along
+from spanwright.truss.arrays import FloatArray
+
+CLEAR = 0.5
+"""mm on paper left free on all sides of a text."""
+OFF = 0.9
+"""mm on paper between a member's edge and the text beside it."""
+BEYOND_SIGNS = 8.5
+"""mm on paper from a chord to texts beyond its purlins and joint names."""
+LEADERS = tuple(np.arange(6.0, 60.0, 2.0))
+"""mm on paper: lengths of leaders, tried in this order."""
+ABOVE = (90.0, 60.0, 120.0, 40.0, 140.0, 0.0, 180.0)
+BELOW = (270.0, 300.0, 240.0, 320.0, 220.0, 0.0, 180.0)
+BESIDE = (180.0, 0.0, 135.0, 45.0, 225.0, 315.0, 90.0, 270.0)
+"""Directions in which the name of a joint of the top chord, of the bottom chord, or of neither or both is tried."""
+
+
+@dataclass(frozen=True, eq=False)
+class Label:
+    """One text on the elevation: its middle (2,) in model mm, its angle in degrees, and its leader (2, 2) or None."""
+
+    text: str
+    middle: FloatArray
+    angle: float
+    layer: Layer
+    leader: FloatArray | None = None
+
+    def box(self, scale: float) -> FloatArray:
+        """Return the (6,) box of its letters, model mm."""
+        return box(self.middle, np.radians(self.angle), width_of(self.text) * scale, TEXT * scale)
+
+
+def labels(design: Design, found: Signs) -> tuple[Label, ...]:
+    """Return every text of an elevation at the scale of its signs."""
+    scale = found.scale
+    occupied = Occupied(np.vstack([_steel(design), found.boxes]))
+    placed = [*_purlin_numbers(design, found, occupied), *_joint_names(design, scale, occupied)]
+    left = []
+    for cut in sorted(cuts(design.setting, design.choices), key=lambda cut: cut.axis):
+        along = _along(design, cut, scale, occupied)
+        placed += along
+        left += [] if along else [cut]
+    for cut in left:
+        placed += _with_leader(design, cut, scale, occupied)
+    return tuple(placed)
+
+
+def _steel(design: Design) -> FloatArray:
+    """Return the boxes of the steel and of the setting-out lines between."""
+    truss = design.setting.truss
+    found = [boxes_along(truss.xy[truss.ends], 1.0)]
+    for cut in cuts(design.setting, design.choices):
+        lower, upper = edges(cut.choice.section, cut.choice.group.role)
+        across = np.array([-cut.direction[1], cut.direction[0]])
+        line = np.array([cut.start, cut.finish]) + (lower + upper) / 2.0 * across
+        found.append(boxes_along(line[None], upper - lower))
+    return np.vstack(found)
+
+
+def _size(text: str, scale: float) -> tuple[float, float]:
+    return (width_of(text) + 2.0 * CLEAR) * scale, (TEXT + 2.0 * CLEAR) * scale
+
+
+def mark_of(design: Design, cut: Cut) -> str:
+    """Return the marks of the pieces that lie side by side in a run: "2 x P1-BC1", "P1-TC1L + P1-TC1R"."""
+    first = design.setting.truss.bar_names[cut.bars[0]]
+    marks = [
+        piece.mark for piece in design.pieces if first in piece.bars and piece.section in cut.choice.section.piece_names
+    ]
+    same = cut.choice.section.pieces > len(marks)
+    return f"{cut.choice.section.pieces} x {marks[0]}" if same else " + ".join(marks)
+
+
+def section_of(cut: Cut) -> str:
+    """Return the section in short: "2L 65x50x5"; which way round it stands is in the schedule and the cross-sections."""
+    return cut.choice.name.split(",")[0]
+
+
+def _along(design: Design, cut: Cut, scale: float, occupied: Occupied) -> list[Label]:
+    """Place mark and section along a member: in one line, else one on either side, else nothing."""
+    mark, section = mark_of(design, cut), section_of(cut)
+    together = _beside(f"{mark}  {section}", cut, scale, occupied)
+    if together:
+        return [together]
+    before = occupied.texts
+    apart = [_beside(text, cut, scale, occupied) for text in (mark, section)]
+    if all(apart):
+        return [label for label in apart if label]
+    occupied.texts = before
+    return []
+
+
+def _beside(text: str, cut: Cut, scale: float, occupied: Occupied) -> Label | None:
+    lower, upper = edges(cut.choice.section, cut.choice.group.role)
+    away = max(upper, -lower) + (OFF - CLEAR) * scale
+    role = cut.choice.group.role
+    aways = (away, away + BEYOND_SIGNS * scale) if "chord" in role else (away,)
+    sides = (-1.0, 1.0) if role == "bottom chord" else (1.0, -1.0)
+    place = along_member(np.array([cut.start, cut.finish]), _size(text, scale), aways, sides, occupied)
+    return Label(text, place.middle, place.angle, MARKS) if place else None
+
+
+def _with_leader(design: Design, cut: Cut, scale: float, occupied: Occupied) -> Iterator[Label]:
+    """Set mark and section off a member that is too short for them, with a leader to it."""
+    text = f"{mark_of(design, cut)}  {section_of(cut)}"
+    middle = (cut.start + cut.finish) / 2.0
+    found = with_leader(middle, _size(text, scale), [reach * scale for reach in LEADERS], occupied)
+    if found:
+        yield Label(text, found[0].middle, 0.0, MARKS, found[1])
+
+
+def _purlin_numbers(design: Design, found: Signs, occupied: Occupied) -> Iterator[Label]:
+    for line, (ring, upward, _) in zip(design.setting.restraint.lines, found.purlins, strict=True):
+        text, scale = str(line.number), found.scale
+        bearing = float(np.degrees(np.arctan2(upward[1], upward[0])))
+        place = near_point(
+            ring.mean(axis=0),
+            _size(text, scale),
+            ((PURLIN / 2.0 + 0.4) * scale, (PURLIN / 2.0 + 3.5) * scale),
+            (bearing, bearing + 40.0, bearing - 40.0),
+            occupied,
+        )
+        if place:
+            yield Label(text, place.middle, 0.0, PURLINS)
+
+
+def _joint_names(design: Design, scale: float, occupied: Occupied) -> Iterator[Label]:
+    truss = design.setting.truss
+    top, bottom = set(truss.top.joints), set(truss.bottom.joints)
+    reaches = [reach * scale for reach in (1.5, 3.0, 4.5, 6.5, 9.0)]
+    for joint, name in enumerate(truss.joint_names):
+        in_one = (joint in top) != (joint in bottom)
+        bearings: Sequence[float] = BESIDE if not in_one else ABOVE if joint in top else BELOW
+        place = near_point(truss.xy[joint], _size(name, scale), reaches, bearings, occupied)
+        if place:
+            yield Label(name, place.middle, 0.0, JOINTS)
+
+
+def draw_labels(pen: Pen, found: Sequence[Label]) -> None:
+    """Letter the texts and draw their leaders, which end on the member with a dot."""
+    for label in found:
+        pen.text(label.layer, label.middle, label.text, across="centre", up="middle", angle=label.angle)
+        if label.leader is not None:
+            pen.line(MARKS, *label.leader)
+            pen.area(MARKS, label.leader[1] + 0.45 * pen.scale * _disc())
+
+
+def _disc() -> FloatArray:
+    turn = np.linspace(0.0, 2.0 * np.pi, 13)[:-1]
+    return np.column_stack([np.cos(turn), np.sin(turn)])
