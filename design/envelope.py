@@ -35,9 +35,7 @@ class BarEnvelope:
 def envelope(wanted: Demand) -> tuple[BarEnvelope, ...]:
     """Return the envelope of every bar, in the truss's order."""
     effects = (wanted.axial, -wanted.axial, wanted.sag, wanted.hog)
-    return tuple(
-        BarEnvelope(bar, *(_extreme(effect[bar]) for effect in effects)) for bar in range(len(wanted.bars))
-    )
+    return tuple(BarEnvelope(bar, *(_extreme(effect[bar]) for effect in effects)) for bar in range(len(wanted.bars)))
 
 
 def _extreme(values: FloatArray) -> Extreme:

@@ -59,6 +59,9 @@ class Tolerances:
     long_ceiling_panel: float = 3000.0
     """mm on plan: in a longer bottom panel a ceiling's hangers stand between the joints; warned (project rule)."""
 
+    by_hand: float = 1e-3
+    """Relative: what a hand calculation may differ by from what was found (three figures of a pocket calculator)."""
+
     tiny_force: float = 1e-6
     """Relative to the largest bar force of a solution: smaller bar forces count as zero."""
 
@@ -73,6 +76,9 @@ class Tolerances:
 
     off_upright: float = 0.02
     """rad: a bar this near to vertical is a post, a chord turning less runs straight (5 mm at each end of 0.5 m)."""
+
+    spread: float = 0.05
+    """rad: drawn lines from one joint that spread by more are two bars, not one drawn twice (a roof of 3 degrees)."""
 
     steep_end: float = 0.52
     """rad (30 degrees): an outline's end bar this steep, beside a longer run, is an end diagonal (project rule)."""

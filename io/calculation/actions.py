@@ -24,7 +24,11 @@ def combinations(design: Design) -> Section:
     first = len(design.analysis.combinations) // len(design.analysis.arrangements)
     listed = list(zip(design.analysis.combinations, labels(design).values(), strict=True))
     rows = tuple((label, combination.limit_state, combination.name) for combination, label in listed[:first])
-    columns = (Column("no.", align="left"), Column("state", align="left"), Column("combination", align="left", share=1.0))
+    columns = (
+        Column("no.", align="left"),
+        Column("state", align="left"),
+        Column("combination", align="left", share=1.0),
+    )
     note = (
         "STR and STR-P: strength of members. EQU: holding down, reactions only. SLS: total deflection. SLS variable: "
         "deflection of one variable action alone."
@@ -72,7 +76,9 @@ def _greatest(design: Design) -> tuple[Table, ...]:
                 kilo(force.value, 2),
                 kilo(force.right, 2) if force.value else NONE,
                 kilo(force.down, 2) if force.value else NONE,
-                f"{numbered[force.combination]}: {force.combination}" if factored and force.value else force.combination or NONE,
+                f"{numbered[force.combination]}: {force.combination}"
+                if factored and force.value
+                else force.combination or NONE,
             )
             for force in design.bearing_forces
             if force.factored == factored
@@ -85,6 +91,8 @@ def _greatest(design: Design) -> tuple[Table, ...]:
             Column("down", "kN"),
             Column("combination" if factored else "cases", align="left", share=1.0),
         )
-        note = "" if factored else "Right and down: both components of the force of the truss on the bearing at that time."
+        note = (
+            "" if factored else "Right and down: both components of the force of the truss on the bearing at that time."
+        )
         tables.append(Table(columns, tuple(rows), title=f"{title}: the truss on its bearings", note=note))
     return tuple(tables)

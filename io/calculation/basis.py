@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from spanwright.design.cautions import CAUTIONS
 from spanwright.design.families import TUBES
+from spanwright.design.hand_checks import mass_per_area
 from spanwright.design.result import Design
 from spanwright.design.steels import steel
 from spanwright.io.calculation.blocks import Column, Fields, Paragraph, Points, Section, Table
@@ -22,17 +23,16 @@ def summary(design: Design) -> Section:
     """Return the result in short."""
     greatest = float(design.utilisation.max())
     verdict = "Every member passes." if design.passes else "NOT PASSING: see the groups and the warnings."
-    setting = design.setting
     return Section(
         "Result",
         (
             Paragraph(
                 f"{verdict} Greatest utilisation {rounded_up(greatest)}; mass {kilograms(design.mass)} a truss, "
-                f"{fixed(design.mass / (setting.truss.span * setting.project.spacing) * 1e6, 1)} kg/m² of plan, joint "
-                "to joint, without gussets and fixings."
+                f"{fixed(mass_per_area(design), 1)} kg/m² of plan, joint to joint, without gussets and fixings."
             ),
             groups(design),
             *_deflection_lines(design),
+            *_warned(design),
         ),
     )
 
@@ -48,7 +48,14 @@ def groups(design: Design) -> Table:
         elif lighter.section:
             next_one = f"{lighter.section}: {lighter.reason}"
         rows.append(
-            (choice.group.name, choice.name, rounded_up(found.ratio), found.bar, f"{found.check} ({found.clause})", next_one)
+            (
+                choice.group.name,
+                choice.name,
+                rounded_up(found.ratio),
+                found.bar,
+                f"{found.check} ({found.clause})",
+                next_one,
+            )
         )
     columns = (
         Column("group", align="left"),
@@ -84,6 +91,13 @@ def _deflection_lines(design: Design) -> tuple[Paragraph, ...]:
     )
 
 
+def _warned(design: Design) -> tuple[Paragraph, ...]:
+    count = len(design.warnings)
+    if not count:
+        return ()
+    return (Paragraph(f"{count} {'warning' if count == 1 else 'warnings'}: see the section Warnings."),)
+
+
 def basis(design: Design) -> Section:
     """Return scope, standards, materials and conventions."""
     setting = design.setting
@@ -98,15 +112,21 @@ def basis(design: Design) -> Section:
         + ("punched" if ends.punched else "drilled")
     )
     rows = (
-        ("Structure", f"{truss.form}{lean}, span {metres(truss.span)}, {len(truss.bar_names)} members, {project.quantity} "
-                      f"off, {metres(project.spacing)} apart{carried}"),
+        (
+            "Structure",
+            f"{truss.form}{lean}, span {metres(truss.span)}, {len(truss.bar_names)} members, {project.quantity} "
+            f"off, {metres(project.spacing)} apart{carried}",
+        ),
         ("Member standard", setting.standard.name),
         ("Loading standard", f"{project.actions}; load factors in the table of combinations"),
         ("Modulus of elasticity", f"{fixed(setting.standard.modulus, 0)} MPa"),
         ("End connections assumed", f"{joined}. They become requirements on the joints."),
         ("Restraint anchored by", project.restraint.anchored_by),
-        ("Model", "plane truss, pin joints, small displacements, linear elastic, loads at joints; the top chord besides "
-                  "as a continuous beam over its joints where purlins stand between them"),
+        (
+            "Model",
+            "plane truss, pin joints, small displacements, linear elastic, loads at joints; the top chord besides "
+            "as a continuous beam over its joints where purlins stand between them",
+        ),
     )
     return Section(
         "Scope and basis",
@@ -143,7 +163,9 @@ def _steels(design: Design) -> Table:
         Column("i out of plane", "mm"),
         Column("i least", "mm"),
     )
-    return Table(columns, tuple(rows), title="Sections and steel", note="i is the radius of gyration of the whole member.")
+    return Table(
+        columns, tuple(rows), title="Sections and steel", note="i is the radius of gyration of the whole member."
+    )
 
 
 def assumptions(design: Design) -> Section:
@@ -153,7 +175,13 @@ def assumptions(design: Design) -> Section:
     if defaults:
         columns = (Column("key of the project file", align="left", share=1.0), Column("taken", align="left", share=1.0))
         blocks.append(
-            Table(columns, defaults, title="Assumed by default, since the project file does not say", dense=True, side_by_side=2)
+            Table(
+                columns,
+                defaults,
+                title="Assumed by default, since the project file does not say",
+                dense=True,
+                side_by_side=2,
+            )
         )
     reason = design.setting.project.restraint.reason
     if reason:

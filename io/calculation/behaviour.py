@@ -39,8 +39,8 @@ def deflection(design: Design) -> Section:
     if found.sliding_combination:
         sliding += f", in {numbered[found.sliding_combination]}: {found.sliding_combination}"
     camber = (
-        f"{fixed(found.camber, 0)} mm at mid-span, for the permanent load, to the nearest {CAMBER_STEP:g} mm; state it on "
-        "the drawing as no-load, lying flat. Lengths in this document are those of the loaded geometry."
+        f"{fixed(found.camber, 0)} mm at mid-span, for the permanent load, to the nearest {CAMBER_STEP:g} mm; state it "
+        "on the drawing as no-load, lying flat. Lengths in this document are those of the loaded geometry."
         if found.camber
         else f"none: the permanent load deflects the truss by less than {CAMBER_LEAST:g} mm"
     )

@@ -1,4 +1,4 @@
-"""What the calculation is made of: sections of blocks, each plain text and numbers; the template gives them their looks.
+"""What the calculation is made of: sections of blocks, each plain text and numbers; the template gives the looks.
 
 The data handed to the template is `asdict` of these, with `kind` telling blocks apart.
 """
@@ -55,7 +55,8 @@ class Column:
 class Table:
     """A table whose head is repeated on every page.
 
-    rows : cells as text, one a column. title : above it. note : below it. bold : indices of rows that stand out.
+    rows : cells as text, one a column. title : above it. note : below it.
+    bold : indices of rows that stand out; strong : (row, column) of cells that do.
     dense : in smaller letters. side_by_side : how many times the columns are repeated across the page.
     """
 
@@ -64,6 +65,7 @@ class Table:
     title: str = ""
     note: str = ""
     bold: tuple[int, ...] = ()
+    strong: tuple[tuple[int, int], ...] = ()
     dense: bool = False
     side_by_side: int = 1
     kind: str = "table"
@@ -97,11 +99,12 @@ class Picture:
 
 @dataclass(frozen=True)
 class Value:
-    """A value of a worked member: its name in formulas, its symbol as mathematics, the printed number."""
+    """A value of a worked member: its name in formulas, the printed number, and both as mathematics."""
 
     name: str
-    symbol: str
     number: str
+    symbol: str
+    shown: str
     unit: str
     meaning: str
     clause: str
@@ -111,35 +114,44 @@ class Value:
 class Step:
     """A step of a worked member: a value with the formula that gives it, in symbols and with numbers put in.
 
-    expression : the formula as the rule states it, "" where there is none. formula, numbers, result : mathematics.
+    expression : the formula as the rule states it, "" where there is none. formula, numbers : mathematics, "" where
+        they would repeat the symbol or the result. wide : whether the numbers must be free to break.
     """
 
     value: Value
-    expression: str
-    formula: str
-    numbers: str
-    result: str
+    expression: str = ""
+    formula: str = ""
+    numbers: str = ""
+    wide: bool = False
 
 
 @dataclass(frozen=True)
 class RuleWork:
-    """What one rule adds to a check: the values it takes that are printed nowhere else, and its steps.
-
-    seen_in : name of the check under which the rule is worked already; then only its last value is repeated.
-    """
+    """What one rule adds to a check: the values it takes that are printed nowhere else, and its steps."""
 
     given: tuple[Value, ...]
     steps: tuple[Step, ...]
-    seen_in: str = ""
+
+
+@dataclass(frozen=True)
+class Taken:
+    """The result of a rule that is worked already, under the check named."""
+
+    value: Value
+    under: str
 
 
 @dataclass(frozen=True)
 class CheckWork:
-    """One check of a worked member. combination : that governs it, "" where it depends on none."""
+    """One check of a worked member. combination : that governs it, "" where it depends on none.
+
+    taken : results of rules that earlier checks worked; they come first.
+    """
 
     name: str
     clause: str
     combination: str
+    taken: tuple[Taken, ...]
     rules: tuple[RuleWork, ...]
     result: str
     passes: bool
@@ -164,7 +176,7 @@ class Task:
 
     title: str
     given: tuple[Value, ...]
-    results: tuple[tuple[str, str, str], ...]
+    results: tuple[tuple[str, str], ...]
 
 
 @dataclass(frozen=True)
@@ -221,9 +233,7 @@ class Sketch:
     kind: str = "sketch"
 
 
-Block = (
-    Paragraph | Points | Fields | Table | Derivations | Picture | MemberWork | Tasks | Sketch
-)
+Block = Paragraph | Points | Fields | Table | Derivations | Picture | MemberWork | Tasks | Sketch
 
 
 @dataclass(frozen=True)

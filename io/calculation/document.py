@@ -2,7 +2,8 @@
 
 from __future__ import annotations
 
-from dataclasses import asdict
+from collections.abc import Iterable
+from dataclasses import asdict, replace
 from pathlib import Path
 from typing import Any
 
@@ -10,14 +11,17 @@ from spanwright import __version__
 from spanwright.design.cautions import SHORT_CAUTION
 from spanwright.design.result import Design
 from spanwright.io.calculation.actions import combinations, loads, reactions
-from spanwright.io.calculation.basis import assumptions, basis, summary
+from spanwright.io.calculation.basis import CONVENTIONS, assumptions, basis, summary
 from spanwright.io.calculation.behaviour import deflection
-from spanwright.io.calculation.blocks import Paragraph, Points, Section
+from spanwright.io.calculation.blocks import MemberWork, Paragraph, Points, Section, Table
+from spanwright.io.calculation.figures import points_aligned
 from spanwright.io.calculation.forces import bar_forces, chord_bending, lengths
 from spanwright.io.calculation.geometry import geometry
 from spanwright.io.calculation.holding import restraint
 from spanwright.io.calculation.members import all_members, packs, worked_members
-from spanwright.io.calculation.titles import title_block
+from spanwright.io.calculation.pictures import pictures
+from spanwright.io.calculation.review import checks_by_hand, for_the_hand
+from spanwright.io.calculation.titles import plain_block, title_block
 from spanwright.io.calculation.typesetting import typeset
 from spanwright.io.files import input_hash, make_folder, write_atomically
 
@@ -38,7 +42,9 @@ def write_calculation(design: Design, folder: Path, *, every_member: bool = Fals
     return path
 
 
-def document(design: Design, folder: Path | None = None, *, every_member: bool = False, date: str = "") -> dict[str, Any]:
+def document(
+    design: Design, folder: Path | None = None, *, every_member: bool = False, date: str = ""
+) -> dict[str, Any]:
     """Return the data of the whole document, as the template takes it."""
     project = design.setting.project
     sections = (
@@ -52,20 +58,68 @@ def document(design: Design, folder: Path | None = None, *, every_member: bool =
         reactions(design),
         bar_forces(design),
         lengths(design),
-        Section("Members", (Paragraph("For each group the member that governs is worked in full; a table of all follows."),)),
+        Section(
+            "Members", (Paragraph("For each group the member that governs is worked in full; a table of all follows."),)
+        ),
         *worked_members(design, every=every_member),
         all_members(design),
         packs(design),
         chord_bending(design),
         deflection(design),
+        checks_by_hand(design),
+        for_the_hand(design),
         Section("Warnings", (Points(design.warnings),) if design.warnings else (Paragraph("None."),)),
+        *pictures(design, folder),
     )
+    return _page_data(
+        sections,
+        title_block(project, date),
+        passes=design.passes,
+        foot=f"Spanwright {__version__}, input {input_hash(project.source)}",
+        contents=True,
+    )
+
+
+def write_worked_member(path: Path, title: str, standard: str, member: MemberWork) -> Path:
+    """Write one member worked in full as a PDF and return its path; OutputError where that cannot be done.
+
+    title : of the page. standard : the member standard, as printed.
+    """
+    sections = (
+        Section("Member check", (member,)),
+        Section("Conventions and cautions", (Paragraph(f"By {standard}. {CONVENTIONS}", small=True),)),
+    )
+    passes = all(check.passes for check in member.checks)
+    data = _page_data(sections, plain_block(title), passes=passes, foot=f"Spanwright {__version__}", contents=False)
+    make_folder(path.parent)
+    write_atomically(path, typeset(data))
+    return path
+
+
+def _page_data(
+    sections: Iterable[Section], block: dict[str, Any], *, passes: bool, foot: str, contents: bool
+) -> dict[str, Any]:
     return {
-        "title": project.title,
-        "mark": project.mark,
-        "passes": design.passes,
-        "foot": f"Spanwright {__version__}, input {input_hash(project.source)}",
+        "block": block,
+        "passes": passes,
+        "foot": foot,
         "caution": SHORT_CAUTION,
-        "block": title_block(project, date),
-        "sections": [asdict(section) for section in sections],
+        "contents": contents,
+        "sections": [asdict(_aligned(section)) for section in sections],
     }
+
+
+def _aligned(section: Section) -> Section:
+    """Return a section whose tables have their numbers aligned on the decimal point."""
+    return replace(
+        section, blocks=tuple(_points_aligned(block) if isinstance(block, Table) else block for block in section.blocks)
+    )
+
+
+def _points_aligned(table: Table) -> Table:
+    columns = list(zip(*table.rows, strict=True))
+    ready = [
+        points_aligned(cells) if column.align == "right" else cells
+        for column, cells in zip(table.columns, columns, strict=False)
+    ]
+    return replace(table, rows=tuple(zip(*ready, strict=True)))

@@ -59,8 +59,8 @@ def chord_bending(design: Design) -> Section:
         Column("in", align="left"),
     )
     about = Paragraph(
-        "Purlins or a man between joints bend the top chord, a continuous beam over its joints, hinged at heel and ridge. "
-        "Greatest factored moments; their checks stand with the members."
+        "Purlins or a man between joints bend the top chord, a continuous beam over its joints, hinged at heel and "
+        "ridge. Greatest factored moments; their checks stand with the members."
     )
     return Section("Chord bending", (about, Table(columns, rows, dense=True, side_by_side=2)))
 
@@ -95,8 +95,8 @@ def lengths(design: Design) -> Section:
     )
     given = design.setting.project.restraint
     about = Paragraph(
-        f"Effective length factors: {given.factor_in:g} in plane, {given.factor_out:g} out of plane, included. In plane a "
-        "length ends at joints with bars that are not collinear; out of plane a chord is followed through every kink to "
-        "points that are held. About the minor axis of an angle the greater of both goes."
+        f"Effective length factors: {given.factor_in:g} in plane, {given.factor_out:g} out of plane, included. In "
+        "plane a length ends at joints with bars that are not collinear; out of plane a chord is followed through "
+        "every kink to points that are held. About the minor axis of an angle the greater of both goes."
     )
     return Section("Buckling lengths", (about, Table(columns, rows, dense=True)))

@@ -53,9 +53,7 @@ def framed(
     x = [*(truss.xy[:, 0] / 1e3), *(mark.x for mark in marks)]
     y = [*(truss.xy[:, 1] / 1e3), *(mark.y for mark in marks)]
     left, bottom = float(min(x)), float(min(y))
-    return Sketch(
-        lines, marks, names, dimensions, left, bottom, float(max(x)) - left, float(max(y)) - bottom, caption
-    )
+    return Sketch(lines, marks, names, dimensions, left, bottom, float(max(x)) - left, float(max(y)) - bottom, caption)
 
 
 def _point(truss: Truss, joint: int) -> tuple[float, float]:
@@ -65,15 +63,17 @@ def _point(truss: Truss, joint: int) -> tuple[float, float]:
 def _dimensions(truss: Truss) -> tuple[Dimension, ...]:
     """Return panel by panel along the bottom chord, the span, and the heights over the first bearing."""
     chain = [_point(truss, joint) for joint in truss.bottom.joints]
-    panels = tuple(
-        Dimension(start, end, kilo((end[0] - start[0]) * 1e3, 3), 0) for start, end in pairwise(chain)
-    )
+    panels = tuple(Dimension(start, end, kilo((end[0] - start[0]) * 1e3, 3), 0) for start, end in pairwise(chain))
     first, last = (_point(truss, joint) for joint in (truss.bearing_joints[0], truss.bearing_joints[-1]))
     return (*panels, Dimension(first, last, kilo(truss.span, 3), 1))
 
 
 def _supports(truss: Truss) -> Table:
-    words = {(True, True): "both ways", (False, True): "up and down; slides along the span", (True, False): "sideways only"}
+    words = {
+        (True, True): "both ways",
+        (False, True): "up and down; slides along the span",
+        (True, False): "sideways only",
+    }
     rows = tuple(
         (
             truss.joint_names[support.joint],
@@ -83,7 +83,12 @@ def _supports(truss: Truss) -> Table:
         )
         for support in truss.supports
     )
-    columns = (Column("joint", align="left"), Column("x", "m"), Column("y", "m"), Column("held", align="left", share=1.0))
+    columns = (
+        Column("joint", align="left"),
+        Column("x", "m"),
+        Column("y", "m"),
+        Column("held", align="left", share=1.0),
+    )
     return Table(columns, rows, title="Supports")
 
 

@@ -17,8 +17,8 @@ def restraint(design: Design) -> Section:
     given = design.setting.project.restraint
     standard = design.setting.standard
     total = Paragraph(
-        f"Each point restraint must resist {standard.restraint_share:g} of the greatest compression in the chord beside "
-        f"it, to either side (cl. {standard.restraint_clause}). Summed over the lines, braces and ties of all "
+        f"Each point restraint must resist {standard.restraint_share:g} of the greatest compression in the chord "
+        f"beside it, to either side (cl. {standard.restraint_clause}). Summed over the lines, braces and ties of all "
         f"{design.setting.project.quantity} trusses, {kilo(design.anchor_force)} kN reach the anchor "
         f"({given.anchored_by}); bearings have ties of their own. This is the plain sum, the safe reading."
     )
@@ -37,7 +37,12 @@ def _drawing(design: Design) -> Sketch:
         return kilo(forces[part]) if part in forces else ""
 
     marks = [
-        Mark("counted" if line.name in setting.restraint.counted else "open", line.x / 1e3, line.y / 1e3, label(line.name))
+        Mark(
+            "counted" if line.name in setting.restraint.counted else "open",
+            line.x / 1e3,
+            line.y / 1e3,
+            label(line.name),
+        )
         for line in setting.restraint.lines
     ]
     braces = []
@@ -120,5 +125,8 @@ def _missing(design: Design) -> Table:
         Column("greatest ratio"),
     )
     failing = tuple(at for at, row in enumerate(design.missing) if row.unheld or row.utilisation > 1.0)
-    note = "The sections are checked again with the lengths that remain; forces do not change. Bold: the roof fails without it."
+    note = (
+        "The sections are checked again with the lengths that remain; forces do not change. Bold: the roof fails "
+        "without it."
+    )
     return Table(columns, tuple(rows), title="What this roof cannot lose", note=note, bold=failing, dense=True)

@@ -7,6 +7,7 @@ from __future__ import annotations
 
 import ast
 import math
+import re
 from collections.abc import Mapping
 
 from spanwright.io.calculation.symbols import BRACED, TABLE, symbol
@@ -45,9 +46,19 @@ def with_symbols(expression: str) -> str:
     return _Symbols().written(expression)
 
 
-def with_numbers(expression: str, values: Mapping[str, float]) -> str:
-    """Return a formula as mathematics with printed numbers in place of its symbols; of a choice only what applies."""
-    return _Numbers(values).written(expression)
+def with_numbers(expression: str, values: Mapping[str, float], *, flat: bool = False) -> str:
+    """Return a formula as mathematics with printed numbers in place of its symbols; of a choice only what applies.
+
+    flat : without fractions, so that a line may break anywhere.
+    """
+    writer = _Numbers(values)
+    writer.within_fraction = flat
+    return writer.written(expression)
+
+
+def signs(mathematics: str) -> int:
+    """Return about how many signs wide a piece of mathematics is."""
+    return len(re.sub(r'frac|times|slash|[" ]', "", mathematics))
 
 
 def symbols_in(expression: str) -> tuple[str, ...]:
@@ -78,6 +89,7 @@ class _Writer:
     """Writes one expression; `part` returns its mathematics and how tightly it binds."""
 
     times = " thin "
+    within_fraction = False
 
     def written(self, expression: str) -> str:
         return self.part(ast.parse(expression, mode="eval").body)[0]
@@ -114,8 +126,13 @@ class _Writer:
                 return f"{self.part(left)[0]} - {self.held(right, _PRODUCT)}", _SUM
             case ast.Mult():
                 return f"{self.held(left, _PRODUCT)}{self.times}{self.held(right, _PRODUCT)}", _PRODUCT
+            case ast.Div() if self.within_fraction:  # a fraction in a fraction would be too small to read
+                return f"{self.held(left, _PRODUCT)} slash {self.held(right, _POWER)}", _PRODUCT
             case ast.Div():
-                return f"frac({self.part(left)[0]}, {self.part(right)[0]})", _POWER
+                self.within_fraction = True
+                text = f"frac({self.part(left)[0]}, {self.part(right)[0]})"
+                self.within_fraction = False
+                return text, _POWER
             case ast.Pow():
                 return f"{self.held(left, _ATOM)}^({self.raised(right)})", _POWER
         raise ValueError(f"a formula may not hold {type(operator).__name__}")

@@ -13,6 +13,9 @@ from spanwright.io.calculation.naming import labels
 from spanwright.io.calculation.working import work
 from spanwright.io.text import metres, rounded_up
 
+FIRST_CHECK = 3
+"""Columns before the checks in the table of all members."""
+
 
 def worked_members(design: Design, *, every: bool) -> Iterator[Section]:
     """Yield a section a group: the member that governs it worked in full, or with `every` all of them."""
@@ -52,8 +55,9 @@ def worked(design: Design, choice: Choice, place: int) -> MemberWork:
 def all_members(design: Design) -> Section:
     """Return for each group a table of every check of every member."""
     about = Paragraph(
-        "Every check of every member, rounded up; checks are numbered below each table. Bold: the greatest of a member. "
-        "Utilisation is the greatest of the strength checks; limits (slenderness, spacing of packs) pass or fail."
+        "Every check of every member, rounded up; checks are numbered below each table. Bold: the check that governs a "
+        "member. Utilisation is the greatest of the strength checks; limits (slenderness, spacing of packs) pass or "
+        "fail."
     )
     return Section("All members", (about, *(_matrix(design, choice) for choice in design.choices)), level=2)
 
@@ -67,8 +71,10 @@ def _matrix(design: Design, choice: Choice) -> Table:
         Column("use"),
         *(Column(str(number)) for number in range(1, len(arising) + 1)),
     )
-    rows = []
+    rows, strong = [], []
     for place, bar in enumerate(choice.group.bars):
+        found = design.governing_of(choice, place).check
+        strong += [(place, at) for at, check in enumerate(arising, FIRST_CHECK) if check.name == found]
         ratios = (float(check.ratio[0, place]) for check in arising)
         rows.append(
             (
@@ -82,7 +88,14 @@ def _matrix(design: Design, choice: Choice) -> Table:
         f"{number} {check.name} ({check.clause})" + (", limit" if check.kind == "limit" else "")
         for number, check in enumerate(arising, 1)
     )
-    return Table(columns, tuple(rows), title=f"{choice.group.name}: {choice.name}", note=f"{named}.", dense=True)
+    return Table(
+        columns,
+        tuple(rows),
+        title=f"{choice.group.name}: {choice.name}",
+        note=f"{named}.",
+        strong=tuple(strong),
+        dense=True,
+    )
 
 
 def packs(design: Design) -> Section:
@@ -97,8 +110,9 @@ def packs(design: Design) -> Section:
     stated = design.setting.project.members.packs
     fixing = "welded" if stated.factor < 1.0 else "bolted snug"
     about = Paragraph(
-        f"At least {stated.per_panel} packs in each panel that sees compression, more where the rules ask; {fixing} "
-        f"(K_i = {stated.factor:g}). Their spacing is checked with each member."
+        f"At least {stated.per_panel} packs in each panel that sees compression, more where the rules ask; {fixing}, "
+        f"which counts {stated.factor:g} times the slenderness of one angle between them. Their spacing is checked "
+        "with each member."
     )
     columns = (Column("bar", align="left"), Column("panel", "m"), Column("packs"), Column("apart", "mm"))
     blocks: list[Paragraph | Table] = [about, Table(columns, tuple(rows), dense=True, side_by_side=3)]

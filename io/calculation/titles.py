@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from typing import Any
+
 from spanwright.design.project import Project
 
 KIND = "Structural calculation"
@@ -28,7 +30,7 @@ SIGNED = (
 """Fields that are left blank for the hand where they are not given."""
 
 
-def title_block(project: Project, date: str) -> dict[str, object]:
+def title_block(project: Project, date: str) -> dict[str, Any]:
     """Return the title block: fields that are given, and fields for signature."""
     given = project.title_block
     values = given | ({"date": date} if date else {})
@@ -40,4 +42,17 @@ def title_block(project: Project, date: str) -> dict[str, object]:
         "fields": [(name, given[key]) for key, name in FIELDS if given.get(key)],
         "signed": [(name, values.get(key, "")) for key, name in SIGNED],
         "author": given.get("creator", ""),
+    }
+
+
+def plain_block(title: str) -> dict[str, Any]:
+    """Return the title block of a page that belongs to no project."""
+    return {
+        "kind": KIND,
+        "title": title,
+        "supplementary": "",
+        "mark": "",
+        "fields": [],
+        "signed": [(name, "") for _, name in SIGNED],
+        "author": "",
     }

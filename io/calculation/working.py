@@ -12,10 +12,13 @@ from dataclasses import dataclass, fields
 
 from spanwright.design.standard import Check
 from spanwright.design.steps import Line, Rule, explain
-from spanwright.io.calculation.blocks import CheckWork, MemberWork, RuleWork, Step, Value
-from spanwright.io.calculation.mathematics import number, symbols_in, with_numbers, with_symbols
+from spanwright.io.calculation.blocks import CheckWork, MemberWork, RuleWork, Step, Taken, Value
+from spanwright.io.calculation.mathematics import number, signs, symbols_in, with_numbers, with_symbols
 from spanwright.io.calculation.symbols import symbol, unit
 from spanwright.io.text import figures, rounded_up
+
+WIDEST = 100
+"""Signs of a formula with its numbers that fit into one line of the column."""
 
 
 @dataclass(frozen=True)
@@ -58,11 +61,19 @@ def outcome(check: Check, place: int) -> str:
     """Return effect, resistance and utilisation of a check of one section for one member, in words."""
     effect, resistance, ratio = (float(part[0, place]) for part in (check.demand, check.resistance, check.ratio))
     verdict = "passes" if ratio <= 1.0 else "FAILS"
-    return f"{_measured(effect, check.unit)} of {_measured(resistance, check.unit)}: {rounded_up(ratio)}, {verdict}"
+    return f"{measured(effect, check.unit)} of {measured(resistance, check.unit)}: {rounded_up(ratio)}, {verdict}"
 
 
-def _measured(value: float, of: str) -> str:
-    """Return forces in kN and moments in kN m, anything else as it is."""
+def values_given(check: Check, place: int) -> tuple[Value, ...]:
+    """Return what a check of one section takes for its member number `place`, each value once."""
+    rules = [_explained(rule, place) for rule in check.rules]
+    made = {line.symbol for rule in rules for line in rule.steps}
+    given = {line.symbol: line for rule in rules for line in rule.given if line.symbol not in made}
+    return tuple(_value(line) for line in given.values())
+
+
+def measured(value: float, of: str) -> str:
+    """Return a value with its unit: forces in kN and moments in kN m, anything else as it is."""
     if of == "N":
         return f"{figures(value / 1e3)} kN"
     if of == "N mm":
@@ -77,13 +88,17 @@ def _explained(rule: Rule, place: int) -> _Explained:
 
 
 def _common(rules: list[_Explained]) -> dict[str, Line]:
-    """Return by symbol the given values that no rule gives otherwise and no step makes."""
-    found: dict[str, set[Line]] = defaultdict(set)
+    """Return by symbol the given values that are the same in every rule and that no step makes."""
+    found: dict[str, list[Line]] = defaultdict(list)
     for rule in rules:
         for line in rule.given:
-            found[line.symbol].add(line)
+            found[line.symbol].append(line)
     made = {line.symbol for rule in rules for line in rule.steps}
-    return {name: lines.pop() for name, lines in found.items() if len(lines) == 1 and name not in made}
+    return {
+        name: lines[0]
+        for name, lines in found.items()
+        if name not in made and all((line.value, line.unit) == (lines[0].value, lines[0].unit) for line in lines)
+    }
 
 
 def _check(
@@ -96,15 +111,16 @@ def _check(
     governs: str,
 ) -> CheckWork:
     known = {name: line.value for name, line in common.items()}
-    works = []
-    for rule in rules:
-        first = printed.setdefault(rule, check.name)
-        works.append(_again(rule, first, known) if first != check.name else _first(rule, known))
+    seen = [rule for rule in rules if printed.setdefault(rule, check.name) != check.name]
+    taken = [(_decisive(rule, float(check.demand[0, place])), printed[rule]) for rule in seen]
+    known |= {line.symbol: line.value for line, _ in taken}
+    works = [_rule(rule, known) for rule in rules if rule not in seen]
     at = int(check.combination[0, place])
     return CheckWork(
         check.name,
         check.clause,
         combination(at) if at >= 0 else "",
+        tuple(Taken(_value(line), under) for line, under in taken),
         tuple(works),
         outcome(check, place),
         bool(check.ratio[0, place] <= 1.0),
@@ -112,7 +128,13 @@ def _check(
     )
 
 
-def _first(rule: _Explained, known: dict[str, float]) -> RuleWork:
+def _decisive(rule: _Explained, demand: float) -> Line:
+    """Return the line of a rule that is a check's demand, or else its result."""
+    return next((line for line in reversed(rule.steps) if line.value == demand), rule.steps[-1])
+
+
+def _rule(rule: _Explained, known: dict[str, float]) -> RuleWork:
+    """Work one rule; `known`, the values printed in this check so far, grows by its own."""
     needed = {name for line in rule.steps if line.formula for name in symbols_in(line.formula)}
     fresh = tuple(line for line in rule.given if line.symbol in needed and known.get(line.symbol) != line.value)
     known |= {line.symbol: line.value for line in fresh}
@@ -123,26 +145,32 @@ def _first(rule: _Explained, known: dict[str, float]) -> RuleWork:
     return RuleWork(tuple(_value(line) for line in fresh), tuple(steps))
 
 
-def _again(rule: _Explained, first: str, known: dict[str, float]) -> RuleWork:
-    last = rule.steps[-1]
-    known[last.symbol] = last.value
-    return RuleWork((), (_step(Line(last.symbol, last.unit, last.clause, "", last.meaning, last.value), known),), first)
-
-
 def _value(line: Line) -> Value:
-    return Value(line.symbol, symbol(line.symbol), figures(line.value), unit(line.unit), line.meaning, line.clause)
+    return Value(
+        line.symbol,
+        figures(line.value),
+        symbol(line.symbol),
+        number(line.value),
+        unit(line.unit),
+        line.meaning,
+        line.clause,
+    )
 
 
 def _step(line: Line, known: dict[str, float]) -> Step:
+    value = _value(line)
     if not line.formula:
-        return Step(_value(line), "", "", "", number(line.value))
-    formula, numbers, result = with_symbols(line.formula), with_numbers(line.formula, known), number(line.value)
+        return Step(value)
+    formula, numbers = with_symbols(line.formula), with_numbers(line.formula, known)
+    wide = signs(numbers) > WIDEST
+    if wide:
+        numbers = with_numbers(line.formula, known, flat=True)
     return Step(
-        _value(line),
+        value,
         line.formula,
-        "" if _on_one_line(formula) == symbol(line.symbol) else formula,
-        "" if numbers == result else numbers,
-        result,
+        "" if _on_one_line(formula) == value.symbol else formula,
+        "" if numbers == value.shown else numbers,
+        wide,
     )
 
 

@@ -3,13 +3,14 @@
 from __future__ import annotations
 
 from argparse import ArgumentParser, Namespace
+from pathlib import Path
 from typing import TYPE_CHECKING
 
 if TYPE_CHECKING:
     from rich.console import Console
 
     from spanwright.design.candidates import Candidates
-    from spanwright.design.standard import Demand, Standard
+    from spanwright.design.standard import Check, Demand, Standard
 
 SUMMARY = "work one compression member by hand: every intermediate value with unit and clause"
 TEXT = """\
@@ -24,7 +25,7 @@ examples:
   spanwright strut --section "2L 100x75x8 long legs together" --gap "10 mm" --packs 3 --pack-fixing welded \\
                    --in-plane "1.8 m" --out-of-plane "1.8 m" --force "-200 kN"
   spanwright strut --section "L 60x60x6" --one-leg --in-plane "1.4 m" --out-of-plane "1.4 m" --force "-25 kN"
-  spanwright strut --section "CHS 76.1x3.6" --in-plane "2 m" --out-of-plane "2 m" --force "-90 kN"
+  spanwright strut --section "CHS 76.1x3.6" --in-plane "2 m" --out-of-plane "2 m" --force "-90 kN" --pdf strut.pdf
 
 exit status: 0 it passes; 1 it fails; 2 the input is wrong
 """
@@ -46,7 +47,27 @@ def arguments(parser: ArgumentParser) -> None:
     more.add_argument("--pack-fixing", choices=["snug", "welded"], default="snug", help="(default: %(default)s)")
     more.add_argument("--one-leg", action="store_true", help="a web fixed by one leg, all on one side of the gusset")
     more.add_argument("--first-web", action="store_true", help="the first compression web from a bearing")
+    more.add_argument("--pdf", type=Path, metavar="FILE", help="write the working as a page to sign, too")
     more.add_argument("--standard", default="SANS 10162-1", help="member standard (default: %(default)s)")
+
+
+def _write(
+    path: Path, arguments: Namespace, section: Candidates, standard: Standard, checks: tuple[Check, ...]
+) -> None:
+    """Write the member as a worked page of the calculation."""
+    from spanwright.design.sizing import governing
+    from spanwright.io.calculation.document import write_worked_member
+    from spanwright.io.calculation.working import work
+
+    about = (
+        ("Section", f"{section.names[0]}, {_grade(arguments, section)}"),
+        ("Force", f"{arguments.force}, factored"),
+        ("In plane", arguments.in_plane),
+        ("Out of plane", arguments.out_of_plane),
+    )
+    decides = governing(checks, ("strut",), None).check
+    member = work("Compression member", about, checks, 0, lambda _: "", decides)
+    write_worked_member(path, f"{section.names[0]}, compression member", standard.name, member)
 
 
 def run(arguments: Namespace) -> int:
@@ -68,6 +89,8 @@ def run(arguments: Namespace) -> int:
     console = Console(highlight=False)
     _print_head(console, arguments, section, standard)
     print_worked(console, checks)
+    if arguments.pdf:
+        _write(arguments.pdf, arguments, section, standard, checks)
     found = governing(checks, demand.bars, None)
     decides = next(check for check in checks if check.name == found.check)
     console.print(Text(f"\n{found.check}, {found.clause}, governs: {result(decides)}", style="bold"))
@@ -114,15 +137,20 @@ def _packs(arguments: Namespace) -> int:
         raise error.located(key="--packs") from None
 
 
+def _grade(arguments: Namespace, section: Candidates) -> str:
+    """Return the name of the steel that the section takes."""
+    from spanwright.design.families import TUBES
+    from spanwright.design.steels import steel
+
+    return steel(arguments.steel, hollow=section.family in TUBES).name
+
+
 def _print_head(console: Console, arguments: Namespace, section: Candidates, standard: Standard) -> None:
     from rich.text import Text
 
     from spanwright.design.cautions import SHORT_CAUTION
-    from spanwright.design.families import TUBES
-    from spanwright.design.steels import steel
 
-    grade = steel(arguments.steel, hollow=section.family in TUBES)
-    console.print(Text(f"{section.names[0]}, {grade.name}, by {standard.name}", style="bold"))
+    console.print(Text(f"{section.names[0]}, {_grade(arguments, section)}, by {standard.name}", style="bold"))
     console.print(
         Text(
             f"{arguments.force} over {arguments.in_plane} in plane and {arguments.out_of_plane} out of plane. "
