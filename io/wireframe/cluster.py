@@ -25,7 +25,7 @@ def default_tolerance(lines: FloatArray) -> float:
 def cluster_ends(lines: FloatArray, tolerance: float, limit: int) -> tuple[Network, tuple[Remark, ...]]:
     """Make joints of the ends of lines (n, 2, 2) in mm; lines of no length are dropped.
 
-    A joint stands where its ends do if they agree, else at their mean. limit : most pairs of near ends.
+    limit : most pairs of near ends that are looked at.
     """
     points = lines.reshape(-1, 2)
     xy, labels = gather(points, tolerance, limit)
@@ -43,7 +43,8 @@ def cluster_ends(lines: FloatArray, tolerance: float, limit: int) -> tuple[Netwo
 def gather(points: FloatArray, tolerance: float, limit: int) -> tuple[FloatArray, IntArray]:
     """Make one of all points (n, 2) that chains of steps within the tolerance join.
 
-    Returns the places (j, 2), where the points are if they agree, else their mean, and the place of each point (n,).
+    Returns the places (j, 2) and the place of each point (n,). Where points agree, noise apart, their place is the
+    first of them to the last digit, else it is their mean.
     """
     distinct, inverse = np.unique(points, axis=0, return_inverse=True)
     pairs = points_within(distinct, tolerance, limit)
@@ -60,7 +61,8 @@ def _means(points: FloatArray, labels: IntArray, count: int) -> FloatArray:
     first = np.empty(count, dtype=np.intp)
     first[labels[::-1]] = np.arange(len(points))[::-1]
     agree = np.ones(count, dtype=bool)
-    agree[labels[(points != points[first[labels]]).any(axis=1)]] = False
+    apart = np.abs(points - points[first[labels]]).max(axis=1) > TOLERANCES.drawing_noise
+    agree[labels[apart]] = False
     return np.where(agree[:, None], points[first], means)
 
 

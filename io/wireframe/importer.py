@@ -28,9 +28,10 @@ from spanwright.io.wireframe.read import read_drawing
 from spanwright.io.wireframe.report import OUTCOMES, Facts, Finding, Origin, RefusedDrawingError, Report, TallyRow
 from spanwright.io.wireframe.roles import Recognised, recognise
 from spanwright.truss.arrays import FloatArray
+from spanwright.truss.assembly import NamedBar, assemble
 from spanwright.truss.errors import DrawingError, SpanwrightError
-from spanwright.truss.given import build_given
 from spanwright.truss.inputs import GivenInput
+from spanwright.truss.model import Truss
 from spanwright.truss.tolerances import TOLERANCES
 
 Bearing = Literal["pinned", "sliding"]
@@ -188,9 +189,17 @@ def _given(
     return GivenInput(joints, bars, supports, overhang, tuple(name for name, *_ in named.bars))
 
 
+def _assembled(given: GivenInput) -> Truss:
+    """Return the truss to set marks against; what cannot be a truss for other reasons is refused when it is built."""
+    bars = [NamedBar(name, *bar) for name, bar in zip(given.bar_names, given.bars, strict=True)]
+    joints = {name: (x, y) for name, x, y in given.joints}
+    bearings = {joint: kind == "pinned" for joint, kind in given.supports}
+    return assemble(joints, bars, bearings, overhang=given.overhang)
+
+
 def _with_marks(given: GivenInput, bearing: FloatArray, flat: _Flat, log: _Log) -> Wireframe:
     """Set purlins, braces and ties as marked against the truss; `bearing` (2,) is the place of its origin."""
-    truss = build_given(given)
+    truss = _assembled(given)
     marks = [mark._replace(at=mark.at - bearing) for mark in flat.marks]
     purlins, remarks = place_purlins(truss, marks)
     inner = [joint for joint in truss.bottom.joints if joint not in truss.bearing_joints]

@@ -12,7 +12,7 @@ import numpy as np
 from scipy.spatial import cKDTree
 
 from spanwright.io.wireframe.network import Network
-from spanwright.truss.arrays import FloatArray, IntArray
+from spanwright.truss.arrays import BoolArray, FloatArray, IntArray
 from spanwright.truss.errors import DrawingError
 
 _SAMPLES_A_BAR = 3  # on average; more samples are smaller circles but a larger tree
@@ -29,6 +29,10 @@ class OnBars:
     joints: IntArray
     along: FloatArray
     aside: FloatArray
+
+    def rows(self, keep: BoolArray) -> OnBars:
+        """Return the rows to keep (k,)."""
+        return OnBars(self.bars[keep], self.joints[keep], self.along[keep], self.aside[keep])
 
 
 def points_within(points: FloatArray, reach: float, limit: int) -> IntArray:

@@ -34,18 +34,18 @@ class Trunk:
 
 
 def near_misses(network: Network, tolerance: float, limit: int) -> tuple[Remark, ...]:
-    """Report joints that are up to 5 tolerances (mm) from another joint, or from a bar, and not joined to it."""
+    """Report joints up to 5 tolerances (mm) from another joint, or from a bar that they are not joined to."""
     reach = TOLERANCES.near_miss * tolerance
     pairs = points_within(network.xy, reach, limit)
-    joined = _joined(network)
-    done = "not joined; draw them together, or give a greater tolerance"
+    joined = set(map(tuple, np.sort(network.ends, axis=1).tolist()))
+    done = "not made one; draw them together, or give a greater tolerance"
     source_at = _source_at(network)
     remarks = []
     for first, second in sorted(map(tuple, np.sort(pairs, axis=1).tolist())):
-        if (first, second) not in joined:
-            gap = float(np.hypot(*(network.xy[first] - network.xy[second])))
-            text = f"two joints are {gap:.3g} mm apart, the tolerance is {tolerance:.3g} mm"
-            remarks.append(Remark("W-311", text, done, int(source_at[first]), network.place(first)))
+        gap = float(np.hypot(*(network.xy[first] - network.xy[second])))
+        between = ", with a bar between them" if (first, second) in joined else ""
+        text = f"two joints are {gap:.3g} mm apart{between}, the tolerance is {tolerance:.3g} mm"
+        remarks.append(Remark("W-311", text, done, int(source_at[first]), network.place(first)))
     beside = joints_beside_bars(network, reach, limit)
     lengths = network.lengths()[beside.bars]
     for bar, joint, along, aside, length in zip(
@@ -144,10 +144,6 @@ def _pieces(network: Network) -> IntArray:
 def _extent(network: Network, joints: BoolArray, bars: int) -> str:
     low, high = network.xy[joints].min(axis=0), network.xy[joints].max(axis=0)
     return f"{bars} bars from ({low[0]:.0f}, {low[1]:.0f}) to ({high[0]:.0f}, {high[1]:.0f}) mm"
-
-
-def _joined(network: Network) -> set[tuple[int, int]]:
-    return set(map(tuple, np.sort(network.ends, axis=1).tolist()))
 
 
 def _source_at(network: Network) -> IntArray:

@@ -149,7 +149,7 @@ def _axis(direction: FloatArray) -> str:
         along = float(direction @ np.array(axis))
         if abs(along) == 1.0:
             return f"{'-' if along < 0 else ''}{name}"
-    listed = ", ".join(f"{value:.4f}" for value in direction)
+    listed = ", ".join(f"{round(value, 4) + 0.0:.4f}" for value in direction.tolist())
     return f"the direction ({listed})"
 
 

@@ -1,4 +1,4 @@
-"""The project file that an import writes: what was recognised, and what only the user can say as remarks to complete."""
+"""The project file that an import writes: what was recognised, and what only the user knows as remarks to complete."""
 
 from __future__ import annotations
 
@@ -19,7 +19,7 @@ _RESTRAINT = """\
 """
 _LOADS = """\
 [loads]
-# roof_permanent = "0.25 kPa"       # REQUIRED. On the slope, without the truss; or { most = "0.25 kPa", least = "0.18 kPa" }
+# roof_permanent = "0.25 kPa"       # REQUIRED. On the slope; or { most = "0.25 kPa", least = "0.18 kPa" }
 # roof_imposed = "0.30 kPa"         # REQUIRED. On plan
 # wind = "none"                     # REQUIRED. Or a table [[loads.wind]] for each wind case
 """

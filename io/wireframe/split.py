@@ -21,9 +21,9 @@ def split_at_joints(network: Network, tolerance: float, limit: int) -> tuple[Net
 
     A joint on several bars goes onto the longest.
     """
-    on_bars = joints_beside_bars(network, tolerance, limit)
-    inside = _well_inside(on_bars.along, network.lengths()[on_bars.bars], tolerance)
-    on_bars = OnBars(*(getattr(on_bars, name)[inside] for name in ("bars", "joints", "along", "aside")))
+    beside = joints_beside_bars(network, tolerance, limit)
+    on_bars = beside.rows(_well_inside(beside.along, network.lengths()[beside.bars], tolerance))
+    on_bars = on_bars.rows(_not_linked(network, on_bars, tolerance))
     moved, remarks = _onto_axes(network, on_bars)
     return _cut(moved, on_bars), (*_cut_remarks(network, on_bars), *remarks)
 
@@ -44,9 +44,8 @@ def find_crossings(network: Network, tolerance: float, limit: int) -> tuple[IntA
     safe = np.where(parallel, 1.0, turn)
     along_first = np.where(parallel, -1.0, _cross(between, step[second]) / safe)
     along_second = np.where(parallel, -1.0, _cross(between, step[first]) / safe)
-    inside = _well_inside(along_first, lengths[first], tolerance) & _well_inside(
-        along_second, lengths[second], tolerance
-    )
+    inside = _well_inside(along_first * lengths[first], lengths[first], tolerance)
+    inside &= _well_inside(along_second * lengths[second], lengths[second], tolerance)
     points: FloatArray = start[first] + along_first[:, None] * step[first]
     return pairs[inside], points[inside]
 
@@ -72,6 +71,30 @@ def split_at_crossings(
         for first, point in zip(pairs[:, 0], points, strict=True)
     )
     return cut, tuple(remarks)
+
+
+def _not_linked(network: Network, on_bars: OnBars, tolerance: float) -> BoolArray:
+    """Return which joints on bars (k,) are to split them: all but those that are linked to its end by another bar.
+
+    Near a bar's end a joint of another bar from that end is within the tolerance (mm) of both, though it belongs to
+    one. The pairs most in line are taken first, and each links its joint to the end.
+    """
+    lengths = network.lengths()[on_bars.bars]
+    second = on_bars.along > lengths / 2
+    from_end = np.where(second, lengths - on_bars.along, on_bars.along)
+    off_line = on_bars.aside / from_end
+    accepted: BoolArray = (from_end > tolerance / TOLERANCES.spread) | (off_line <= TOLERANCES.straight)
+    doubtful = np.flatnonzero(~accepted)
+    if doubtful.size:
+        clear = _cut(network, on_bars.rows(accepted))
+        linked = set(map(tuple, np.sort(clear.ends, axis=1).tolist()))
+        for row in doubtful[np.argsort(off_line[doubtful], kind="stable")].tolist():
+            end = int(network.ends[on_bars.bars[row], int(second[row])])
+            joint = int(on_bars.joints[row])
+            pair = min(joint, end), max(joint, end)
+            accepted[row] = pair not in linked or off_line[row] <= TOLERANCES.spread
+            linked.add(pair)
+    return accepted
 
 
 def _cut(network: Network, on_bars: OnBars) -> Network:
