@@ -8,6 +8,7 @@ from functools import cached_property
 import numpy as np
 
 from spanwright.design.analysis import Analysis
+from spanwright.design.cautions import CAUTIONS
 from spanwright.design.certificate import NextLighter
 from spanwright.design.dispatch import Assembly, assembly
 from spanwright.design.missing import Missing
@@ -54,6 +55,11 @@ class Design:
     def passes(self) -> bool:
         """Whether every member passes every check and the truss its deflection limits."""
         return all(choice.passes for choice in self.choices) and self.serviceability.passes
+
+    @property
+    def cautions(self) -> tuple[str, ...]:
+        """What every output must say: the standing cautions, then what each standard used leaves to verify."""
+        return (*CAUTIONS, *self.setting.standard.verify_notes(), *self.setting.load_set.cautions)
 
     @cached_property
     def strength_names(self) -> tuple[str, ...]:

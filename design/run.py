@@ -7,6 +7,8 @@ Project > Truss > load cases > bar forces by case > by combination -.
 
 from __future__ import annotations
 
+from dataclasses import replace
+
 import numpy as np
 
 from spanwright.design.analysis import Analysis, largest_difference
@@ -25,7 +27,7 @@ from spanwright.design.sizing import Choice, choose, fitting
 from spanwright.design.standard import Demand
 from spanwright.design.stiffening import stiffened
 from spanwright.design.warnings import warnings_of
-from spanwright.loads.cases import load_cases
+from spanwright.loads.cases import loads_on
 from spanwright.loads.combinations import combine
 from spanwright.truss.errors import InputError
 from spanwright.truss.forms import build_form, settle_panels
@@ -70,7 +72,17 @@ def prepare(project: Project) -> Setting:
     """Build the truss, what holds it and what acts on it, and gather the candidate sections."""
     truss = build_truss(project)
     restraint = restrain(truss, project.restraint)
-    load_set = load_cases(truss, restraint.lines, project.loads, project.tributary)
+    load_set = loads_on(
+        truss,
+        restraint.lines,
+        project.loads,
+        project.site,
+        project.actions,
+        spacing=project.spacing,
+        tributary=project.tributary,
+    )
+    if load_set.site is not None:
+        project = replace(project, loads=load_set.site.loads, tributary=load_set.site.tributary)
     groups = form_groups(truss, project)
     return Setting(
         project=project,

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from argparse import ArgumentParser, Namespace
 from collections.abc import Callable
+from dataclasses import replace
 from pathlib import Path
 from typing import TYPE_CHECKING
 
@@ -37,6 +38,11 @@ def arguments(parser: ArgumentParser) -> None:
     """Declare the arguments of a command that carries out a project file."""
     parser.add_argument("project", type=Path, metavar="PROJECT.toml", help="the project file")
     parser.add_argument("--out", type=Path, metavar="DIR", help="folder for results (default: PROJECT.out beside it)")
+    parser.add_argument(
+        "--every-truss",
+        action="store_true",
+        help="with [site]: the end, the first interior and a typical interior truss, a folder each",
+    )
     parser.add_argument("--no-pictures", action="store_true", help="leave out the pictures, which take longest")
     parser.add_argument(
         "--every-member", action="store_true", help="work every member in calculation.pdf, not one of each group"
@@ -62,12 +68,35 @@ def carry_out(arguments: Namespace, station: Callable[[Project], Design]) -> int
     from spanwright.truss.errors import SpanwrightError
 
     path: Path = arguments.project
-    project = read_project(path)
-    try:
-        result = station(project)
-    except SpanwrightError as error:
-        raise error.located(file=str(path)) from error
-    folder = arguments.out or path.with_name(f"{path.stem}.out")
-    write_all(result, folder, pictures=not arguments.no_pictures)
-    print_summary(result, written_to=folder)
-    return 0 if result.passes else 1
+    base: Path = arguments.out or path.with_name(f"{path.stem}.out")
+    status = 0
+    for name, project in _trusses(read_project(path), every=arguments.every_truss).items():
+        try:
+            result = station(project)
+        except SpanwrightError as error:
+            raise error.located(file=str(path)) from error
+        folder = base / name.replace(" ", "-")
+        write_all(result, folder, pictures=not arguments.no_pictures)
+        print_summary(result, written_to=folder)
+        status = max(status, 0 if result.passes else 1)
+    return status
+
+
+def _trusses(project: Project, *, every: bool) -> dict[str, Project]:
+    """Return the project as it stands under "", or with `every` one for each place in the building by its name."""
+    if not every:
+        return {"": project}
+    from spanwright.loads.place import at_every_position
+    from spanwright.truss.errors import InputError
+
+    if project.site is None:
+        raise InputError(
+            "trusses differ by their place in the building only where the site is stated",
+            "state [site], or leave --every-truss out",
+            "site",
+            project.source_name,
+        )
+    return {
+        name: replace(project, site=site, title=f"{project.title}, {name} truss")
+        for name, site in at_every_position(project.site, project.spacing).items()
+    }

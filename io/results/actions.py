@@ -10,6 +10,30 @@ from spanwright.io.results.numbers import millimetres, newtons, pairs, ratio
 from spanwright.truss.stiffness import reaction_sums
 
 
+def site(design: Design) -> dict[str, Any] | None:
+    """Return how the site became loads, value by value; None where the user stated every load."""
+    found = design.setting.load_set.site
+    if found is None:
+        return None
+    return {
+        "standard": found.standard,
+        "truss_from_gable_mm": millimetres(found.position),
+        "strip_mm": [millimetres(edge) for edge in found.strip],
+        "steps": [
+            {
+                "symbol": step.symbol,
+                "meaning": step.meaning,
+                "value": step.value,
+                "unit": step.unit,
+                "clause": step.clause,
+                "formula": step.formula,
+                "mark": step.mark,
+            }
+            for step in found.steps
+        ],
+    }
+
+
 def cases(design: Design) -> list[dict[str, Any]]:
     """Return one row a load case, unfactored, with the first arrangement of the supports."""
     names = design.setting.truss.joint_names

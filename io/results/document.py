@@ -7,10 +7,9 @@ from pathlib import Path
 from typing import Any
 
 from spanwright import __version__
-from spanwright.design.cautions import CAUTIONS
 from spanwright.design.result import Design
 from spanwright.io.files import input_hash, write_atomically
-from spanwright.io.results.actions import cases, combinations, deflection, equilibrium, reactions
+from spanwright.io.results.actions import cases, combinations, deflection, equilibrium, reactions, site
 from spanwright.io.results.members import assembly_of, groups, members, pieces
 from spanwright.io.results.numbers import kilograms, millimetres
 from spanwright.io.results.restraint import restraint
@@ -48,6 +47,7 @@ def document(design: Design) -> dict[str, Any]:
             {"joint": truss.joint_names[support.joint], "holds_x": support.x, "holds_y": support.y}
             for support in truss.supports
         ],
+        "site": site(design),
         "cases": cases(design),
         "combinations": combinations(design),
         "reactions": reactions(design),
@@ -61,7 +61,7 @@ def document(design: Design) -> dict[str, Any]:
         "mass_kg": kilograms(design.mass),
         "findings": [],
         "warnings": list(design.warnings),
-        "cautions": [*CAUTIONS, *setting.standard.verify_notes()],
+        "cautions": list(design.cautions),
     }
 
 

@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 from spanwright import __version__
-from spanwright.design.cautions import CAUTIONS
 from spanwright.design.nesting import END_TRIM, KERF
 from spanwright.design.result import Design
 from spanwright.design.standard import Ends
@@ -48,7 +47,7 @@ def notes_table(design: Design) -> Table:
         ("Ends required", _ends(design.setting.project.ends)),
     ]
     rows += [("Warning", warning) for warning in design.warnings]
-    rows += [("Caution", caution) for caution in (*CAUTIONS, *design.setting.standard.verify_notes())]
+    rows += [("Caution", caution) for caution in design.cautions]
     rows += [("Default used", f"{key} = {value}") for key, value in design.setting.project.defaults_used]
     return table("Notes", "Notes", COLUMNS, rows)
 
