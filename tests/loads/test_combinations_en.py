@@ -74,7 +74,7 @@ ACCIDENTAL = set(
 
 def test_every_row_of_6_10() -> None:
     """EN 1990 cl. 6.4.3.2 with Tables A1.1 and A1.2(B): gG 1.35 and 1.00, gQ 1.5, psi0 of snow 0.5 and wind 0.6, seen
-    in Steel Buildings in Europe, Multi-Storey, Part 3: Actions pp. 4, 5; exceptional snow by 6.11b, its psi1 from memory.
+    in Steel Buildings in Europe, Multi-Storey, Part 3: Actions pp. 4, 5; exceptional snow by 6.11b, psi1 from memory.
     """
     combinations = combine(CASES, ONE)
     assert names(combinations, "STR") == full("1.35 most") | full("1.0 least") | ACCIDENTAL
