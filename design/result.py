@@ -18,6 +18,7 @@ from spanwright.design.serviceability import Serviceability
 from spanwright.design.setting import Setting
 from spanwright.design.sizing import Choice, Governing, governing
 from spanwright.design.standard import Demand
+from spanwright.loads.combinations import combination_cautions
 from spanwright.truss.arrays import BoolArray, FloatArray
 from spanwright.truss.restraint import Held, RestraintForce
 
@@ -59,7 +60,9 @@ class Design:
     @property
     def cautions(self) -> tuple[str, ...]:
         """What every output must say: the standing cautions, then what each standard used leaves to verify."""
-        return (*CAUTIONS, *self.setting.standard.verify_notes(), *self.setting.load_set.cautions)
+        setting, project = self.setting, self.setting.project
+        combined = combination_cautions(setting.load_set.cases, project.actions, project.site)
+        return (*CAUTIONS, *setting.standard.verify_notes(), *setting.load_set.cautions, *combined)
 
     @cached_property
     def strength_names(self) -> tuple[str, ...]:

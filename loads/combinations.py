@@ -12,6 +12,7 @@ import numpy as np
 
 from spanwright.loads.cases import Case
 from spanwright.loads.intermediate import Intermediate, Mark, to_verify
+from spanwright.loads.national import national_basis
 from spanwright.loads.partial_factors import en_1990_factors
 from spanwright.loads.site_inputs import SiteInput
 from spanwright.loads.tables import read_table
@@ -100,13 +101,21 @@ def combination_factors(actions: str, site: SiteInput | None = None) -> tuple[In
     return tuple(_standard(actions).factors(site).values())
 
 
-def combination_cautions(actions: str, site: SiteInput | None = None) -> tuple[str, ...]:
-    """Return what a printed copy of the standard must confirm of its combinations; UnknownNameError as `combine`."""
+def combination_cautions(cases: tuple[Case, ...], actions: str, site: SiteInput | None = None) -> tuple[str, ...]:
+    """Return what a printed copy of the standard must confirm of the combinations that these cases make.
+
+    Raises UnknownNameError as `combine`.
+    """
+    standard = _standard(actions)
+    values = standard.factors(site)
+    used = [row for row in standard.rows() if _expand(row, cases, values)]
+    named = {part for row in used for column in COLUMNS for part in row.get(column, "").split("*")}
     tables = (
         Intermediate("", f"combinations for {row['limit_state']}", math.nan, "-", mark=cast(Mark, row["mark"]))
-        for row in _standard(actions).rows()
+        for row in used
     )
-    return to_verify(actions, (*combination_factors(actions, site), *tables))
+    nation = national_basis("" if site is None else site.national) if values else ()
+    return to_verify(actions, (*nation, *(value for name, value in values.items() if name in named), *tables))
 
 
 def factor_matrix(combinations: tuple[Combination, ...], cases: tuple[Case, ...]) -> FloatArray:

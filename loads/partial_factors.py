@@ -5,7 +5,7 @@ from __future__ import annotations
 from dataclasses import replace
 
 from spanwright.loads.intermediate import Intermediate
-from spanwright.loads.national import national_basis, national_value
+from spanwright.loads.national import national_value
 from spanwright.loads.site_inputs import SiteInput
 from spanwright.loads.tables import read_values
 
@@ -21,8 +21,7 @@ def en_1990_factors(site: SiteInput | None) -> dict[str, Intermediate]:
     nation = "" if site is None else site.national
     limit = read_values("eurocode.toml")["combinations"]["high_site"]
     ending = "_high" if site is not None and site.altitude > limit * 1e3 else ""
-    found = {step.symbol: step for step in national_basis(nation)}
-    found |= {symbol: national_value(nation, symbol) for symbol in _PLAIN}
+    found = {symbol: national_value(nation, symbol) for symbol in _PLAIN}
     for symbol in _BY_ALTITUDE:
         found[symbol] = replace(national_value(nation, symbol + ending), symbol=symbol)
     return found

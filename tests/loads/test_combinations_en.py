@@ -195,9 +195,16 @@ def test_factors_are_explained() -> None:
 
 @pytest.mark.parametrize("actions", ACTIONS)
 def test_what_is_from_memory_is_named(actions: str) -> None:
-    assert "taken from memory" in combination_cautions(actions)[0]
-    assert "snow above 1000 m" in combination_cautions(ONE, site(1200e3))[0]
-    assert "values of Finland known here" in combination_cautions(ONE, site(0.0, "Finland"))[1]
+    assert "combinations for SLS" in combination_cautions(CASES, actions)[0]
+    assert "snow above 1000 m" in combination_cautions(CASES, ONE, site(1200e3))[0]
+    assert "values of Finland known here" in combination_cautions(CASES, ONE, site(0.0, "Finland"))[1]
+
+
+def test_what_no_case_makes_use_of_is_not_named() -> None:
+    calm = tuple(case for case in CASES if "snow" not in case.kind)
+    assert "snow" not in "".join(combination_cautions(calm, ONE, site(1200e3)))
+    assert "STR" not in "".join(combination_cautions(calm, ONE))
+    assert "combinations for STR" in combination_cautions(CASES, ONE)[0]  # 6.11b of exceptional snow
 
 
 def test_unknown_nations_are_refused() -> None:
