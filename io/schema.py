@@ -52,8 +52,9 @@ class ProjectFile(Table):
     quantity: Annotated[int, field(counted(1, 10_000))] = key("how many alike", 1)
     standard: Name = key("the member standard", "SANS 10162-1")
     actions: Name = key(
-        'the loading standard with its edition, such as "SANS 10160:2011" or "SANS 10160:2019"; it sets the load '
-        "factors. An edition's wind factor goes with its own wind map only"
+        'the loading standard with its edition: "SANS 10160:2011", "SANS 10160:2019", "EN 1990:2002, 6.10" or '
+        '"EN 1990:2002, 6.10a and 6.10b"; it sets the load factors. An edition\'s wind factor goes with its own wind '
+        "map only"
     )
     truss: TrussTable = subtable(FormTruss)
     restraint: RestraintTable = subtable(RestraintTable)

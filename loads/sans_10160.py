@@ -45,7 +45,16 @@ class Sans10160:
         )
 
     def imposed(self, site: SiteInput, shape: RoofShape, area: float) -> Imposed:  # noqa: ARG002  # the same on every roof
-        """Return the imposed load of an inaccessible roof by tributary area, mm2 on plan (10160-2 Table 5)."""
+        """Return the imposed load of an inaccessible roof by tributary area, mm2 on plan (10160-2 Table 5).
+
+        Raises InputError (key "site.national_values"): the standard leaves nothing to nations.
+        """
+        if site.national:
+            raise InputError(
+                f"national values of {site.national} are stated, and {self.name} leaves none open",
+                "leave the key out, or state a Eurocode under actions",
+                "site.national_values",
+            )
         values = _values()["imposed"]
         pressure = float(np.interp(area / 1e6, values["areas"], values["pressures"]))
         formula = "0.3 + (15 - A)/60, within 0.30 and 0.50"

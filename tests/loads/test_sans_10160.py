@@ -82,3 +82,9 @@ def test_there_is_no_snow_in_sans_10160() -> None:
     assert Sans10160("2019").snow(SITE, SHAPE) == ()
     with pytest.raises(InputError, match="no part on snow"):
         Sans10160("2019").snow(replace(SITE, snow=SnowInput(0.5e-3)), SHAPE)
+
+
+def test_national_values_are_refused_where_the_standard_leaves_none_open() -> None:
+    with pytest.raises(InputError, match="national values of Norway") as caught:
+        Sans10160("2011").imposed(replace(SITE, national="Norway"), SHAPE, 75e6)
+    assert caught.value.key == "site.national_values"
