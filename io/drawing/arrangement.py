@@ -2,17 +2,21 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Sequence
+from collections.abc import Iterator
 from dataclasses import dataclass
-from functools import cache
-from itertools import product
+from functools import cached_property
 from typing import Protocol
 
+import numpy as np
+
+from spanwright.design.cutting import cuts
+from spanwright.design.lying import edges
 from spanwright.design.result import Design
 from spanwright.io.drawing.cross_sections import CrossSections, cross_sections
 from spanwright.io.drawing.elevation import Elevation, lay_out
 from spanwright.io.drawing.lettering import LARGE, TEXT
-from spanwright.io.drawing.notes import Legend, caution, general_notes
+from spanwright.io.drawing.notes import caution, general_notes, legend
+from spanwright.io.drawing.packing import Block, Spot, pack
 from spanwright.io.drawing.pen import Pen
 from spanwright.io.drawing.schedules import bearing_table, member_schedule, parts, restraint_table
 from spanwright.io.drawing.tables import DrawnTable
@@ -24,36 +28,29 @@ SCALES = (10, 20, 50, 100, 200, 500)
 """Elevations 1:n by ISO 5455."""
 SECTION_SCALES = (1, 2, 5, 10)
 """Cross-sections 1:n by ISO 5455."""
-FREE = 6.0
-"""Left free between blocks."""
+SMALLEST, LARGEST = 22.0, 150.0
+"""mm on paper: no cross-section is drawn smaller, for its dimensions' sake, nor larger."""
+INSIDE = 6.0
+"""mm on paper left free inside the frame."""
+LEAST_GAP = 0.7
+"""mm on paper: parallel lines, such as the edges of a member, are at least this far apart (ISO 128-2)."""
 VIEW_TITLE = LARGE + TEXT + 5.0
 """Height of the title under a view."""
+STRIPS = (1, 2, 3)
+"""Tables may be drawn in so many strips; a short one in up to two."""
+NOTE_WIDTHS = (WIDTH, 130.0, 240.0)
+"""mm, of notes; best as wide as the title block."""
+LEGEND_COLUMNS = (2, 3, 1)
+"""Columns that the legend may have."""
+SHORT = 5
+"""Rows of the shortest strip worth drawing."""
 
 
 class Drawn(Protocol):
-    """A block that draws itself down from its upper left corner."""
+    """What draws itself down from its upper left corner."""
 
     def draw(self, pen: Pen, left: float, top: float) -> None:
         """Draw it."""
-
-
-@dataclass(frozen=True)
-class Spot:
-    """A rectangle on the sheet: left, top, width, height."""
-
-    left: float
-    top: float
-    width: float
-    height: float
-
-    def clear_of(self, other: Spot) -> bool:
-        """Whether two spots have `FREE` between them."""
-        return (
-            self.left >= other.left + other.width + FREE
-            or other.left >= self.left + self.width + FREE
-            or self.top <= other.top - other.height - FREE
-            or other.top <= self.top - self.height - FREE
-        )
 
 
 @dataclass(frozen=True, eq=False)
@@ -71,106 +68,102 @@ class Arrangement:
 
 
 def arrange(design: Design) -> Arrangement:
-    """Return the smallest sheet and the largest scales at which all fits and every mark stands along its member.
-
-    Where no sheet has room for all marks, that with the fewest on leaders.
+    """Return the smallest sheet with everything on it, of that the largest scales, so that all marks stand along their
+    members; where no sheet has room for all of them, that with the fewest on leaders.
     """
-    best: Arrangement | None = None
-    for found in _possible(design):
-        if found.elevation.led == 0:
-            return found
-        if best is None or found.elevation.led < best.elevation.led:
-            best = found
-    if best is None:
-        raise NotImplementedError
-    return best
+    possible = _Possible(design)
+    for scales in (possible.clear_scales, SCALES):
+        best: Arrangement | None = None
+        for found in possible.sheets(scales):
+            if best is None or found.elevation.led < best.elevation.led:
+                best = found
+            if best.elevation.led == 0:
+                break
+        if best is not None:
+            return best
+    raise NotImplementedError
 
 
-def _possible(design: Design) -> Iterator[Arrangement]:
-    """Give sheets that hold everything, small ones first, of each the one with the largest scales."""
-    elevation_at = cache(lambda scale: lay_out(design, scale))
-    for (paper, width, height), scale in product(PAPERS, SCALES):
-        elevation = elevation_at(scale)
-        if elevation.size[0] > width - FILING - MARGIN - 2.0:
-            continue
-        found = _packed(design, paper, width, height, elevation)
-        if found:
-            yield found
+@dataclass(frozen=True, eq=False)
+class _Possible:
+    """The sheets that a design can be drawn on."""
 
+    design: Design
 
-def _packed(design: Design, paper: str, width: float, height: float, elevation: Elevation) -> Arrangement | None:
-    texts: list[DrawnTable | Legend | object]
-    column = WIDTH
-    blocks: list[Drawn] = [
-        general_notes(design, column),
-        caution(design, column),
-        DrawnTable(parts(design)),
-        DrawnTable(member_schedule(design)),
-        DrawnTable(restraint_table(design)),
-        DrawnTable(bearing_table(design)),
-        Legend(column),
-    ]
-    for scale, columns in product(SECTION_SCALES, range(len(design.choices), 0, -1)):
-        sections = cross_sections(design, scale, columns)
-        sizes = [
-            (float(elevation.size[0]), float(elevation.size[1]) + VIEW_TITLE),
-            *(_size(block) for block in blocks),
-            (float(sections.size[0]), float(sections.size[1]) + VIEW_TITLE),
-        ]
-        spots = pack(sizes, width, height)
-        if spots:
-            return Arrangement(
-                paper,
-                width,
-                height,
-                elevation,
-                spots[0],
-                sections,
-                spots[-1],
-                tuple(zip(blocks, spots[1:-1], strict=True)),
+    @cached_property
+    def clear_scales(self) -> tuple[int, ...]:
+        """Scales at which the two edges of every member are seen apart."""
+        widths = []
+        for choice in self.design.choices:
+            lower, upper = edges(choice.section, choice.group.role)
+            widths.append(upper - lower)
+        return tuple(scale for scale in SCALES if min(widths) / scale >= LEAST_GAP)
+
+    @cached_property
+    def _steel(self) -> float:
+        corners = np.vstack([cut.outline for cut in cuts(self.design.setting, self.design.choices)])
+        return float(np.ptp(corners[:, 0]))
+
+    @cached_property
+    def _texts(self) -> tuple[tuple[tuple[Drawn, ...], Block], ...]:
+        """The blocks beside the views, each with what it may look like."""
+        found: list[tuple[tuple[Drawn, ...], Block]] = []
+        for table in (parts, member_schedule, restraint_table, bearing_table):
+            made = table(self.design)
+            strips = STRIPS if len(made.rows) > 2 * SHORT else STRIPS[:2]
+            drawn = tuple(DrawnTable(made, number) for number in strips)
+            found.append((drawn, Block(tuple((one.size[0], one.height) for one in drawn))))
+        for notes in (general_notes, caution):
+            widths = tuple(notes(self.design, width) for width in NOTE_WIDTHS)
+            found.append((widths, Block(tuple((one.width, one.height) for one in widths), at_right=True)))
+        signs = tuple(legend(self.design, columns) for columns in LEGEND_COLUMNS)
+        found.append((signs, Block(tuple((one.width, one.height) for one in signs))))
+        return tuple(found)
+
+    @cached_property
+    def _sections(self) -> list[tuple[CrossSections, ...]]:
+        """Cross-sections at each scale that suits, the largest first, in every number of columns."""
+        sizes = [float(max(choice.section.depth[0], choice.section.width[0])) for choice in self.design.choices]
+        scales = [n for n in SECTION_SCALES if min(sizes) / n >= SMALLEST and max(sizes) / n <= LARGEST]
+        if not scales:
+            scales = [next(n for n in SECTION_SCALES if max(sizes) / n <= LARGEST)]
+        columns = range(len(self.design.choices), 0, -1)
+        return [tuple(cross_sections(self.design, scale, number) for number in columns) for scale in scales]
+
+    def sheets(self, scales: tuple[int, ...]) -> Iterator[Arrangement]:
+        """Give sheets that hold everything, small ones first, each with the largest scale of elevation it holds."""
+        laid: dict[int, Elevation] = {}
+        for paper, width, height in PAPERS:
+            inside = Spot(
+                FILING + INSIDE,
+                height - MARGIN - INSIDE,
+                width - FILING - MARGIN - 2.0 * INSIDE,
+                height - 2.0 * (MARGIN + INSIDE),
             )
-    return None
+            for scale in scales:
+                if self._steel / scale > inside.width:
+                    continue
+                if scale not in laid:
+                    laid[scale] = lay_out(self.design, scale)
+                found = self._on(paper, width, height, inside, laid[scale])
+                if found:
+                    yield found
+                    break
 
-
-def _size(block: object) -> tuple[float, float]:
-    if isinstance(block, DrawnTable):
-        return block.size[0], block.height
-    return block.width, block.height  # type: ignore[attr-defined]
-
-
-def pack(sizes: Sequence[tuple[float, float]], width: float, height: float) -> list[Spot] | None:
-    """Return a spot for each size on a sheet, clear of each other and of the title block, or None.
-
-    The first stands at the top in the middle; each other as high as can be, then as far to the left.
-    """
-    left, right, bottom, top = FILING + FREE, width - MARGIN - FREE, MARGIN + FREE, height - MARGIN - FREE
-    block = Spot(width - MARGIN - WIDTH, MARGIN + HEIGHT + REVISIONS_HEIGHT, WIDTH, HEIGHT + REVISIONS_HEIGHT)
-    first = sizes[0]
-    if first[0] > right - left or first[1] > top - bottom:
+    def _on(self, paper: str, width: float, height: float, inside: Spot, elevation: Elevation) -> Arrangement | None:
+        corner = Spot(width - MARGIN - WIDTH, MARGIN + HEIGHT + REVISIONS_HEIGHT, WIDTH, HEIGHT + REVISIONS_HEIGHT)
+        across, up = (float(size) for size in elevation.size)
+        for left in (inside.left + (inside.width - across) / 2.0, inside.left):
+            view = Spot(left, inside.top, across, up + VIEW_TITLE)
+            if not view.within(inside) or not view.clear_of(corner, 0.0):
+                continue
+            for sections in self._sections:
+                sizes = tuple((float(one.size[0]), float(one.size[1]) + VIEW_TITLE) for one in sections)
+                packed = pack(inside, (corner, view), (Block(sizes), *(block for _, block in self._texts)))
+                if packed:
+                    (at, spot), *others = packed
+                    blocks = tuple(
+                        (drawn[k], place) for (drawn, _), (k, place) in zip(self._texts, others, strict=True)
+                    )
+                    return Arrangement(paper, width, height, elevation, view, sections[at], spot, blocks)
         return None
-    taken = [block, Spot((left + right - first[0]) / 2.0, top, *first)]
-    if not taken[1].clear_of(block):
-        taken[1] = Spot(left, top, *first)
-        if not taken[1].clear_of(block):
-            return None
-    order = sorted(range(1, len(sizes)), key=lambda at: -sizes[at][0] * sizes[at][1])
-    spots: dict[int, Spot] = {0: taken[1]}
-    for at in order:
-        spot = _free_spot(sizes[at], taken, left, right, bottom, top)
-        if spot is None:
-            return None
-        spots[at] = spot
-        taken.append(spot)
-    return [spots[at] for at in range(len(sizes))]
-
-
-def _free_spot(
-    size: tuple[float, float], taken: list[Spot], left: float, right: float, bottom: float, top: float
-) -> Spot | None:
-    tops = sorted({top, *(spot.top - spot.height - FREE for spot in taken)}, reverse=True)
-    lefts = sorted({left, *(spot.left + spot.width + FREE for spot in taken)})
-    for y, x in product(tops, lefts):
-        spot = Spot(x, y, *size)
-        if x + size[0] <= right + FREE and y - size[1] >= bottom and all(spot.clear_of(other) for other in taken):
-            return spot
-    return None

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 import numpy as np
 
@@ -26,8 +26,10 @@ from spanwright.io.drawing.standards import (
 )
 from spanwright.truss.arrays import FloatArray
 
-SIDE, LINE = 20.0, 8.0
-"""mm on paper kept for dimensions on each side of the steel, and from line to line."""
+LINE = 8.0
+"""mm on paper from the steel to its dimensions, and from line to line."""
+TEXT_ROOM = 3.6
+"""mm on paper kept beyond the last dimension line for its text."""
 OVER = 12.0
 """mm on paper kept for dimensions above and below the steel."""
 BEYOND = 5.0
@@ -40,7 +42,10 @@ HATCH = 1.4
 
 @dataclass(frozen=True, eq=False)
 class Cell:
-    """One cross-section: what it goes through, its pieces, its packing plate (4, 2) or None, gusset faces, caption."""
+    """One cross-section: what it goes through, its pieces, its packing plate (4, 2) or None, gusset, title, caption.
+
+    width : mm on paper.
+    """
 
     choice: Choice
     pieces: tuple[Shape, ...]
@@ -48,6 +53,7 @@ class Cell:
     gusset: float
     title: str
     caption: tuple[str, ...]
+    width: float
 
     @property
     def steel(self) -> FloatArray:
@@ -58,45 +64,48 @@ class Cell:
 
 @dataclass(frozen=True, eq=False)
 class CrossSections:
-    """Cross-sections 1:scale in `columns` columns; cell : (2,) width and height of each on paper, mm."""
+    """Cross-sections 1:scale in rows; high : height of a row on paper, mm."""
 
     scale: int
-    columns: int
-    cells: tuple[Cell, ...]
-    cell: FloatArray
+    rows: tuple[tuple[Cell, ...], ...]
+    high: float
 
     @property
     def size(self) -> FloatArray:
         """(2,) width and height on paper, mm."""
-        return self.cell * np.array([self.columns, -(-len(self.cells) // self.columns)])
+        return np.array([max(sum(cell.width for cell in row) for row in self.rows), self.high * len(self.rows)])
 
 
 def cross_sections(design: Design, scale: int, columns: int) -> CrossSections:
-    """Return the cross-sections of a passing design, one for each group of members."""
-    bare = [_cell(design, choice, NARROWEST) for choice in design.choices]
-    steel = np.max([np.ptp(cell.steel, axis=0) for cell in bare], axis=0) / scale
-    width = max(NARROWEST, float(steel[0]) + 2.0 * SIDE)
-    cells = tuple(_cell(design, choice, width - 4.0) for choice in design.choices)
+    """Return the cross-sections of a passing design, one for each group of members, so many side by side."""
+    cells = [_cell(design, choice, scale) for choice in design.choices]
+    steel = max(float(np.ptp(cell.steel[:, 1])) for cell in cells) / scale
     lines = max(len(cell.caption) for cell in cells)
-    height = float(steel[1]) + 2.0 * OVER + LARGE * STEP + lines * TEXT * STEP + 4.0
-    return CrossSections(scale, min(columns, len(cells)), cells, np.array([width, height]))
+    rows = tuple(tuple(cells[at : at + columns]) for at in range(0, len(cells), columns))
+    return CrossSections(scale, rows, steel + 2.0 * OVER + LARGE * STEP + lines * TEXT * STEP + 4.0)
 
 
-def _cell(design: Design, choice: Choice, width: float) -> Cell:
+def _cell(design: Design, choice: Choice, scale: int) -> Cell:
     gap = design.setting.project.members.gap
     truss, section = design.setting.truss, choice.section
     names = [truss.bar_names[bar] for bar in choice.group.bars]
     packs = [piece for piece in design.pieces if piece.description == "packing plate" and set(piece.bars) & set(names)]
     texts = [choice.name, in_ranges(names)]
     texts += [f"packs {piece.mark}: {piece.section} - {piece.cut_length:.0f}" for piece in packs]
-    return Cell(
+    gusset = gap if section.family == "L" else 0.0
+    cell = Cell(
         choice,
         shapes(section, choice.group.role, gap),
         _pack(choice, packs[0]) if packs else None,
-        gap if section.family == "L" else 0.0,
+        gusset,
         choice.group.name.upper(),
-        tuple(line for text in texts for line in wrapped(text, width, most=2)),
+        (),
+        0.0,
     )
+    lines = 4 if packs else 3
+    width = max(NARROWEST, (float(np.ptp(cell.steel[:, 0])) + gusset) / scale + lines * LINE + 2.0 * TEXT_ROOM)
+    caption = tuple(line for text in texts for line in wrapped(text, width - 4.0, most=2))
+    return replace(cell, caption=caption, width=width)
 
 
 def _pack(choice: Choice, piece: Piece) -> FloatArray:
@@ -112,10 +121,14 @@ def _pack(choice: Choice, piece: Piece) -> FloatArray:
 
 def draw_cross_sections(pen: Pen, found: CrossSections, corner: FloatArray) -> None:
     """Draw cross-sections in model space, the upper left corner of all at `corner` (2,), mm."""
-    for place, cell in enumerate(found.cells):
-        row, column = divmod(place, found.columns)
-        left = corner + found.scale * found.cell * np.array([column, -row])
-        _draw_cell(pen, cell, left, found.cell)
+    across = float(found.size[0])
+    for number, row in enumerate(found.rows):
+        apart = (across - sum(cell.width for cell in row)) / len(row)
+        left = apart / 2.0
+        for cell in row:
+            at = corner + found.scale * np.array([left, -number * found.high])
+            _draw_cell(pen, cell, at, np.array([cell.width, found.high]))
+            left += cell.width + apart
 
 
 def _draw_cell(pen: Pen, cell: Cell, corner: FloatArray, size: FloatArray) -> None:
@@ -128,7 +141,8 @@ def _draw_cell(pen: Pen, cell: Cell, corner: FloatArray, size: FloatArray) -> No
         pen.text(NOTES, (x, y), line, across="centre")
     steel = cell.steel
     low, high = steel.min(axis=0), steel.max(axis=0)
-    middle = np.array([x, (y - 2.0 * unit + corner[1] - size[1] * unit) / 2.0])
+    aside = (1.0 if cell.pack is None else 2.0) - 2.0
+    middle = np.array([x - aside * LINE / 2.0 * unit, (y - 2.0 * unit + corner[1] - size[1] * unit) / 2.0])
     origin = middle - np.array([(low[0] + high[0]) / 2.0, (low[1] + high[1]) / 2.0])
     for piece in cell.pieces:
         rings = [ring + origin for ring in piece.rings]
@@ -183,7 +197,7 @@ def _of_angles(cell: Cell, rings: FloatArray, low: FloatArray, high: FloatArray,
     heel = section.gap / 2.0 if star else upper if heel_up else lower
     inward = 1.0 if star or not heel_up else -1.0
     left, right = float(min(low[0], -back)) - LINE * unit, float(high[0]) + LINE * unit
-    level = upper + LINE * unit if heel_up or star else lower - LINE * unit
+    level = float(high[1]) + LINE * unit if heel_up or star else float(low[1]) - LINE * unit
     legs_low, legs_high = sorted((heel, heel + inward * leg))
     yield _upright("connected leg", back, legs_low, legs_high, left)
     if not star:

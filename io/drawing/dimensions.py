@@ -8,16 +8,17 @@ from itertools import pairwise
 
 import numpy as np
 
-from spanwright.io.drawing.lettering import TEXT
+from spanwright.io.drawing.lettering import TEXT, width_of
 from spanwright.io.drawing.pen import Pen
-from spanwright.io.drawing.standards import DIMENSION_GAP, DIMENSIONS
+from spanwright.io.drawing.standards import DIMENSION_GAP, DIMENSIONS, EXTENSION_LENGTH, TICK
+from spanwright.io.pictures.boxes import box, boxes_along
 from spanwright.truss.arrays import FloatArray
 from spanwright.truss.chords import slopes
 from spanwright.truss.model import Truss
 from spanwright.truss.tolerances import TOLERANCES
 
-FIRST, APART = 16.0, 8.0
-"""mm on paper from the steel to the first dimension line, and from line to line (ISO 129-1: 10 and 7 at least)."""
+FIRST, BESIDE, APART = 18.0, 11.0, 8.0
+"""mm on paper from the steel to the first dimension line above and below, and beside it; and from line to line."""
 
 
 @dataclass(frozen=True, eq=False)
@@ -36,13 +37,22 @@ class Dimension:
         turn = np.radians(self.angle)
         return abs(float((self.end - self.start) @ np.array([np.cos(turn), np.sin(turn)])))
 
-    def corners(self, scale: float) -> FloatArray:
-        """Return (4, 2) points around the dimension line and its text."""
+    def boxes(self, scale: float) -> FloatArray:
+        """Return the (3, 6) boxes that its line with the text, and its two extension lines take."""
         turn = np.radians(self.angle)
         along, across = np.array([np.cos(turn), np.sin(turn)]), np.array([-np.sin(turn), np.cos(turn)])
-        reach = (TEXT + 2.0 * DIMENSION_GAP) * scale
         feet = [self.line + along * ((point - self.line) @ along) for point in (self.start, self.end)]
-        return np.array([foot + side * reach * across for foot in feet for side in (1.0, -1.0)])
+        over = (TEXT + 2.0 * DIMENSION_GAP) * scale
+        below = TICK / 2.0 * scale
+        shown = self.length + TICK * scale
+        middle = (feet[0] + feet[1]) / 2.0 + (over - below) / 2.0 * across
+        inward = np.sign((self.start - feet[0]) @ across) * EXTENSION_LENGTH * scale * across
+        return np.vstack(
+            [
+                box(middle, turn, max(shown, width_of(f"{self.length:.0f}") * scale), over + below),
+                boxes_along(np.array([[foot, foot + inward] for foot in feet]), 0.5 * scale),
+            ]
+        )
 
 
 def dimensions(truss: Truss, outer: FloatArray, scale: float) -> tuple[Dimension, ...]:
@@ -60,7 +70,7 @@ def dimensions(truss: Truss, outer: FloatArray, scale: float) -> tuple[Dimension
         *_bottom_panels(truss, levels[0]),
         *_span(truss, levels[1]),
         *_overall_length(truss, low, high, levels),
-        *_heights(truss, low, high, first, apart),
+        *_heights(truss, low, high, BESIDE * scale, apart),
     )
 
 

@@ -14,10 +14,11 @@ from ezdxf.document import Drawing
 from ezdxf.layouts import Paperspace
 
 from spanwright.design.result import Design
-from spanwright.io.drawing.arrangement import VIEW_TITLE, Arrangement, Spot, arrange
+from spanwright.io.drawing.arrangement import VIEW_TITLE, Arrangement, arrange
 from spanwright.io.drawing.cross_sections import draw_cross_sections
 from spanwright.io.drawing.elevation import draw_elevation
 from spanwright.io.drawing.lettering import LARGE, TEXT, as_dxf
+from spanwright.io.drawing.packing import Spot
 from spanwright.io.drawing.pen import Pen
 from spanwright.io.drawing.rendering import pdf_of
 from spanwright.io.drawing.standards import ELEVATION_STYLE, NOTES, SECTION_STYLE, VIEWPORTS, set_up

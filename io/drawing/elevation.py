@@ -6,6 +6,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from spanwright.design.cutting import cuts
 from spanwright.design.result import Design
 from spanwright.io.drawing.dimensions import Dimension, dimensions, draw_dimensions
 from spanwright.io.drawing.holding import Signs, draw_signs, signs
@@ -49,20 +50,16 @@ class Elevation:
 def lay_out(design: Design, scale: int) -> Elevation:
     """Lay out the elevation of a passing design at 1:scale."""
     steel = outlines(design)
-    outer = np.vstack([outline.ring for outline in steel])
+    outer = np.vstack([cut.outline for cut in cuts(design.setting, design.choices)])
     found = signs(design, scale)
-    texts = labels(design, found)
     measured = dimensions(design.setting.truss, outer, scale)
-    points = np.vstack(
-        [
-            outer,
-            *(one.corners(scale) for one in measured),
-            *(corners(label.box(scale)) for label in texts),
-            *(corners(one) for one in found.boxes),
-        ]
-    )
+    taken = np.vstack([found.boxes, *(one.boxes(scale) for one in measured)])
+    texts = labels(design, found, taken)
+    around = [corners(one) for one in (*taken, *(label.box(scale) for label in texts))]
+    points = np.vstack([outer, *around])
     margin = MARGIN * scale
-    return Elevation(scale, steel, found, texts, measured, points.min(axis=0) - margin, points.max(axis=0) + margin)
+    low, high = points.min(axis=0) - margin, points.max(axis=0) + margin
+    return Elevation(scale, steel, found, texts, measured, low, high)
 
 
 def draw_elevation(pen: Pen, design: Design, elevation: Elevation) -> None:

@@ -73,7 +73,9 @@ def signs(design: Design, scale: float) -> Signs:
             for brace in restraint.braces
             for line in (restraint.line(brace.line),)
         ),
-        ties=tuple((_tie(truss.xy[tie.joint], scale), tie.counted) for tie in restraint.ties),
+        ties=tuple(
+            (oblong(truss.xy[tie.joint], (TIE[0] * scale, TIE[1] * scale)), tie.counted) for tie in restraint.ties
+        ),
         bearings=tuple((_bearing(design, support.joint), not support.x) for support in truss.supports if support.y),
         scale=scale,
     )
@@ -108,11 +110,6 @@ def _brace(joint: FloatArray, purlin: FloatArray, scale: float) -> FloatArray:
     return np.array([joint + aside + 0.04 * span, purlin + aside - 0.04 * span])
 
 
-def _tie(joint: FloatArray, scale: float) -> FloatArray:
-    half = np.array(TIE) * scale / 2.0
-    return joint + half * np.array([[-1.0, -1.0], [1.0, -1.0], [1.0, 1.0], [-1.0, 1.0]])
-
-
 def _bearing(design: Design, joint: int) -> FloatArray:
     """Return the point under a joint at which its bearing begins: the lowest edge of the chords that meet there."""
     truss = design.setting.truss
@@ -125,31 +122,40 @@ def _bearing(design: Design, joint: int) -> FloatArray:
     return point
 
 
+def oblong(middle: FloatArray, sides: tuple[float, float]) -> FloatArray:
+    """Return the outline (4, 2) of an upright oblong about a point."""
+    outline: FloatArray = middle + np.array(sides) / 2.0 * np.array(
+        [[-1.0, -1.0], [1.0, -1.0], [1.0, 1.0], [-1.0, 1.0]]
+    )
+    return outline
+
+
 def draw_signs(pen: Pen, found: Signs) -> None:
-    """Draw the signs; filled, or drawn in full, is what counts."""
+    """Draw the signs of an elevation."""
     for ring, _, counted in found.purlins:
-        _outline(pen, PURLINS, ring, filled=counted)
+        draw_sign(pen, PURLINS, ring, counted=counted)
     for line, counted in found.braces:
-        pen.line(BRACES, *line)
-        if not counted:
-            _cross(pen, BRACES, line.mean(axis=0))
+        draw_brace(pen, line, counted=counted)
     for ring, counted in found.ties:
-        _outline(pen, TIES, ring, filled=counted)
+        draw_sign(pen, TIES, ring, counted=counted)
     for top, slides in found.bearings:
         draw_bearing(pen, top, slides=slides)
 
 
-def _outline(pen: Pen, layer: Layer, ring: FloatArray, *, filled: bool) -> None:
+def draw_sign(pen: Pen, layer: Layer, ring: FloatArray, *, counted: bool) -> None:
+    """Draw an outline, filled where what it stands for counts."""
     pen.path(layer, ring, closed=True)
-    if filled:
+    if counted:
         pen.area(layer, ring)
 
 
-def _cross(pen: Pen, layer: Layer, middle: FloatArray) -> None:
-    """Cross out a brace that does not count."""
-    arm = 1.2 * pen.scale
-    for turn in (1.0, -1.0):
-        pen.line(layer, middle - arm * np.array([1.0, turn]), middle + arm * np.array([1.0, turn]))
+def draw_brace(pen: Pen, line: FloatArray, *, counted: bool) -> None:
+    """Draw a knee brace along a line (2, 2), crossed out where it does not count."""
+    pen.line(BRACES, *line)
+    if not counted:
+        arm, middle = 1.2 * pen.scale, line.mean(axis=0)
+        for turn in (1.0, -1.0):
+            pen.line(PURLINS, middle - arm * np.array([1.0, turn]), middle + arm * np.array([1.0, turn]))
 
 
 def draw_bearing(pen: Pen, top: FloatArray, *, slides: bool) -> None:

@@ -19,8 +19,8 @@ TEXT, LARGE, TITLE = 2.5, 3.5, 5.0
 WIDTH_FACTOR = 0.85
 """Share of the font's own width: with it figures are as wide as ISO 3098 type B has them."""
 
-STEP = 1.7
-"""Distance from line to line, in heights of the lettering (ISO 3098: at least 1.4, with accents 1.7)."""
+STEP = 1.6
+"""Distance from line to line, in heights of the lettering (ISO 3098: at least 1.4)."""
 
 ELLIPSIS = "\u2026"
 LONGEST = 2000

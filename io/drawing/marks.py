@@ -18,13 +18,15 @@ from spanwright.io.drawing.standards import JOINTS, MARKS, PURLINS, Layer
 from spanwright.io.pictures.boxes import box, boxes_along
 from spanwright.truss.arrays import FloatArray
 
+BALLOON = 2.3
+"""mm on paper: radius of the circle round the number of a purlin line."""
 CLEAR = 0.5
 """mm on paper left free on all sides of a text."""
 OFF = 0.9
 """mm on paper between a member's edge and the text beside it."""
-BEYOND_SIGNS = 8.5
+BEYOND_SIGNS = 7.5
 """mm on paper from a chord to texts beyond its purlins and joint names."""
-LEADERS = tuple(np.arange(6.0, 60.0, 2.0))
+LEADERS = tuple(np.arange(6.0, 48.0, 3.0))
 """mm on paper: lengths of leaders, tried in this order."""
 ABOVE = (90.0, 60.0, 120.0, 40.0, 140.0, 0.0, 180.0)
 BELOW = (270.0, 300.0, 240.0, 320.0, 220.0, 0.0, 180.0)
@@ -34,23 +36,26 @@ BESIDE = (180.0, 0.0, 135.0, 45.0, 225.0, 315.0, 90.0, 270.0)
 
 @dataclass(frozen=True, eq=False)
 class Label:
-    """One text on the elevation: its middle (2,) in model mm, its angle in degrees, and its leader (2, 2) or None."""
+    """One text on the elevation: its middle (2,) in model mm, its angle in degrees, and its leader (2, 2) or None; whether a circle
+    stands round it.
+    """
 
     text: str
     middle: FloatArray
     angle: float
     layer: Layer
     leader: FloatArray | None = None
+    ringed: bool = False
 
     def box(self, scale: float) -> FloatArray:
         """Return the (6,) box of its letters, model mm."""
         return box(self.middle, np.radians(self.angle), width_of(self.text) * scale, TEXT * scale)
 
 
-def labels(design: Design, found: Signs) -> tuple[Label, ...]:
-    """Return every text of an elevation at the scale of its signs."""
+def labels(design: Design, found: Signs, taken: FloatArray) -> tuple[Label, ...]:
+    """Return every text of an elevation at the scale of its signs, clear of the (n, 6) boxes that are taken."""
     scale = found.scale
-    occupied = Occupied(np.vstack([_steel(design), found.boxes]))
+    occupied = Occupied(np.vstack([_steel(design), taken]))
     placed = [*_purlin_numbers(design, found, occupied), *_joint_names(design, scale, occupied)]
     left = []
     for cut in sorted(cuts(design.setting, design.choices), key=lambda cut: cut.axis):
@@ -96,25 +101,33 @@ def section_of(cut: Cut) -> str:
 def _along(design: Design, cut: Cut, scale: float, occupied: Occupied) -> list[Label]:
     """Place mark and section along a member: in one line, else one on either side, else nothing."""
     mark, section = mark_of(design, cut), section_of(cut)
-    together = _beside(f"{mark}  {section}", cut, scale, occupied)
+    together = _beside(design, f"{mark}  {section}", cut, scale, occupied)
     if together:
         return [together]
     before = occupied.texts
-    apart = [_beside(text, cut, scale, occupied) for text in (mark, section)]
+    apart = [_beside(design, text, cut, scale, occupied) for text in (mark, section)]
     if all(apart):
         return [label for label in apart if label]
     occupied.texts = before
     return []
 
 
-def _beside(text: str, cut: Cut, scale: float, occupied: Occupied) -> Label | None:
+def _beside(design: Design, text: str, cut: Cut, scale: float, occupied: Occupied) -> Label | None:
     lower, upper = edges(cut.choice.section, cut.choice.group.role)
     away = max(upper, -lower) + (OFF - CLEAR) * scale
     role = cut.choice.group.role
     aways = (away, away + BEYOND_SIGNS * scale) if "chord" in role else (away,)
     sides = (-1.0, 1.0) if role == "bottom chord" else (1.0, -1.0)
-    place = along_member(np.array([cut.start, cut.finish]), _size(text, scale), aways, sides, occupied)
+    place = along_member(_joint_to_joint(design, cut), _size(text, scale), aways, sides, occupied)
     return Label(text, place.middle, place.angle, MARKS) if place else None
+
+
+def _joint_to_joint(design: Design, cut: Cut) -> FloatArray:
+    """Return the ends (2, 2) of a run: its joints, of a chord with an overhang its tip."""
+    joints = design.setting.truss.xy[design.setting.truss.ends[list(cut.bars)].ravel()]
+    points = np.vstack([joints, cut.start, cut.finish])
+    along = (points - cut.start) @ cut.direction
+    return np.array([points[along.argmin()], points[along.argmax()]])
 
 
 def _with_leader(design: Design, cut: Cut, scale: float, occupied: Occupied) -> Iterator[Label]:
@@ -132,13 +145,13 @@ def _purlin_numbers(design: Design, found: Signs, occupied: Occupied) -> Iterato
         bearing = float(np.degrees(np.arctan2(upward[1], upward[0])))
         place = near_point(
             ring.mean(axis=0),
-            _size(text, scale),
-            ((PURLIN / 2.0 + 0.4) * scale, (PURLIN / 2.0 + 3.5) * scale),
+            (2.0 * BALLOON * scale, 2.0 * BALLOON * scale),
+            ((PURLIN / 2.0 + 0.3) * scale, (PURLIN / 2.0 + 3.0) * scale),
             (bearing, bearing + 40.0, bearing - 40.0),
             occupied,
         )
         if place:
-            yield Label(text, place.middle, 0.0, PURLINS)
+            yield Label(text, place.middle, 0.0, PURLINS, ringed=True)
 
 
 def _joint_names(design: Design, scale: float, occupied: Occupied) -> Iterator[Label]:
@@ -157,6 +170,8 @@ def draw_labels(pen: Pen, found: Sequence[Label]) -> None:
     """Letter the texts and draw their leaders, which end on the member with a dot."""
     for label in found:
         pen.text(label.layer, label.middle, label.text, across="centre", up="middle", angle=label.angle)
+        if label.ringed:
+            pen.circle(label.layer, label.middle, BALLOON * pen.scale)
         if label.leader is not None:
             pen.line(MARKS, *label.leader)
             pen.area(MARKS, label.leader[1] + 0.45 * pen.scale * _disc())

@@ -2,25 +2,26 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable
 from dataclasses import dataclass
-from functools import cached_property
+from functools import cached_property, partial
 
 import numpy as np
 
 from spanwright.design.cautions import CAUTIONS
 from spanwright.design.dispatch import assembly
 from spanwright.design.result import Design
-from spanwright.io.drawing.holding import BEARING, PURLIN, TIE, draw_bearing
+from spanwright.io.drawing.holding import BEARING, PURLIN, TIE, draw_bearing, draw_brace, draw_sign, oblong
 from spanwright.io.drawing.lettering import LARGE, STEP, TEXT, wrapped
 from spanwright.io.drawing.pen import Pen
-from spanwright.io.drawing.standards import BRACES, NOTES, PURLINS, SETTING_OUT, TIES
+from spanwright.io.drawing.standards import NOTES, PURLINS, SETTING_OUT, TIES
 from spanwright.io.schedule.notes import ESTIMATE
 from spanwright.io.text import kilograms
 from spanwright.truss.arrays import FloatArray
 
 INDENT = 7.0
 HEAD = LARGE + 3.0
-SIGN_ROW = 7.0
+SIGN_ROW, SIGN_COLUMN = 7.5, 62.0
 
 
 @dataclass(frozen=True)
@@ -84,8 +85,9 @@ def general_notes(design: Design, width: float) -> Notes:
 
 
 def caution(design: Design, width: float) -> Notes:
-    """Return the caution, with what the standard leaves to verify."""
-    return Notes("CAUTION", (*CAUTIONS, *design.setting.standard.verify_notes()), width)
+    """Return the caution."""
+    verify = f"What a licensed copy of {design.setting.standard.name} must confirm is listed in the calculation."
+    return Notes("CAUTION", (*CAUTIONS, verify), width)
 
 
 def _ends(design: Design) -> str:
@@ -98,46 +100,87 @@ def _ends(design: Design) -> str:
 
 @dataclass(frozen=True)
 class Legend:
-    """What the signs mean, in two columns."""
+    """What the signs on the elevation mean."""
 
-    width: float
-    height: float = HEAD + 4 * SIGN_ROW + 2.0
+    signs: tuple[str, ...]
+    columns: int
+
+    @property
+    def width(self) -> float:
+        """Width of all columns."""
+        return self.columns * SIGN_COLUMN
+
+    @property
+    def _rows(self) -> int:
+        return -(-len(self.signs) // self.columns)
+
+    @property
+    def height(self) -> float:
+        """Height of all of it."""
+        return HEAD + self._rows * SIGN_ROW
 
     def draw(self, pen: Pen, left: float, top: float) -> None:
         """Draw down from the upper left corner."""
         pen.text(NOTES, (left, top - LARGE), "SIGNS", LARGE)
-        column = self.width / 2.0
-        for place, words in enumerate(_WORDS):
-            row, side = place % 4, place // 4
-            x, y = left + side * column, top - HEAD - (row + 0.5) * SIGN_ROW
-            _sign(pen, place, np.array([x + 6.0, y]))
-            pen.text(NOTES, (x + 14.0, y), words, up="middle")
+        for place, words in enumerate(self.signs):
+            side, row = divmod(place, self._rows)
+            x, y = left + side * SIGN_COLUMN, top - HEAD - (row + 0.5) * SIGN_ROW
+            _SIGNS[words](pen, np.array([x + 6.0, y]))
+            pen.text(NOTES, (x + 13.5, y), words, up="middle")
 
 
-_WORDS = (
-    "purlin line, counted as restraint",
-    "purlin line, not counted",
-    "knee brace (crossed out: not counted)",
-    "bottom tie, counted (open: not)",
-    "bearing, pinned",
-    "bearing, sliding along the span",
-    "setting-out line",
-)
+def legend(design: Design, columns: int) -> Legend:
+    """Return the legend of the signs that stand on the elevation of a design."""
+    setting = design.setting
+    restraint, bearings = setting.restraint, [support for support in setting.truss.supports if support.y]
+    shown = {
+        _COUNTED: any(line.anchored for line in restraint.lines),
+        _LOOSE: not all(line.anchored for line in restraint.lines),
+        _BRACE: bool(restraint.braces),
+        _NO_BRACE: any(brace.name not in restraint.counted for brace in restraint.braces),
+        _TIE: any(tie.counted for tie in restraint.ties),
+        _NO_TIE: not all(tie.counted for tie in restraint.ties),
+        _PINNED: any(support.x for support in bearings),
+        _SLIDING: not all(support.x for support in bearings),
+        _SETTING_OUT: True,
+    }
+    return Legend(tuple(words for words, there in shown.items() if there), columns)
 
 
-def _sign(pen: Pen, place: int, at: FloatArray) -> None:
-    square = at + PURLIN / 2.0 * np.array([[-1.0, -1.0], [1.0, -1.0], [1.0, 1.0], [-1.0, 1.0]])
-    if place < 2:
-        pen.path(PURLINS, square, closed=True)
-        if place == 0:
-            pen.area(PURLINS, square)
-    elif place == 2:
-        pen.line(BRACES, at - [5.0, 0.0], at + [5.0, 0.0])
-    elif place == 3:
-        oblong = at + np.array(TIE) / 2.0 * np.array([[-1.0, -1.0], [1.0, -1.0], [1.0, 1.0], [-1.0, 1.0]])
-        pen.path(TIES, oblong, closed=True)
-        pen.area(TIES, oblong)
-    elif place < 6:
-        draw_bearing(pen, at + [0.0, BEARING / 2.0 + 0.8], slides=place == 5)
-    else:
-        pen.line(SETTING_OUT, at - [5.5, 0.0], at + [5.5, 0.0])
+_COUNTED, _LOOSE = "purlin line, by number", "purlin line, does not count"
+_BRACE, _NO_BRACE = "knee brace", "knee brace, does not count"
+_TIE, _NO_TIE = "bottom tie", "bottom tie, does not count"
+_PINNED, _SLIDING, _SETTING_OUT = "bearing, pinned", "bearing, sliding", "setting-out line"
+
+
+def _purlin(pen: Pen, at: FloatArray, *, counted: bool) -> None:
+    draw_sign(pen, PURLINS, oblong(at, (PURLIN, PURLIN)), counted=counted)
+
+
+def _tie(pen: Pen, at: FloatArray, *, counted: bool) -> None:
+    draw_sign(pen, TIES, oblong(at, TIE), counted=counted)
+
+
+def _brace(pen: Pen, at: FloatArray, *, counted: bool) -> None:
+    draw_brace(pen, at + np.array([[-5.5, 0.0], [5.5, 0.0]]), counted=counted)
+
+
+def _bearing(pen: Pen, at: FloatArray, *, slides: bool) -> None:
+    draw_bearing(pen, at + [0.0, BEARING / 2.0 + 0.8], slides=slides)
+
+
+def _line(pen: Pen, at: FloatArray) -> None:
+    pen.line(SETTING_OUT, at - [5.5, 0.0], at + [6.5, 0.0])
+
+
+_SIGNS: dict[str, Callable[[Pen, FloatArray], None]] = {
+    _COUNTED: partial(_purlin, counted=True),
+    _LOOSE: partial(_purlin, counted=False),
+    _BRACE: partial(_brace, counted=True),
+    _NO_BRACE: partial(_brace, counted=False),
+    _TIE: partial(_tie, counted=True),
+    _NO_TIE: partial(_tie, counted=False),
+    _PINNED: partial(_bearing, slides=False),
+    _SLIDING: partial(_bearing, slides=True),
+    _SETTING_OUT: _line,
+}

@@ -107,8 +107,9 @@ def with_leader(
             middle = point + reach * np.array([np.cos(turn), np.sin(turn)])
             if not occupied.is_free(box(middle, 0.0, *size)):
                 continue
-            aside = np.sign(point[0] - middle[0]) * size[0] / 2.0
-            start = middle + np.array([aside, 0.0])
+            half = np.array(size) / 2.0
+            feet = middle + half * np.array([[-1.0, 0.0], [1.0, 0.0], [0.0, -1.0], [0.0, 1.0]])
+            start = feet[np.hypot(*(feet - point).T).argmin()]
             if not occupied.crosses_text(start, point):
                 occupied.add(box(middle, 0.0, *size))
                 return Place(middle, 0.0), np.array([start, point])

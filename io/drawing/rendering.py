@@ -8,7 +8,8 @@ from collections.abc import Iterable
 
 from ezdxf.addons.drawing.backend import Backend, BkPath2d, BkPoints2d, ImageData
 from ezdxf.addons.drawing.config import BackgroundPolicy, ColorPolicy, Configuration
-from ezdxf.addons.drawing.frontend import Frontend
+from ezdxf.addons.drawing.frontend import UniversalFrontend
+from ezdxf.addons.drawing.pipeline import RenderPipeline2d
 from ezdxf.addons.drawing.properties import BackendProperties, RenderContext
 from ezdxf.addons.drawing.unified_text_renderer import UnifiedTextRenderer
 from ezdxf.document import Drawing
@@ -34,6 +35,19 @@ class OneFont(UnifiedTextRenderer):
     def get_font(self, font_face: fonts.FontFace) -> fonts.AbstractFont:
         """Return the sheet's font."""
         return sheet_font()
+
+
+class SheetPipeline(RenderPipeline2d):
+    """The way from the drawing to the page, with the sheet's font and with line types in mm on paper.
+
+    ezdxf applies the pattern of a line where it is on paper already, so the scale of the viewport must not come in again.
+    """
+
+    text_engine = OneFont()
+
+    def get_vp_ltype_scale(self) -> float:
+        """Return 1: patterns are in mm on paper in every viewport."""
+        return 1.0
 
 
 class Page(Backend):
@@ -65,7 +79,7 @@ class Page(Backend):
 
     def draw_filled_paths(self, paths: Iterable[BkPath2d], properties: BackendProperties) -> None:
         """Take areas with holes, such as letters."""
-        self.areas.append(to_matplotlib_path(paths, detect_holes=True))
+        self.areas.append(to_matplotlib_path(paths))
 
     def draw_filled_polygon(self, points: BkPoints2d, properties: BackendProperties) -> None:
         """Take an area."""
@@ -90,9 +104,7 @@ def pdf_of(doc: Drawing, layout: str, title: str) -> bytes:
         lineweight_scaling=1.0,
         max_flattening_distance=FLATNESS,
     )
-    frontend = Frontend(RenderContext(doc), page, config)
-    frontend.pipeline.text_engine = OneFont()
-    frontend.draw_layout(sheet)
+    UniversalFrontend(RenderContext(doc), SheetPipeline(page), config).draw_layout(sheet)
     return _set(page, sheet.dxf.paper_width, sheet.dxf.paper_height, title)
 
 
@@ -105,7 +117,7 @@ def _set(page: Page, width: float, height: float, title: str) -> bytes:
         axes.add_collection(LineCollection(lines, linewidths=points, colors="black", capstyle="round"), autolim=False)
     if page.areas:
         patch = PathPatch(Path.make_compound_path(*page.areas), facecolor="black", linewidth=0.0)
-        axes.add_patch(patch)
+        axes.add_artist(patch)
     buffer = io.BytesIO()
     metadata = {"Creator": "Spanwright", "Producer": None, "CreationDate": None, "Title": title}
     FigureCanvasPdf(figure).print_pdf(buffer, metadata=metadata)

@@ -71,7 +71,7 @@ def member_schedule(design: Design) -> Table:
         )
         alike.setdefault(key, []).append(member["bar"])
     rows = tuple((in_ranges(bars), *key) for key, bars in alike.items())
-    heads = ("Members", "Mark", "Section", "Length c/c, mm", "Tension, kN", "Compr., kN")
+    heads = ("Members", "Mark", "Section", "Length c/c, mm", "Greatest tension, kN", "Greatest compression, kN")
     return Table("MEMBER SCHEDULE", heads, rows, frozenset({3, 4, 5}), ("Factored forces, tension +, compression -.",))
 
 
@@ -85,7 +85,10 @@ def restraint_table(design: Design) -> Table:
     setting = design.setting
     restraint = setting.restraint
     forces = {force.part: force for force in design.restraint_forces}
-    chord = {held.part: f"{name} chord" for name, points in design.held.items() for held in points}
+    chords: dict[str, list[str]] = {}
+    for name, points in design.held.items():
+        for held in points:
+            chords.setdefault(held.part, []).append(name)
     why = {part.name: part.why_not for part in (*restraint.braces, *restraint.ties)}
     xy = setting.truss.xy
     places = [(line.name, _at(design, line), line.x) for line in restraint.lines]
@@ -99,7 +102,7 @@ def restraint_table(design: Design) -> Table:
             f"{name}{to_line.get(name, '')}",
             at,
             f"{x - start:.0f}",
-            chord.get(name, NONE),
+            _chords(chords.get(name, [])),
             f"{forces[name].force / 1e3:.1f}" if name in forces else _loose(why.get(name, "")),
         )
         for name, at, x in places
@@ -112,6 +115,10 @@ def restraint_table(design: Design) -> Table:
     )
     heads = ("Restraint", "At", "x from left bearing, mm", "Holds", "Force, kN")
     return Table("RESTRAINT", heads, rows, frozenset({2, 4}), remarks)
+
+
+def _chords(names: list[str]) -> str:
+    return "both chords" if len(names) > 1 else f"{names[0]} chord" if names else NONE
 
 
 def _at(design: Design, line: PurlinLine) -> str:

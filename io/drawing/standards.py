@@ -140,7 +140,6 @@ def _dimension_style(doc: Drawing, name: str, denominator: int, *, decimals: int
         "dimtofl": 1,
         "dimtmove": 2,
         "dimdec": decimals,
-        "dimrnd": 0.0,
         "dimzin": 8,
         "dimlunit": 2,
         "dimdsep": ord("."),

@@ -9,7 +9,7 @@ from spanwright.io.drawing.lettering import LARGE, STEP, TEXT, widest, width_of,
 from spanwright.io.drawing.pen import Pen
 from spanwright.io.drawing.standards import TABLE_FRAMES, TABLES
 
-ROW = 4.6
+ROW = 4.3
 """Height of a row."""
 PAD = 1.2
 """Left free at either side of a cell's text."""
@@ -17,8 +17,6 @@ TITLE_ROOM = LARGE + 2.5
 """Height of the title above a table."""
 BETWEEN = 4.0
 """Between the strips of a table that is drawn in several."""
-WIDEST_HEAD = 26.0
-"""A heading wider than this is broken into lines, if its words allow."""
 
 
 @dataclass(frozen=True)
@@ -37,9 +35,7 @@ class Table:
         found = []
         for at, head in enumerate(self.heads):
             cells = widest([row[at] for row in self.rows])
-            head_room = max(
-                widest(head.split()), min(width_of(head), max(cells, WIDEST_HEAD if cells > WIDEST_HEAD else 0.0))
-            )
+            head_room = max(widest(head.split()), 0.6 * width_of(head))
             found.append(max(cells, head_room) + 2.0 * PAD)
         return tuple(found)
 

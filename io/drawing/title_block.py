@@ -11,12 +11,12 @@ from spanwright.io.files import input_hash
 
 WIDTH = 180.0
 """mm, of the title block (ISO 7200)."""
-ROW = 9.5
-TITLE_ROW = 21.0
+ROW = 9.2
+TITLE_ROW = 19.0
 FILING, MARGIN = 20.0, 10.0
 """mm from the edge of the sheet to its frame: at the left, where it is filed, and at the other sides (ISO 5457)."""
 REVISION_ROWS = 3
-REVISION_ROW = 5.5
+REVISION_ROW = 5.0
 REVISIONS_HEIGHT = REVISION_ROW * (REVISION_ROWS + 1)
 HEIGHT = 7 * ROW + TITLE_ROW
 DOCUMENT = "Arrangement drawing"
@@ -83,7 +83,7 @@ def _field(pen: Pen, left: float, bottom: float, width: float, high: float, capt
     pen.text(NOTES, (left + 1.0, bottom + high - 1.0 - TEXT), cut_to(caption, width - 2.0))
     if high == TITLE_ROW:
         for number, line in enumerate(wrapped(value, width - 4.0, TITLE, most=2)):
-            pen.text(TITLE_BLOCK, (left + 2.0, bottom + high - 11.0 - 8.0 * number), line, TITLE)
+            pen.text(TITLE_BLOCK, (left + 2.0, bottom + high - 9.5 - 7.5 * number), line, TITLE)
         return
     height = LARGE if cut_to(value, width - 2.0, LARGE) == value else TEXT
     pen.text(TITLE_BLOCK, (left + 1.0, bottom + 1.2), cut_to(value, width - 2.0, height), height)
@@ -97,8 +97,8 @@ def _draw_revisions(pen: Pen, design: Design, left: float, bottom: float) -> Non
     top = bottom + REVISIONS_HEIGHT
     x = left
     for (width, head), value in zip(columns, first, strict=True):
-        pen.text(NOTES, (x + 1.0, bottom + 1.5), head)
-        pen.text(TITLE_BLOCK, (x + 1.0, bottom + REVISION_ROW + 1.5), cut_to(value, width - 2.0))
+        pen.text(NOTES, (x + 1.0, bottom + 1.2), head)
+        pen.text(TITLE_BLOCK, (x + 1.0, bottom + REVISION_ROW + 1.2), cut_to(value, width - 2.0))
         pen.line(TITLE_BLOCK, (x, bottom), (x, top))
         x += width
     for row in range(REVISION_ROWS + 2):
