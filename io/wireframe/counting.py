@@ -50,7 +50,7 @@ class Counting:
             if reason.startswith(LAYER_RULE):
                 left_out[layer, reason] += len(handles)
         layers = (
-            Finding("W-102", f'layer "{layer}": {reason}', f"{count} entities not read", layer=layer)
+            Finding("W-102", f'layer "{layer}": {reason}', f"entities not read: {count}", layer=layer)
             for (layer, reason), count in sorted(left_out.items())
         )
         return (*layers, *self._findings)

@@ -23,8 +23,9 @@ from spanwright.truss.errors import OutputError
 
 _RADIUS = 0.01  # of the span
 _USUAL_SPAN = 10_000.0  # mm, for the size of marks where the import did not get as far as a span
-_COLOURS = {"warning": 1, "note": 5}  # red and blue of the format's colour index
+_COLOURS = {"warning": 1, "note": 150}  # red and a light blue of the format's colour index
 _LONGEST = 120  # characters beside a mark
+_LEAN = 45.0  # degrees: words that rise do not run over those of the next joint
 
 
 def write_marked_copy(path_in: Path, report: Report, path_out: Path) -> int:
@@ -65,11 +66,11 @@ class _Marker:
         self._ocs = OCS(facts.normal)
         self._extrusion = Vec3(facts.normal)
         right = self._ocs.from_wcs(Vec3(facts.up).cross(self._extrusion))
-        self._rotation = math.degrees(math.atan2(right.y, right.x))
+        self._rotation = math.degrees(math.atan2(right.y, right.x)) + _LEAN
         self._radius = _RADIUS * (facts.span or _USUAL_SPAN) / LENGTH.factors[facts.unit or "mm"]
 
     def mark(self, findings: list[Finding]) -> None:
-        """Circle every finding and tell it beside the circle; those at one place stand under each other."""
+        """Circle every finding and tell it beside the circle; those at one place stand line under line."""
         there: Counter[tuple[int, ...]] = Counter()
         down = Vec3(0, -1).rotate_deg(self._rotation)
         across = Vec3(1, 0).rotate_deg(self._rotation)
@@ -86,7 +87,7 @@ class _Marker:
 
 
 def _told(finding: Finding) -> str:
-    told = f"{finding.code} {finding.text}" + (f": {finding.done}" if finding.done else "")
+    told = f"{finding.code} {finding.text}" + (f"; {finding.done}" if finding.done else "")
     return "".join(c if c.isprintable() else "?" for c in told)[:_LONGEST]
 
 

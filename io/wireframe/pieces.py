@@ -91,7 +91,7 @@ def main_piece(network: Network) -> tuple[Network, tuple[Remark, ...]]:
     remarks = []
     for piece in order[1:]:
         rows = np.flatnonzero(labels[network.ends[:, 0]] == piece)
-        text = f"a piece of {len(rows)} bars does not hang together with the truss"
+        text = f"a piece of {len(rows)} bar{'s' if len(rows) > 1 else ''} does not hang together with the truss"
         at = network.place(int(network.ends[rows[0], 0]))
         remarks.append(Remark("W-313", text, "left out", int(network.sources[rows].min()), at))
     keep = labels[network.ends[:, 0]] == order[0]

@@ -97,9 +97,9 @@ def _with_rule(truss: Truss, purlins: tuple[PurlinMark, ...]) -> tuple[MarkedPur
     first, *others = sides
     alike = all(len(side) == len(first) and np.allclose(side, first, atol=TOLERANCES.on_joint) for side in others)
     if not alike or not first:
-        listed = " and ".join(", ".join(f"{distance:.0f}" for distance in side) or "none" for side in sides)
+        listed = " and at ".join(", ".join(f"{distance:.0f} mm" for distance in side) or "none" for side in sides)
         return MarkedPurlins(purlins, None, pair), [
-            _no_rule(f"up the slopes from the roof's edge they are at {listed} mm")
+            _no_rule(f"up the slopes from the roof's edge they stand at {listed}")
         ]
     return MarkedPurlins(purlins, tuple(round(distance, 1) for distance in first), pair), []
 

@@ -92,7 +92,7 @@ def _findings(code: str, findings: list[Finding]) -> list[str]:
 
 def line_of(finding: Finding) -> str:
     """Return a finding on one line: what, what was done, where."""
-    said = f"{finding.text}: {finding.done}" if finding.done else finding.text
+    said = f"{finding.text}; {finding.done}" if finding.done else finding.text
     where = []
     if finding.at:
         where.append("at (" + ", ".join(f"{value:.6g}" for value in finding.at) + ")")

@@ -110,13 +110,19 @@ def test_an_array_of_one_panel_is_a_parallel_chord_truss(tmp_path: Path) -> None
     assert given.bar_names[-8:] == tuple(f"D{k}" for k in range(1, 9))
 
 
-def test_an_array_turned_with_its_block_steps_along_the_turned_axes(tmp_path: Path) -> None:
+@pytest.mark.parametrize("way", ["row", "column"])
+def test_an_array_turned_with_its_block_steps_along_the_turned_axes(tmp_path: Path, way: str) -> None:
+    # in the block the panels go up (rows) or to the left (columns, of a negative spacing); turned they go right
+    def in_block(x: float, y: float) -> tuple[float, float]:
+        return (-y, x) if way == "row" else (-x, -y)
+
     document = new_drawing()
     panel = document.blocks.new("PANEL")
-    for start, end in (((0, 0), (0, 1500)), ((-1200, 0), (-1200, 1500)), ((0, 0), (-1200, 0)), ((-1200, 0), (0, 1500))):
-        panel.add_line(start, end)
+    for (x, y), end in (((0, 0), (1500, 0)), ((0, 1200), (1500, 1200)), ((0, 0), (0, 1200)), ((0, 1200), (1500, 0))):
+        panel.add_line(in_block(x, y), in_block(*end))
     space = document.modelspace()
-    array = {"rotation": -90, "row_count": 8, "row_spacing": 1500}
+    turn, spacing = (-90, 1500) if way == "row" else (180, -1500)
+    array = {"rotation": turn, f"{way}_count": 8, f"{way}_spacing": spacing}
     space.add_blockref("PANEL", (0, 0), dxfattribs=array)
     space.add_line((12000, 0), (12000, 1200))
     assert len(imported(document, tmp_path).given.joints) == 18

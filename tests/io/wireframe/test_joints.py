@@ -149,7 +149,7 @@ def test_a_bar_in_pieces_is_joined_and_a_line_of_no_length_dropped(tmp_path: Pat
     draw(space, PRATT)
     first = space[0]
     # a piece near the heel is the hardest: there the joint itself is nearly in line
-    near, far = first.dxf.start + (first.dxf.end - first.dxf.start) * 0.012, first.dxf.end
+    near, far = first.dxf.start + (first.dxf.end - first.dxf.start) * 0.008, first.dxf.end
     space.add_line(near, first.dxf.start + (far - near) * 0.4)
     space.add_line(first.dxf.start + (far - near) * 0.4, far)
     first.dxf.end = near

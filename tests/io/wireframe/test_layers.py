@@ -37,7 +37,7 @@ def test_layers_that_are_off_frozen_or_not_plotted_are_not_read_and_that_is_said
     expected = {"OFF": "off", "ICE": "frozen", "INK": "not plotted", "DefPoints": "not plotted"}
     assert reasons(wireframe) == {layer: f"layer is {state}" for layer, state in expected.items()}
     assert codes(wireframe) == ["W-102"] * 4
-    assert {finding.done for finding in wireframe.report.with_code("W-102")} == {"1 entities not read"}
+    assert {finding.done for finding in wireframe.report.with_code("W-102")} == {"entities not read: 1"}
 
 
 def test_the_state_of_a_layer_holds_in_any_case_of_its_name(tmp_path: Path) -> None:

@@ -23,6 +23,7 @@ PLACES: dict[str, tuple[Callable[[Point], Point], str, float]] = {
     "front": (lambda p: (p[0], 700, p[1]), "in a vertical plane; z was taken as vertical, x as to the right", 0.0),
     "side": (lambda p: (-40, p[0], p[1]), "in a vertical plane; z was taken as vertical, y as to the right", 0.0),
     "turned": (turned(33), "the direction (0.8387, 0.5446, 0.0000) as to the right", 2e-5),
+    "turned left": (turned(120), "the direction (0.5000, -0.8660, 0.0000) as to the right", 2e-5),
     "turned back": (turned(-101), "the direction (0.1908, 0.9816, 0.0000) as to the right", 2e-5),
     "far": (lambda p: (p[0] + 4.5e6, p[1] - 4.5e6, 0), "in plan", 2e-5),
     "very far": (lambda p: (p[0] + 4.5e9, 2e9, p[1]), "in a vertical plane", 2e-5),

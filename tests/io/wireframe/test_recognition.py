@@ -277,7 +277,7 @@ def test_purlins_that_no_rule_tells_are_given_and_said(tmp_path: Path) -> None:
     wireframe = marked(tmp_path, [(200, 150), (4000, 3000), (7000, 750)])
     assert wireframe.purlins.rule is None
     assert [round(purlin.along) for purlin in wireframe.purlins.purlins] == [250, 5000, 8750]
-    assert "at 250 and 1250 mm" in wireframe.report.with_code("W-408")[0].text
+    assert "at 250 mm and at 1250 mm" in wireframe.report.with_code("W-408")[0].text
     no_ridge = marked(tmp_path, [(200, 150), (7800, 150)])
     assert "none is marked at the ridge" in no_ridge.report.with_code("W-408")[0].text
 

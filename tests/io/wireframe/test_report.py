@@ -53,7 +53,7 @@ def test_the_text_has_every_code_the_places_and_the_closing_table(tmp_path: Path
     assert "  span 12 m, depth 1.532 m, 12 joints, 21 bars\n" in text
     for finding in report.findings:
         assert f"{finding.code} {finding.severity}: {finding.meaning}" in text
-    assert re.search(r'a bar ends in the air: left out \[at \(0, -3000, 0\), layer "GRID", entity \w+\]', text)
+    assert re.search(r'a bar ends in the air; left out \[at \(0, -3000, 0\), layer "GRID", entity \w+\]', text)
     assert text.index("warning") < text.index(" note:")
     assert "read 25 entities: 24 converted, 0 ignored by rule, 1 not understood" in text
     assert re.search(r'1 CIRCLE +layer "BUBBLE": not understood, it is no straight line \(\w+\)', text)
@@ -92,13 +92,14 @@ def test_the_marked_copy_circles_every_finding_at_its_place(tmp_path: Path, plac
     assert [circle.dxf.layer for circle in circles] == [layer_name(finding.code) for finding in placed]
     centres = [circle.ocs().to_wcs(circle.dxf.center).xyz for circle in circles]
     np.testing.assert_allclose(centres, [finding.at for finding in placed], atol=1e-6)
-    # seen square on, and the words beside it level
+    # seen square on, and the words beside it rising to the right
     normal = np.array(circles[0].dxf.extrusion)
     assert abs(normal @ np.subtract(place((1, 0)), place((0, 0)))) < 1e-9
     texts = [mark for mark in marks if mark.dxftype() == "TEXT"]
     assert all(text.dxf.text.startswith(text.dxf.layer.removeprefix("SPANWRIGHT ")) for text in texts)
     beside = np.array(texts[0].ocs().to_wcs(texts[0].dxf.insert).xyz) - np.array(placed[0].at)
-    assert beside == pytest.approx(1.2 * 120.0 * np.subtract(place((1, 0)), place((0, 0))), abs=1e-6)
+    rising = np.subtract(place((1, 0)), place((0, 0))) + np.subtract(place((0, 1)), place((0, 0)))
+    assert beside == pytest.approx(1.2 * 120.0 * rising / np.sqrt(2), abs=1e-6)
     original = len(readfile(path).modelspace())
     assert len(readfile(copy).modelspace()) == original + len(marks)
 
