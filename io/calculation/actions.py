@@ -1,45 +1,64 @@
-"""Loads with their derivations, combinations, and what reaches the bearings."""
+"""Combinations, and what reaches the bearings."""
 
 from __future__ import annotations
 
 from spanwright.design.result import Design
-from spanwright.io.calculation.blocks import Column, Derivation, Derivations, Paragraph, Section, Table
+from spanwright.io.calculation.blocks import Block, Column, Paragraph, Section, Table
 from spanwright.io.calculation.figures import NONE, kilo
-from spanwright.io.calculation.naming import labels
+from spanwright.io.calculation.loads import steps_of
+from spanwright.io.calculation.naming import case_labels, labels
+from spanwright.loads.combinations import combination_factors
 from spanwright.truss.stiffness import reaction_sums
 
+LONGEST_NAME = 60
+"""Signs of a combination's name that fit into the table; with longer ones it takes the numbers of the cases."""
 
-def loads(design: Design) -> Section:
-    """Return every load case with its derivation."""
-    entries = tuple(Derivation(case.name, case.kind, case.derivation) for case in design.analysis.cases)
-    about = Paragraph(
-        'Unfactored. "most" and "least" are the greatest and the least credible permanent load; a man takes the place '
-        "of the imposed load. Each purlin line carries half-way to its neighbours, the outer ones from the roof's edge."
-    )
-    return Section("Loads", (about, Derivations(entries)))
+STATES = {
+    "STR": "strength of members",
+    "STR-P": "strength, permanent load leading",
+    "EQU": "holding down, reactions only",
+    "SLS": "total deflection",
+    "SLS variable": "deflection of the variable actions alone",
+    "SLS quasi-permanent": "what lasts",
+}
 
 
 def combinations(design: Design) -> Section:
     """Return the combinations with their numbers, by which every other table names them."""
     first = len(design.analysis.combinations) // len(design.analysis.arrangements)
     listed = list(zip(design.analysis.combinations, labels(design).values(), strict=True))
-    rows = tuple((label, combination.limit_state, combination.name) for combination, label in listed[:first])
+    brief = max(len(combination.name) for combination, _ in listed[:first]) > LONGEST_NAME
+    cases = case_labels(design)
+    rows = tuple(
+        (
+            label,
+            combination.limit_state,
+            " + ".join(f"{factor:g} {cases[name]}" for name, factor in combination.factors)
+            if brief
+            else combination.name,
+        )
+        for combination, label in listed[:first]
+    )
     columns = (
         Column("no.", align="left"),
         Column("state", align="left"),
         Column("combination", align="left", share=1.0),
     )
-    note = (
-        "STR and STR-P: strength of members. EQU: holding down, reactions only. SLS: total deflection. SLS variable: "
-        "deflection of one variable action alone."
-    )
+    states = {combination.limit_state for combination in design.analysis.combinations}
+    note = " ".join(f"{state}: {meaning}." for state, meaning in STATES.items() if state in states)
     later = [
         Paragraph(f"C{at * first + 1} to C{(at + 1) * first} are the same in this order{reading.suffix}.")
         for at, reading in enumerate(design.analysis.arrangements)
         if at
     ]
-    table = Table(columns, rows, note=note, dense=True, side_by_side=2)
-    return Section("Combinations", (table, *later))
+    if brief:
+        note += " L1 and so on: the load cases by their numbers under Loads; elsewhere a combination has their names."
+    blocks: list[Block] = [Table(columns, rows, note=note, dense=True, side_by_side=3 if brief else 2), *later]
+    project = design.setting.project
+    factors = combination_factors(project.actions, project.site)
+    if factors:
+        blocks += [Paragraph("Factors that the site or the nation sets:"), steps_of(factors)]
+    return Section("Combinations", tuple(blocks))
 
 
 def reactions(design: Design) -> Section:
@@ -50,7 +69,7 @@ def reactions(design: Design) -> Section:
 def _by_case(design: Design) -> Table:
     truss, solution = design.setting.truss, design.analysis.solutions[0]
     sums = reaction_sums(solution, design.analysis.loads)
-    bearings = truss.bearing_joints
+    bearings, numbered = truss.bearing_joints, case_labels(design)
     columns = [Column("case", align="left", share=1.0), Column("load right", "kN"), Column("load up", "kN")]
     for joint in bearings:
         columns += [Column(f"{truss.joint_names[joint]} right", "kN"), Column(f"{truss.joint_names[joint]} up", "kN")]
@@ -60,7 +79,14 @@ def _by_case(design: Design) -> Table:
         shares = [kilo(float(solution.reactions[joint, axis, at]), 2) for joint in bearings for axis in (0, 1)]
         load = sums.loads[:, at]
         left = load + sums.reactions[:, at]
-        rows.append((case.name, *(kilo(float(v), 2) for v in load), *shares, *(kilo(float(v), 2) for v in left)))
+        rows.append(
+            (
+                f"{numbered[case.name]} {case.name}",
+                *(kilo(float(v), 2) for v in load),
+                *shares,
+                *(kilo(float(v), 2) for v in left),
+            )
+        )
     note = "Unfactored. A sum is load and reactions together, and must be zero."
     return Table(tuple(columns), tuple(rows), title="By load case", note=note, dense=True)
 

@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from math import degrees
+
 from spanwright.design.cautions import CAUTIONS
 from spanwright.design.families import TUBES
 from spanwright.design.hand_checks import mass_per_area
@@ -10,12 +12,14 @@ from spanwright.design.steels import steel
 from spanwright.io.calculation.blocks import Column, Fields, Paragraph, Points, Section, Table
 from spanwright.io.calculation.figures import fixed
 from spanwright.io.text import kilograms, kilonewtons, metres, rounded_up
+from spanwright.truss.inputs import FormInput
+
+IN_WORKING = "Worked values are in N, mm and MPa; utilisation is rounded up."
 
 CONVENTIONS = (
     "x to the right along the span, y up. Tension +, compression −. Sagging moments, which stretch the lower fibre, +. "
     "Reactions act on the truss: + to the right and + up. In plane and out of plane name the direction in which a "
-    "member bows. Worked values are in N, mm and MPa; tables are in kN and m where their heads say so. "
-    "Utilisation is rounded up."
+    "member bows. Tables are in kN and m where their heads say so. " + IN_WORKING
 )
 
 
@@ -114,8 +118,8 @@ def basis(design: Design) -> Section:
     rows = (
         (
             "Structure",
-            f"{truss.form}{lean}, span {metres(truss.span)}, {len(truss.bar_names)} members, {project.quantity} "
-            f"off, {metres(project.spacing)} apart{carried}",
+            f"{truss.form}{lean}, span {metres(truss.span)}{_pitch(design)}, {len(truss.bar_names)} members, "
+            f"{project.quantity} off, {metres(project.spacing)} apart{carried}",
         ),
         ("Member standard", setting.standard.name),
         ("Loading standard", f"{project.actions}; load factors in the table of combinations"),
@@ -132,6 +136,11 @@ def basis(design: Design) -> Section:
         "Scope and basis",
         (Fields(rows), _steels(design), Paragraph(CONVENTIONS, small=True)),
     )
+
+
+def _pitch(design: Design) -> str:
+    given = design.setting.project.truss
+    return f", pitch {fixed(degrees(given.pitch), 1)}°" if isinstance(given, FormInput) else ""
 
 
 def _steels(design: Design) -> Table:
@@ -187,8 +196,8 @@ def assumptions(design: Design) -> Section:
     if reason:
         blocks.append(Paragraph(f"Effective length factors differ from 1. Reason stated: {reason}"))
     blocks += [
-        Paragraph(f"To verify against a licensed copy of {design.setting.standard.name}:"),
-        Points(design.setting.standard.verify_notes()),
+        Paragraph(f"To verify against a licensed copy, first of {design.setting.standard.name}:"),
+        Points(design.cautions[len(CAUTIONS) :]),
         Paragraph("Not covered, and cautions:"),
         Points(CAUTIONS),
     ]

@@ -126,6 +126,14 @@ class Step:
 
 
 @dataclass(frozen=True)
+class Steps:
+    """Values on the way, with their formulas."""
+
+    steps: tuple[Step, ...]
+    kind: str = "steps"
+
+
+@dataclass(frozen=True)
 class RuleWork:
     """What one rule adds to a check: the values it takes that are printed nowhere else, and its steps."""
 
@@ -189,7 +197,10 @@ class Tasks:
 
 @dataclass(frozen=True)
 class Mark:
-    """Something drawn at a point of the sketch, m. shape : "pinned", "sliding", "counted", "open", "brace", "tie"."""
+    """Something drawn at a point of the sketch, m.
+
+    shape : "pinned", "sliding", "counted", "open", "brace", "tie" or "bearing"; of a joint's name, where it stands.
+    """
 
     shape: str
     x: float
@@ -199,7 +210,7 @@ class Mark:
 
 @dataclass(frozen=True)
 class Stroke:
-    """A line of the sketch, m. style : "chord", "web" or "brace". label : beside its middle."""
+    """A line of the sketch, m. style : "chord", "web", "brace" or "loose". label : beside its middle."""
 
     style: str
     start: tuple[float, float]
@@ -209,12 +220,16 @@ class Stroke:
 
 @dataclass(frozen=True)
 class Dimension:
-    """A dimension between two places, m: across the foot of the sketch in row `row`, or upright at x."""
+    """A dimension between two places, m.
+
+    row : below the sketch, from 1 on; upright: 1 on its right, -1 on its left.
+    """
 
     start: tuple[float, float]
     end: tuple[float, float]
     text: str
     row: int
+    upright: bool = False
 
 
 @dataclass(frozen=True)
@@ -233,7 +248,7 @@ class Sketch:
     kind: str = "sketch"
 
 
-Block = Paragraph | Points | Fields | Table | Derivations | Picture | MemberWork | Tasks | Sketch
+Block = Paragraph | Points | Fields | Table | Derivations | Picture | Steps | MemberWork | Tasks | Sketch
 
 
 @dataclass(frozen=True)

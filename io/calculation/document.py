@@ -10,14 +10,15 @@ from typing import Any
 from spanwright import __version__
 from spanwright.design.cautions import SHORT_CAUTION
 from spanwright.design.result import Design
-from spanwright.io.calculation.actions import combinations, loads, reactions
-from spanwright.io.calculation.basis import CONVENTIONS, assumptions, basis, summary
+from spanwright.io.calculation.actions import combinations, reactions
+from spanwright.io.calculation.basis import IN_WORKING, assumptions, basis, summary
 from spanwright.io.calculation.behaviour import deflection
 from spanwright.io.calculation.blocks import MemberWork, Paragraph, Points, Section, Table
 from spanwright.io.calculation.figures import points_aligned
 from spanwright.io.calculation.forces import bar_forces, chord_bending, lengths
 from spanwright.io.calculation.geometry import geometry
 from spanwright.io.calculation.holding import restraint
+from spanwright.io.calculation.loads import loads
 from spanwright.io.calculation.members import all_members, packs, worked_members
 from spanwright.io.calculation.pictures import pictures
 from spanwright.io.calculation.review import checks_by_hand, for_the_hand
@@ -26,6 +27,9 @@ from spanwright.io.calculation.typesetting import typeset
 from spanwright.io.files import input_hash, make_folder, write_atomically
 
 NAME = "calculation.pdf"
+COMPRESSION_ONLY = (
+    "In plane and out of plane name the direction in which the member bows. One factored compression, no moment."
+)
 
 
 def write_calculation(design: Design, folder: Path, *, every_member: bool = False, date: str = "") -> Path:
@@ -80,15 +84,9 @@ def document(
     )
 
 
-def write_worked_member(path: Path, title: str, standard: str, member: MemberWork) -> Path:
-    """Write one member worked in full as a PDF and return its path; OutputError where that cannot be done.
-
-    title : of the page. standard : the member standard, as printed.
-    """
-    sections = (
-        Section("Member check", (member,)),
-        Section("Conventions and cautions", (Paragraph(f"By {standard}. {CONVENTIONS}", small=True),)),
-    )
+def write_worked_member(path: Path, title: str, member: MemberWork) -> Path:
+    """Write one member worked in full as a PDF and return its path; OutputError where that cannot be done."""
+    sections = (Section("Member check", (member, Paragraph(f"{COMPRESSION_ONLY} {IN_WORKING}", small=True))),)
     passes = all(check.passes for check in member.checks)
     data = _page_data(sections, plain_block(title), passes=passes, foot=f"Spanwright {__version__}", contents=False)
     make_folder(path.parent)

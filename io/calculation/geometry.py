@@ -20,7 +20,11 @@ def sketch(truss: Truss) -> Sketch:
     """Return the truss with names and dimensions."""
     shapes = {support.joint: "pinned" if support.x else "sliding" for support in truss.supports if support.y}
     marks = tuple(Mark(shape, *_point(truss, joint)) for joint, shape in shapes.items())
-    names = tuple(Mark("joint", *_point(truss, joint), name) for joint, name in enumerate(truss.joint_names))
+    below = {*truss.bottom.joints} - {*truss.top.joints}
+    names = tuple(
+        Mark("bearing" if joint in shapes else "below" if joint in below else "above", *_point(truss, joint), name)
+        for joint, name in enumerate(truss.joint_names)
+    )
     caption = (
         "Setting-out lines to scale; lengths in m. Joints and members by name. Triangle: held both ways; triangle on "
         "rollers: slides along the span."
@@ -61,11 +65,15 @@ def _point(truss: Truss, joint: int) -> tuple[float, float]:
 
 
 def _dimensions(truss: Truss) -> tuple[Dimension, ...]:
-    """Return panel by panel along the bottom chord, the span, and the heights over the first bearing."""
+    """Return panel by panel along the bottom chord, the span, the depth at the left end and the height in all."""
     chain = [_point(truss, joint) for joint in truss.bottom.joints]
-    panels = tuple(Dimension(start, end, kilo((end[0] - start[0]) * 1e3, 3), 0) for start, end in pairwise(chain))
+    panels = tuple(Dimension(start, end, kilo((end[0] - start[0]) * 1e3, 3), 1) for start, end in pairwise(chain))
     first, last = (_point(truss, joint) for joint in (truss.bearing_joints[0], truss.bearing_joints[-1]))
-    return (*panels, Dimension(first, last, kilo(truss.span, 3), 1))
+    heel = _point(truss, truss.top.joints[0])
+    lowest, highest = (float(end) / 1e3 for end in (truss.xy[:, 1].min(), truss.xy[:, 1].max()))
+    height = Dimension((last[0], lowest), (last[0], highest), kilo((highest - lowest) * 1e3, 3), 1, upright=True)
+    depth = Dimension(chain[0], heel, kilo((heel[1] - chain[0][1]) * 1e3, 3), -1, upright=True)
+    return (*panels, Dimension(first, last, kilo(truss.span, 3), 2), height, *((depth,) if heel != chain[0] else ()))
 
 
 def _supports(truss: Truss) -> Table:

@@ -10,7 +10,7 @@ import math
 import re
 from collections.abc import Mapping
 
-from spanwright.io.calculation.symbols import BRACED, TABLE, symbol
+from spanwright.io.calculation.symbols import BRACED, symbol
 from spanwright.io.text import figures
 
 FUNCTIONS = {
@@ -31,7 +31,9 @@ FUNCTIONS = {
 
 CONSTANTS = {"pi": math.pi}
 
-_SUM, _PRODUCT, _POWER, _ATOM = range(4)
+_SUM, _SIGNED, _QUOTIENT, _PRODUCT, _POWER, _ATOM = range(6)
+"""How tightly parts bind; a signed one begins with a minus, a quotient is written with a stroke."""
+
 _THIN = "\u2009"
 
 
@@ -107,13 +109,15 @@ class _Writer:
             case ast.Name(id=name):
                 return (name, _ATOM) if name in CONSTANTS else self.leaf(name)
             case ast.UnaryOp(op=ast.USub(), operand=operand):
-                return f"-{self.held(operand, _PRODUCT)}", _SUM
+                return f"-{self.held(operand, _PRODUCT)}", _SIGNED
             case ast.BinOp(left=left, op=operator, right=right):
                 return self.joined(left, operator, right)
             case ast.Compare(left=left, ops=[operator], comparators=[right]):
                 return f"{self.part(left)[0]} {_COMPARED[type(operator)]} {self.part(right)[0]}", _SUM
             case ast.Call(func=ast.Name(id="where"), args=[condition, yes, no]):
                 return self.choice(condition, yes, no)
+            case ast.Call(func=ast.Name(id="sqrt"), args=[ast.BinOp(op=ast.Div()) as quotient]):
+                return f"sqrt({self.on_one_line(quotient)})", _ATOM
             case ast.Call(func=ast.Name(id=name), args=arguments):
                 return f"{name}({', '.join(self.part(argument)[0] for argument in arguments)})", _ATOM
         raise ValueError(f"a formula may not hold {ast.unparse(node)}")
@@ -121,20 +125,19 @@ class _Writer:
     def joined(self, left: ast.expr, operator: ast.operator, right: ast.expr) -> tuple[str, int]:
         match operator:
             case ast.Add():
-                return f"{self.part(left)[0]} + {self.part(right)[0]}", _SUM
+                return f"{self.part(left)[0]} + {self.held(right, _QUOTIENT)}", _SUM
             case ast.Sub():
-                return f"{self.part(left)[0]} - {self.held(right, _PRODUCT)}", _SUM
+                return f"{self.part(left)[0]} - {self.held(right, _QUOTIENT)}", _SUM
             case ast.Mult():
-                return f"{self.held(left, _PRODUCT)}{self.times}{self.held(right, _PRODUCT)}", _PRODUCT
-            case ast.Div() if self.within_fraction:  # a fraction in a fraction would be too small to read
-                return f"{self.held(left, _PRODUCT)} slash {self.held(right, _POWER)}", _PRODUCT
+                first, binding = self.first(left)
+                return f"{first}{self.times}{self.held(right, _PRODUCT)}", min(binding, _PRODUCT)
+            case ast.Div() if self.within_fraction:
+                first, binding = self.first(left)
+                return f"{first} slash {self.held(right, _POWER)}", _SUM if binding == _SIGNED else _QUOTIENT
             case ast.Div():
-                self.within_fraction = True
-                text = f"frac({self.part(left)[0]}, {self.part(right)[0]})"
-                self.within_fraction = False
-                return text, _POWER
+                return f"frac({self.on_one_line(left)}, {self.on_one_line(right)})", _POWER
             case ast.Pow():
-                return f"{self.held(left, _ATOM)}^({self.raised(right)})", _POWER
+                return f"{self.held(left, _ATOM)}^({self.on_one_line(right)})", _POWER
         raise ValueError(f"a formula may not hold {type(operator).__name__}")
 
     def held(self, node: ast.expr, least: int) -> str:
@@ -142,12 +145,17 @@ class _Writer:
         text, binding = self.part(node)
         return text if binding >= least else f"({text})"
 
-    def raised(self, node: ast.expr) -> str:
-        """Return an exponent, its fraction on one line."""
-        match node:
-            case ast.BinOp(left=left, op=ast.Div(), right=right):
-                return f"{self.part(left)[0]} slash {self.held(right, _ATOM)}"
-        return self.part(node)[0]
+    def first(self, node: ast.expr) -> tuple[str, int]:
+        """Return the first part of a product or quotient, where a sign needs no brackets."""
+        text, binding = self.part(node)
+        return (text, _SIGNED) if binding == _SIGNED else (self.held(node, _PRODUCT), _PRODUCT)
+
+    def on_one_line(self, node: ast.expr) -> str:
+        """Return an exponent, a part of a fraction or what stands under a root: a fraction there would be small."""
+        outside, self.within_fraction = self.within_fraction, True
+        text = self.part(node)[0]
+        self.within_fraction = outside
+        return text
 
 
 class _Symbols(_Writer):
@@ -182,10 +190,10 @@ class _Numbers(_Writer):
 def _bound(text: str) -> tuple[str, int]:
     """Return a number with how tightly it binds: a sign or a power of ten asks for brackets."""
     if text.startswith("-"):
-        return text, _SUM
+        return text, _SIGNED
     return text, _PRODUCT if "times" in text else _ATOM
 
 
 _COMPARED = {ast.LtE: "<=", ast.Lt: "<", ast.GtE: ">=", ast.Gt: ">"}
 
-__all__ = ["TABLE", "evaluate", "grouped", "number", "symbols_in", "with_numbers", "with_symbols"]
+__all__ = ["evaluate", "grouped", "number", "symbols_in", "with_numbers", "with_symbols"]

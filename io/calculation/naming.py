@@ -1,8 +1,13 @@
-"""Short names for the combinations, which one table of the document spells out."""
+"""Short names for load cases and combinations, which one list of the document spells out."""
 
 from __future__ import annotations
 
 from spanwright.design.result import Design
+
+
+def case_labels(design: Design) -> dict[str, str]:
+    """Return a number ("L3") for each load case's name, in the order of analysis."""
+    return {case.name: f"L{at}" for at, case in enumerate(design.analysis.cases, 1)}
 
 
 def labels(design: Design) -> dict[str, str]:

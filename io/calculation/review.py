@@ -37,8 +37,8 @@ def checks_by_hand(design: Design) -> Section:
     outside = sum(not row.exact and not row.passes for row in found)
     about = Paragraph(
         "Each value by hand is found without the analysis: by equilibrium of a part, closed forms, virtual work, "
-        f"areas, or a published rule of thumb. {len(found)} checks, {failing} failing, {outside} outside a rule of thumb. "
-        "A rule of thumb only asks for a second look."
+        f"areas, or a published rule of thumb. {len(found)} checks, {failing} failing, {outside} outside a rule of "
+        "thumb. A rule of thumb only asks for a second look."
     )
     bold = tuple(at for at, row in enumerate(found) if not row.passes)
     return Section("Hand checks", (about, Table(columns, rows, dense=True, bold=bold)))

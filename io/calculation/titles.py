@@ -29,6 +29,9 @@ SIGNED = (
 )
 """Fields that are left blank for the hand where they are not given."""
 
+LONGEST_RUNNING = 70
+"""Signs of the running title."""
+
 
 def title_block(project: Project, date: str) -> dict[str, Any]:
     """Return the title block: fields that are given, and fields for signature."""
@@ -40,9 +43,16 @@ def title_block(project: Project, date: str) -> dict[str, Any]:
         "supplementary": given.get("supplementary_title", ""),
         "mark": project.mark,
         "fields": [(name, given[key]) for key, name in FIELDS if given.get(key)],
+        "running": _running(project.mark, project.title),
         "signed": [(name, values.get(key, "")) for key, name in SIGNED],
         "author": given.get("creator", ""),
     }
+
+
+def _running(mark: str, title: str) -> str:
+    """Return what stands at the head of every page, in one line."""
+    text = f"{mark}   {title}".strip()
+    return text if len(text) <= LONGEST_RUNNING else f"{text[: LONGEST_RUNNING - 1]}…"
 
 
 def plain_block(title: str) -> dict[str, Any]:
@@ -52,6 +62,7 @@ def plain_block(title: str) -> dict[str, Any]:
         "title": title,
         "supplementary": "",
         "mark": "",
+        "running": _running("", title),
         "fields": [],
         "signed": [(name, "") for _, name in SIGNED],
         "author": "",
