@@ -73,7 +73,7 @@ class _Census:
             parts, below = self.count(inner, (*around, block))
             entities += _copies(insert) * (parts + 1)
             levels = max(levels, below + 1)
-        entities += len(content.entities)
+        entities += max(len(content.entities), len(content.lines))
         if len(around) + levels > self._limits.depth:
             raise self._too_deep(content.inserts[0][1].dxf.handle)
         if entities > self._limits.entities:

@@ -9,6 +9,7 @@ import numpy as np
 from spanwright.io.wireframe.cluster import cluster_ends
 from spanwright.io.wireframe.marks import FlatMark, joints_marked
 from spanwright.io.wireframe.merge import join_straight, merge_repeated
+from spanwright.io.wireframe.near import refuse_crowd
 from spanwright.io.wireframe.network import Network, Remark
 from spanwright.io.wireframe.options import Options
 from spanwright.io.wireframe.pieces import Trunk, main_piece, near_misses, trunk_of
@@ -45,12 +46,13 @@ def clean(
     network, remarks = join_straight(network, tolerance, kept)
     say(remarks)
     pairs, points = find_crossings(network, tolerance, limit)
+    refuse_crowd(len(pairs), options.limits.findings)
     if options.split_crossings:
         network, remarks = split_at_crossings(network, pairs, points, tolerance, limit)
     else:
         remarks = _crossings(network, pairs, points)
     say(remarks)
-    say(near_misses(network, tolerance, limit))
+    say(near_misses(network, tolerance, options.limits))
     network, remarks = main_piece(network)
     say(remarks)
     return trunk_of(network)

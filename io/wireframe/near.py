@@ -39,7 +39,7 @@ def points_within(points: FloatArray, reach: float, limit: int) -> IntArray:
     """Return the pairs (k, 2) of points (n, 2) that are no further apart than `reach`."""
     tree = cKDTree(points)
     # every pair is counted twice, and every point once with itself
-    _refuse_crowd((int(tree.count_neighbors(tree, reach)) - len(points)) // 2, limit)
+    refuse_crowd((int(tree.count_neighbors(tree, reach)) - len(points)) // 2, limit)
     pairs: IntArray = tree.query_pairs(reach, output_type="ndarray").astype(np.intp)
     return pairs
 
@@ -85,7 +85,7 @@ def _samples(network: Network) -> tuple[FloatArray, IntArray, float]:
 
 def _across(first: FloatArray, second: FloatArray, reach: float, limit: int) -> IntArray:
     one, other = cKDTree(first), cKDTree(second)
-    _refuse_crowd(int(one.count_neighbors(other, reach)), limit)
+    refuse_crowd(int(one.count_neighbors(other, reach)), limit)
     found = one.sparse_distance_matrix(other, reach, output_type="ndarray")
     return np.column_stack([found["i"], found["j"]]).astype(np.intp)
 
@@ -96,7 +96,8 @@ def _distinct(first: IntArray, second: IntArray, width: int) -> tuple[IntArray, 
     return keys // width, keys % width
 
 
-def _refuse_crowd(pairs: int, limit: int) -> None:
+def refuse_crowd(pairs: int, limit: int) -> None:
+    """Raise DrawingError where more pairs of lines or line ends are near each other than are looked at."""
     if pairs > limit:
         raise DrawingError(
             f"the lines are too crowded: {pairs:.3g} pairs are near each other, at most {limit:.3g} are looked at",

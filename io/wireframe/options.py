@@ -24,14 +24,17 @@ _AXES = ("x", "y", "z")
 class Limits:
     """How much is read at most, so that a hostile file ends in a message and not in a machine without memory.
 
-    bytes : size of the file. entities : after the blocks are taken apart. depth : of blocks within blocks.
+    bytes : size of the file; reading takes some eight times as much memory.
+    entities : after the blocks are taken apart, sides of polylines counted one by one. depth : of blocks within blocks.
     pairs : of neighbouring line ends or bars that are looked at; a drawn truss has some ten for each line.
+    findings : of near misses, and of crossings.
     """
 
-    bytes: int = 200_000_000
+    bytes: int = 100_000_000
     entities: int = 500_000
     depth: int = 16
     pairs: int = 20_000_000
+    findings: int = 100_000
 
 
 @dataclass(frozen=True)

@@ -9,8 +9,9 @@ import numpy as np
 from scipy.sparse import coo_array
 from scipy.sparse.csgraph import connected_components
 
-from spanwright.io.wireframe.near import joints_beside_bars, points_within
+from spanwright.io.wireframe.near import joints_beside_bars, points_within, refuse_crowd
 from spanwright.io.wireframe.network import Network, Remark
+from spanwright.io.wireframe.options import Limits
 from spanwright.truss.arrays import BoolArray, FloatArray, IntArray
 from spanwright.truss.errors import DrawingError
 from spanwright.truss.tolerances import TOLERANCES
@@ -33,10 +34,10 @@ class Trunk:
     sources: IntArray
 
 
-def near_misses(network: Network, tolerance: float, limit: int) -> tuple[Remark, ...]:
+def near_misses(network: Network, tolerance: float, limits: Limits) -> tuple[Remark, ...]:
     """Report joints up to 5 tolerances (mm) from another joint, or from a bar that they are not joined to."""
     reach = TOLERANCES.near_miss * tolerance
-    pairs = points_within(network.xy, reach, limit)
+    pairs = points_within(network.xy, reach, limits.findings)
     joined = set(map(tuple, np.sort(network.ends, axis=1).tolist()))
     done = "not made one; draw them together, or give a greater tolerance"
     source_at = _source_at(network)
@@ -46,7 +47,8 @@ def near_misses(network: Network, tolerance: float, limit: int) -> tuple[Remark,
         between = ", with a bar between them" if (first, second) in joined else ""
         text = f"two joints are {gap:.3g} mm apart{between}, the tolerance is {tolerance:.3g} mm"
         remarks.append(Remark("W-311", text, done, int(source_at[first]), network.place(first)))
-    beside = joints_beside_bars(network, reach, limit)
+    beside = joints_beside_bars(network, reach, limits.pairs)
+    refuse_crowd(len(beside.bars), limits.findings)
     lengths = network.lengths()[beside.bars]
     for bar, joint, along, aside, length in zip(
         beside.bars.tolist(), beside.joints.tolist(), beside.along, beside.aside, lengths, strict=True

@@ -131,6 +131,28 @@ def test_too_much_is_refused(good: Path) -> None:
     refuse(good, "the file has 0 MB; at most 0 MB", Options(limits=Limits(bytes=1000)))
 
 
+def test_the_sides_of_polylines_in_blocks_are_counted(tmp_path: Path) -> None:
+    document = new_drawing()
+    draw(document.modelspace(), PRATT)
+    document.blocks.new("ZIGZAG").add_lwpolyline([(k, k % 2) for k in range(1000)])
+    array = {"column_count": 3, "column_spacing": 2000}
+    document.modelspace().add_blockref("ZIGZAG", (0, 9000), dxfattribs=array)
+    with pytest.raises(RefusedDrawingError, match=r"3\.02e\+03 entities"):
+        imported(document, tmp_path, limits=Limits(entities=3000))
+
+
+@pytest.mark.parametrize("pitch", [12.0, 60.0])
+def test_a_flood_of_findings_is_refused(tmp_path: Path, pitch: float) -> None:
+    # a net of lines that cross, or that end near each other
+    document = new_drawing()
+    draw(document.modelspace(), PRATT)
+    for k in range(40):
+        document.modelspace().add_line((k * pitch, 3000), (k * pitch, 6000))
+        document.modelspace().add_line((-100, 3100 + k * pitch), (4000, 3100 + k * pitch))
+    with pytest.raises(RefusedDrawingError, match="too crowded"):
+        imported(document, tmp_path, limits=Limits(findings=70 if pitch == 12.0 else 1000))
+
+
 def test_a_crowd_of_line_ends_is_counted_before_it_is_paired(tmp_path: Path) -> None:
     chance = random.Random(4)
     document = new_drawing()
