@@ -103,7 +103,7 @@ def read_content(space: Iterable[DXFEntity]) -> Content:
             _read_entity(entity, gathered)
         except READER_TROUBLE as trouble:
             about = f"its data is damaged ({type(trouble).__name__})"
-            gathered.entities.append(_record(entity, "", (), about))
+            gathered.entities.append(record(entity, "", (), about))
     return Content(
         np.array(gathered.lines, dtype=float).reshape(-1, 2, 3),
         np.array(gathered.owners, dtype=np.intp),
@@ -117,34 +117,34 @@ def read_content(space: Iterable[DXFEntity]) -> Content:
 def _read_entity(entity: DXFEntity, gathered: _Gathered) -> None:
     kind = entity.dxftype()
     if kind in RULE_OF_KIND:
-        gathered.entities.append(_record(entity, RULE_OF_KIND[kind]))
-    elif entity.dxf.get("invisible", 0):
-        gathered.entities.append(_record(entity, "invisible"))
+        gathered.entities.append(record(entity, RULE_OF_KIND[kind]))
+    elif _value(entity, "invisible", 0):
+        gathered.entities.append(record(entity, "invisible"))
     elif kind == "LINE":
         start, end = entity.dxf.start, entity.dxf.end
         gathered.lines.append((start.x, start.y, start.z, end.x, end.y, end.z))
         gathered.owners.append(len(gathered.entities))
-        gathered.entities.append(_record(entity, "bars"))
+        gathered.entities.append(record(entity, "bars"))
     elif isinstance(entity, LWPolyline | Polyline):
         _read_polyline(entity, gathered)
     elif isinstance(entity, Insert):
         gathered.inserts.append((len(gathered.entities), entity))
-        gathered.entities.append(_record(entity, "block", entity.ocs().to_wcs(entity.dxf.insert).xyz))
+        gathered.entities.append(record(entity, "block", entity.ocs().to_wcs(entity.dxf.insert).xyz))
         for attribute in entity.attribs:
-            gathered.entities.append(_record(attribute, "text"))
+            gathered.entities.append(record(attribute, "text"))
     elif kind in ("POINT", "CIRCLE"):
-        gathered.entities.append(_record(entity, "mark", _place(entity)))
+        gathered.entities.append(record(entity, "mark", _place(entity)))
     else:
-        gathered.entities.append(_record(entity, "", _place(entity)))
+        gathered.entities.append(record(entity, "", _place(entity)))
 
 
 def _read_polyline(entity: LWPolyline | Polyline, gathered: _Gathered) -> None:
     if isinstance(entity, Polyline):
         if not (entity.is_2d_polyline or entity.is_3d_polyline):
-            gathered.entities.append(_record(entity, "", (), "it is a mesh"))
+            gathered.entities.append(record(entity, "", (), "it is a mesh"))
             return
         if entity.dxf.flags & _CURVE_FLAGS:
-            gathered.entities.append(_record(entity, "", _place(entity), "it is a fitted curve"))
+            gathered.entities.append(record(entity, "", _place(entity), "it is a fitted curve"))
             return
         points = [point.xyz for point in entity.points_in_wcs()]
         bulges = [float(vertex.dxf.get("bulge", 0.0)) for vertex in entity.vertices]
@@ -152,7 +152,7 @@ def _read_polyline(entity: LWPolyline | Polyline, gathered: _Gathered) -> None:
         points = [point.xyz for point in entity.vertices_in_wcs()]
         bulges = [float(bulge) for (bulge,) in entity.get_points("b")]
     index = len(gathered.entities)
-    gathered.entities.append(_record(entity, "bars", points[0] if points else ()))
+    gathered.entities.append(record(entity, "bars", points[0] if points else ()))
     _add_sides(points, bulges, bool(entity.is_closed), index, gathered)
 
 
@@ -176,9 +176,15 @@ def _add_sides(points: list[Point], bulges: list[float], closed: bool, index: in
             gathered.owners.append(index)
 
 
-def _record(entity: DXFEntity, use: str, at: tuple[float, ...] = (), about: str = "") -> Entity:
-    dxf = entity.dxf
-    return Entity(str(dxf.get("handle", "")), entity.dxftype(), str(dxf.get("layer", "0")), use, at, about)
+def record(entity: DXFEntity, use: str, at: tuple[float, ...] = (), about: str = "") -> Entity:
+    """Return the record of an entity; the arguments are fields of `Entity`."""
+    handle, layer = (str(_value(entity, name, default)) for name, default in (("handle", ""), ("layer", "0")))
+    return Entity(handle, entity.dxftype(), layer, use, at, about)
+
+
+def _value(entity: DXFEntity, name: str, default: object) -> object:
+    """Return an attribute; entities of kinds that the library only stores have none."""
+    return entity.dxf.get(name, default) if entity.dxf.is_supported(name) else default
 
 
 def _place(entity: DXFEntity) -> tuple[float, ...]:

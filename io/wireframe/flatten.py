@@ -14,7 +14,7 @@ from ezdxf.document import Drawing
 from ezdxf.entities.insert import Insert
 
 from spanwright.io.wireframe.blocks import insert_matrices, insert_points, refuse_hostile_blocks, why_not_apart
-from spanwright.io.wireframe.content import RULE_OF_KIND, Content, Entity, read_content
+from spanwright.io.wireframe.content import RULE_OF_KIND, Content, Entity, read_content, record
 from spanwright.io.wireframe.counting import Counting
 from spanwright.io.wireframe.layers import LayerRules
 from spanwright.io.wireframe.options import MarkKind, Options, layer_mark
@@ -175,9 +175,9 @@ class _Flattening:
             if not layout.is_modelspace:
                 for entity in layout:
                     if entity.dxftype() != "VIEWPORT":
-                        layer = str(entity.dxf.get("layer", "0"))
-                        origin = Origin(str(entity.dxf.handle), entity.dxftype(), layer)
-                        self._counting.count(origin, "ignored by rule", "paper space")
+                        found = record(entity, "paper space")
+                        origin = Origin(found.handle, found.kind, found.layer)
+                        self._counting.count(origin, "ignored by rule", found.use)
 
     def result(self) -> Drawn:
         """Return what was drawn, after a look at its coordinates."""

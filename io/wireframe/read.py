@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import logging
 from pathlib import Path
 
 from ezdxf import recover
@@ -28,6 +29,8 @@ READER_TROUBLE = (
     ValueError,
 )
 """What the DXF library may raise over a file's content: it checks structure by using it."""
+
+logging.getLogger("ezdxf").addHandler(logging.NullHandler())  # what it mends is told by W-101, not on the screen
 
 _TAIL = 1024  # bytes at the end of a file among which a whole drawing says EOF
 _QUOTED_FAULTS = 3

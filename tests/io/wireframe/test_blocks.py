@@ -161,6 +161,14 @@ def test_a_frozen_layer_hides_a_block_and_a_layer_that_is_off_only_what_is_on_it
         imported(document, tmp_path)
 
 
+def test_layer_0_may_be_frozen_where_the_insert_s_layer_is_not(tmp_path: Path) -> None:
+    document = new_drawing()
+    draw(document.blocks.new("TRUSS"), PRATT, layer="0")
+    document.modelspace().add_blockref("TRUSS", (0, 0), dxfattribs={"layer": "STEEL"})
+    document.layers.get("0").freeze()
+    assert_same(imported(document, tmp_path), PRATT)
+
+
 def test_a_block_that_is_missing_or_another_drawing_is_named(tmp_path: Path) -> None:
     document = new_drawing()
     space = document.modelspace()

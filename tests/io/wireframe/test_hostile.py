@@ -6,6 +6,7 @@ from collections.abc import Callable
 from pathlib import Path
 
 import pytest
+from ezdxf.filemanagement import readfile
 from wireframes import PRATT, assert_same, codes, draw, draw_segments, imported, new_drawing, save
 
 from spanwright.io.wireframe import Limits, Options, RefusedDrawingError, import_wireframe, report_text
@@ -72,6 +73,26 @@ def test_a_damaged_number_is_recovered_and_that_is_said(good: Path) -> None:
     assert finding.severity == "warning"
     assert "strict reading stopped" in finding.text
     assert "compare the result with the drawing" in finding.done
+
+
+@pytest.mark.parametrize("damage", ["", "x"])
+def test_an_entity_that_only_its_own_program_knows_is_named(
+    good: Path, capfd: pytest.CaptureFixture[str], damage: str
+) -> None:
+    document = readfile(good)
+    last = document.modelspace().add_line((0, 0), (12000, 0))
+    document.saveas(good)
+    text = good.read_text()
+    at = text.rindex("LINE\n", 0, text.index("OBJECTS"))
+    good.write_text(text[:at] + "PROXY_TRUSS\n" + text[at + 5 :].replace("12000.0\n", f"12000.0{damage}\n", 1))
+    wireframe = import_wireframe(good)
+    assert_same(wireframe, PRATT)
+    (finding,) = wireframe.report.with_code("W-103")
+    assert finding.text == "PROXY_TRUSS: it is no straight line"
+    assert finding.handle == last.dxf.handle
+    # what the reader mends is told in the report, not on the screen
+    assert capfd.readouterr() == ("", "")
+    assert codes(wireframe).count("W-101") == len(damage)
 
 
 def test_bytes_changed_at_random_never_end_in_anything_but_a_refusal(good: Path) -> None:
