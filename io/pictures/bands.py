@@ -11,7 +11,7 @@ import numpy as np
 from spanwright.io.pictures.lettering import cut_to, height_of, width_of
 from spanwright.io.pictures.runs import ChordHolding, Holder, Stretch
 from spanwright.io.pictures.sheet import Across, Sheet, rectangle
-from spanwright.io.pictures.style import BODY, FAINT, HAIR, INK, PAPER, SMALL, SOFT, THICK, THIN
+from spanwright.io.pictures.style import BODY, FAINT, HAIR, INK, LEAST, PAPER, SMALL, SOFT, THICK, THIN
 from spanwright.io.pictures.view import View
 from spanwright.io.text import kilonewtons, metres
 from spanwright.truss.arrays import FloatArray
@@ -21,9 +21,6 @@ BAND, TALL_BAND = 4.6, 7.4
 
 LINE = 2.9
 """mm between lines of upright text."""
-
-LEAST = 5.0
-"""Size of letters where a length is too short for others, points."""
 
 ELBOW = 3.2
 """mm over which a leader slants from its point to its text."""

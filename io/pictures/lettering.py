@@ -5,7 +5,8 @@ from __future__ import annotations
 from functools import lru_cache
 from typing import Literal
 
-from matplotlib.font_manager import FontProperties, findfont, get_font
+from matplotlib.font_manager import FontProperties
+from matplotlib.textpath import text_to_path
 
 Weight = Literal["normal", "bold"]
 
@@ -13,7 +14,6 @@ MM_PER_INCH = 25.4
 POINTS_PER_MM = 72.0 / MM_PER_INCH
 
 _MEASURED = 100.0  # points: size at which letters are measured
-_FIXED_POINT = 65536.0  # FreeType states linear advances in 1/65536 of a pixel
 
 CAPITAL = 0.73
 """Height of a capital letter or a figure over the size of the font (DejaVu Sans)."""
@@ -37,10 +37,9 @@ def width_of(words: str, size: float, weight: Weight = "normal") -> float:
 
 @lru_cache(maxsize=1024)
 def _advance(letter: str, weight: Weight) -> float:
-    """Return the advance of a letter over the size of the font, by the font's own table."""
-    font = get_font(findfont(font_of(1.0, weight)))
-    font.set_size(_MEASURED, 72.0)
-    return float(font.load_char(ord(letter)).linearHoriAdvance) / _FIXED_POINT / _MEASURED
+    """Return the advance of a letter over the size of the font."""
+    points, _, _ = text_to_path.get_text_width_height_descent(letter, font_of(_MEASURED, weight), ismath=False)
+    return float(points) / _MEASURED
 
 
 def height_of(size: float) -> float:

@@ -34,6 +34,8 @@ TITLE = 14.0
 HEADING = 9.0
 BODY = 7.2
 SMALL = 6.0
+LEAST = 5.0
+"""Sizes of letters; `LEAST` only where there is no room for larger ones."""
 
 ROOMY = 20.0
 """mm on paper: where half of the bars are at least this long, members are drawn at full width."""

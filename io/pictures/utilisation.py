@@ -55,7 +55,7 @@ def utilisation_sheet(design: Design) -> Sheet:
     bottom = _draw_beneath(sheet, groups, restraint) + 2.5
     zone = Zone(LEFT + 6.0, bottom + STRIP + AROUND, RIGHT - 6.0, HEADING_BOTTOM - AROUND)
     view = view_of(truss, restraint, zone)
-    draw_scale(sheet, view, LEFT, bottom)
+    draw_scale(sheet, view, LEFT + 1.0, bottom)
     segments = view.onto(truss.xy[truss.ends])
     states = member_states(design, groups)
     members = [Member(*found) for found in zip(segments, truss.roles, states, strict=True)]

@@ -13,14 +13,14 @@ from spanwright.io.pictures.lettering import Weight, height_of, width_of
 from spanwright.io.pictures.members import Member
 from spanwright.io.pictures.sheet import Sheet, disc
 from spanwright.io.pictures.state import MemberState, letters_from
-from spanwright.io.pictures.style import BODY, INK, PAPER, SMALL, THIN, Pen
+from spanwright.io.pictures.style import BODY, INK, LEAST, PAPER, SMALL, THIN, Pen
 from spanwright.truss.arrays import FloatArray
 
 APART = 0.55
 """mm between a member's edge and its label."""
 
 FEW = 0.125
-"""Share of the labels that may be smaller than the others; beyond it all are small."""
+"""Share of the labels that may be smaller than the others; beyond it smaller letters are taken for all."""
 
 LETTER = 3.9
 """Size in points of the letter in a disc, over the disc's radius in mm."""
@@ -55,7 +55,7 @@ def place_values(members: Sequence[Member], occupied: Occupied, pen: Pen) -> tup
     larger = Occupied(occupied.boxes)
     values = _placed(members, larger, pen, (BODY, SMALL))
     if sum(value.size < BODY for value in values) > len(values) * FEW:
-        return _placed(members, occupied, pen, (SMALL,))
+        return _placed(members, occupied, pen, (SMALL, LEAST))
     occupied.boxes = larger.boxes
     return values
 
