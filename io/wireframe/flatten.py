@@ -17,7 +17,7 @@ from spanwright.io.wireframe.blocks import insert_matrices, insert_points, refus
 from spanwright.io.wireframe.content import RULE_OF_KIND, Content, Entity, read_content, record
 from spanwright.io.wireframe.counting import Counting
 from spanwright.io.wireframe.layers import LayerRules
-from spanwright.io.wireframe.options import MarkKind, Options, layer_mark
+from spanwright.io.wireframe.options import MarkKind, Options
 from spanwright.io.wireframe.read import READER_TROUBLE
 from spanwright.io.wireframe.report import Finding, Origin, TallyRow
 from spanwright.truss.arrays import FloatArray, IntArray
@@ -39,7 +39,7 @@ class DrawnMark(NamedTuple):
 class Drawn:
     """What was drawn, in drawing units and world axes.
 
-    lines : (n, 2, 3). sources : (n,) indices into `origins`. marks : on the layers that the user named.
+    lines : (n, 2, 3). sources : (n,) indices into `origins`, never falling. marks : on the layers that the user named.
     open_ends : (index into `origins`, first point (3,), last point (3,)) of open polylines.
     layers : every layer that holds anything, as seen.
     """
@@ -80,7 +80,6 @@ class _Flattening:
 
     def __init__(self, document: Drawing, options: Options) -> None:
         self._document = document
-        self._options = options
         self._rules = LayerRules(document, options)
         self._contents: dict[str, Content] = {}
         self._lines: list[FloatArray] = []
@@ -133,7 +132,7 @@ class _Flattening:
         if why_not:
             self._counting.count(origin, "ignored by rule", why_not)
             return False
-        mark = layer_mark(origin.layer, self._options)
+        mark = self._rules.mark(origin.layer)
         if entity.use == "bars" and not mark:
             self._counting.count(origin, "converted", "bars")
             return True
@@ -147,7 +146,7 @@ class _Flattening:
         return False
 
     def _place_insert(self, insert: Insert, origin: Origin, place: _Place) -> None:
-        mark = layer_mark(origin.layer, self._options)
+        mark = self._rules.mark(origin.layer)
         why_not = self._rules.why_not(origin.layer) if mark else self._rules.hides_insert(origin.layer)
         if why_not:
             self._counting.count(origin, "ignored by rule", why_not)

@@ -113,7 +113,9 @@ def _import(path: Path, options: Options, log: _Log) -> Wireframe:
         log.findings += flat.located(remarks)
 
     tolerance = log.facts.tolerance
-    roles = [layer_role(origin.layer, options) for origin in flat.origins[: len(flat.lines)]]
+    layers = [origin.layer for origin in flat.origins[: len(flat.lines)]]
+    role_of = {layer: layer_role(layer, options) for layer in set(layers)}
+    roles = [role_of[layer] for layer in layers]
     trunk = clean(flat.lines, roles, flat.marks, options, tolerance, say)
     truss, remarks = recognise(trunk.network, [roles[line] for line in trunk.network.sources], tolerance)
     say(remarks)
@@ -171,9 +173,9 @@ def _flat_marks(drawn: Drawn, plane: Plane) -> tuple[FlatMark, ...]:
 def _open_ends(drawn: Drawn, plane: Plane) -> Iterator[tuple[int, FloatArray]]:
     """Yield for each open polyline one of its lines, and its ends (2, 2) in mm."""
     for origin, start, end in drawn.open_ends:
-        lines = np.flatnonzero(drawn.sources == origin)
-        if lines.size:
-            yield int(lines[0]), plane.flat(np.array([start, end]))
+        line = int(np.searchsorted(drawn.sources, origin))
+        if line < len(drawn.sources) and drawn.sources[line] == origin:
+            yield line, plane.flat(np.array([start, end]))
 
 
 def _given(

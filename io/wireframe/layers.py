@@ -5,7 +5,7 @@ from __future__ import annotations
 from ezdxf.document import Drawing
 from ezdxf.entities.layer import Layer
 
-from spanwright.io.wireframe.options import Options, matches
+from spanwright.io.wireframe.options import MarkKind, Options, layer_mark, matches
 
 _NEVER_PLOTTED = "defpoints"  # the format's own layer of dimension points
 
@@ -17,12 +17,19 @@ class LayerRules:
         self._options = options
         self._states = {layer.dxf.name.casefold(): _state(layer) for layer in document.layers}
         self._reasons: dict[str, str] = {}
+        self._marks: dict[str, MarkKind | None] = {}
 
     def why_not(self, layer: str) -> str:
         """Return why a layer is not read, or ""."""
         if layer not in self._reasons:
             self._reasons[layer] = self._reason(layer)
         return self._reasons[layer]
+
+    def mark(self, layer: str) -> MarkKind | None:
+        """Return the kind of marks that the user said the layer holds, or None."""
+        if layer not in self._marks:
+            self._marks[layer] = layer_mark(layer, self._options)
+        return self._marks[layer]
 
     def hides_insert(self, layer: str) -> str:
         """Return why a block inserted on this layer is not read whatever layers its parts are on, or "".
