@@ -63,8 +63,8 @@ def loads(design: Design) -> Section:
         f"edge; {numbered[cases[0].name]} lists what that is and to which joints it goes, the tables below the loads "
         "of every other case."
     )
-    tabled = [(numbered[case.name], pushes[case.name]) for case in cases[1:] if pushes[case.name]]
-    return Section("Loads", (*_from_site(design), about, Derivations(tuple(entries)), *_tables(tabled)))
+    columns = [(numbered[case.name], pushes[case.name]) for case in cases[1:] if pushes[case.name]]
+    return Section("Loads", (*_from_site(design), about, Derivations(tuple(entries)), *_tables(columns)))
 
 
 def _told_once(lines: list[str], label: str, first: dict[str, str]) -> Iterator[str]:
@@ -102,7 +102,8 @@ def _from_site(design: Design) -> tuple[Paragraph | Steps, ...]:
     left, right = (fixed(edge / 1e3, 3) for edge in site.strip)
     about = Paragraph(
         f"From the site, by {site.standard}. The truss stands {fixed(site.position / 1e3, 3)} m from the near gable "
-        f"and carries the strip of roof from {left} m to {right} m. Beside each clause stands where the value comes from."
+        f"and carries the strip of roof from {left} m to {right} m. Beside each clause stands where the value comes "
+        "from."
     )
     return about, steps_of(site.steps)
 
