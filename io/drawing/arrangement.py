@@ -1,4 +1,4 @@
-"""Which sheet, which scales, and where everything lies on the sheet. Sizes in mm on paper, from the lower left corner."""
+"""Which sheet, which scales, and where everything lies on it. Sizes in mm on paper, from the lower left corner."""
 
 from __future__ import annotations
 
@@ -21,15 +21,20 @@ from spanwright.io.drawing.pen import Pen
 from spanwright.io.drawing.schedules import bearing_table, member_schedule, parts, restraint_table
 from spanwright.io.drawing.tables import DrawnTable
 from spanwright.io.drawing.title_block import FILING, HEIGHT, MARGIN, REVISIONS_HEIGHT, WIDTH
+from spanwright.truss.errors import OutputError
 
 PAPERS = (("A3", 420.0, 297.0), ("A2", 594.0, 420.0), ("A1", 841.0, 594.0))
 """Sizes by ISO 216, lying."""
-SCALES = (10, 20, 50, 100, 200, 500)
+SCALES = (10, 20, 50, 100, 200, 500, 1000, 2000)
 """Elevations 1:n by ISO 5455."""
+SCALES_TRIED = 2
+"""Of the scales at which a truss fits a sheet's width, only so many of the largest are tried."""
 SECTION_SCALES = (1, 2, 5, 10)
 """Cross-sections 1:n by ISO 5455."""
-SMALLEST, LARGEST = 22.0, 150.0
+SMALLEST, LARGEST = 14.0, 150.0
 """mm on paper: no cross-section is drawn smaller, for its dimensions' sake, nor larger."""
+ROWS_AT_MOST = (None, 100, 50, 25)
+"""Rows of a table, tried in this order."""
 INSIDE = 6.0
 """mm on paper left free inside the frame."""
 LEAST_GAP = 0.7
@@ -70,25 +75,36 @@ class Arrangement:
 def arrange(design: Design) -> Arrangement:
     """Return the smallest sheet with everything on it, of that the largest scales, so that all marks stand along their
     members; where no sheet has room for all of them, that with the fewest on leaders.
+
+    Scales at which the edges of a member run together, and tables without all their rows, are the last resort.
+    Raises OutputError where even so no sheet is large enough.
     """
-    possible = _Possible(design)
-    for scales in (possible.clear_scales, SCALES):
-        best: Arrangement | None = None
-        for found in possible.sheets(scales):
-            if best is None or found.elevation.led < best.elevation.led:
-                best = found
-            if best.elevation.led == 0:
-                break
-        if best is not None:
-            return best
-    raise NotImplementedError
+    for most in ROWS_AT_MOST:
+        possible = _Possible(design, most)
+        for scales in (possible.clear_scales, SCALES):
+            if best := _best(possible.sheets(scales)):
+                return best
+    raise OutputError(
+        "no sheet is large enough for the drawing", "design it in parts, or shorten the texts of the project"
+    )
+
+
+def _best(sheets: Iterator[Arrangement]) -> Arrangement | None:
+    best: Arrangement | None = None
+    for found in sheets:
+        if best is None or found.elevation.wanting < best.elevation.wanting:
+            best = found
+        if best.elevation.wanting == (0, 0):
+            break
+    return best
 
 
 @dataclass(frozen=True, eq=False)
 class _Possible:
-    """The sheets that a design can be drawn on."""
+    """The sheets that a design can be drawn on, with at most so many rows in a table."""
 
     design: Design
+    most: int | None
 
     @cached_property
     def clear_scales(self) -> tuple[int, ...]:
@@ -109,7 +125,7 @@ class _Possible:
         """The blocks beside the views, each with what it may look like."""
         found: list[tuple[tuple[Drawn, ...], Block]] = []
         for table in (parts, member_schedule, restraint_table, bearing_table):
-            made = table(self.design)
+            made = table(self.design).limited(self.most)
             strips = STRIPS if len(made.rows) > 2 * SHORT else STRIPS[:2]
             drawn = tuple(DrawnTable(made, number) for number in strips)
             found.append((drawn, Block(tuple((one.size[0], one.height) for one in drawn))))
@@ -140,9 +156,8 @@ class _Possible:
                 width - FILING - MARGIN - 2.0 * INSIDE,
                 height - 2.0 * (MARGIN + INSIDE),
             )
-            for scale in scales:
-                if self._steel / scale > inside.width:
-                    continue
+            fitting = [scale for scale in scales if self._steel / scale <= inside.width]
+            for scale in fitting[:SCALES_TRIED]:
                 if scale not in laid:
                     laid[scale] = lay_out(self.design, scale)
                 found = self._on(paper, width, height, inside, laid[scale])

@@ -13,7 +13,7 @@ from spanwright.design.result import Design
 from spanwright.design.sizing import Choice
 from spanwright.io.drawing.cross_shapes import Shape, shapes
 from spanwright.io.drawing.dimensions import Dimension
-from spanwright.io.drawing.lettering import LARGE, STEP, TEXT, wrapped
+from spanwright.io.drawing.lettering import LARGE, STEP, TEXT, width_of, wrapped
 from spanwright.io.drawing.pen import Pen
 from spanwright.io.drawing.standards import (
     DIMENSIONS,
@@ -23,6 +23,7 @@ from spanwright.io.drawing.standards import (
     SECTION_HATCH,
     SECTIONS,
     SETTING_OUT,
+    TICK,
 )
 from spanwright.truss.arrays import FloatArray
 
@@ -36,6 +37,7 @@ BEYOND = 5.0
 """mm on paper by which centre lines and gussets pass the steel."""
 NARROWEST = 62.0
 """mm on paper: least width of one cross-section, for its caption."""
+DIAMETER = "\u00d8"
 HATCH = 1.4
 """mm on paper between hatching lines (ISO 128-3: at least 0.7)."""
 
@@ -91,6 +93,7 @@ def _cell(design: Design, choice: Choice, scale: int) -> Cell:
     names = [truss.bar_names[bar] for bar in choice.group.bars]
     packs = [piece for piece in design.pieces if piece.description == "packing plate" and set(piece.bars) & set(names)]
     texts = [choice.name, in_ranges(names)]
+    texts += ["in front of the gusset"] if section.family == "L" else []
     texts += [f"packs {piece.mark}: {piece.section} - {piece.cut_length:.0f}" for piece in packs]
     gusset = gap if section.family == "L" else 0.0
     cell = Cell(
@@ -153,20 +156,29 @@ def _draw_cell(pen: Pen, cell: Cell, corner: FloatArray, size: FloatArray) -> No
         pen.path(PACKS, cell.pack + origin, closed=True)
     _draw_axes(pen, cell, origin, low, high)
     for one in _dimensions(cell, unit):
-        pen.dimension(DIMENSIONS, one.start + origin, one.end + origin, one.line + origin, one.angle)
+        shift = _shift(one, unit)
+        pen.dimension(
+            DIMENSIONS, one.start + origin, one.end + origin, one.line + origin, one.angle, shift=shift, sign=one.sign
+        )
+
+
+def _shift(one: Dimension, unit: float) -> float:
+    """Return mm on paper by which the text of a short dimension stands off."""
+    room, text = one.length / unit, width_of(f"{one.length:.1f}".removesuffix(".0"))
+    return one.off * (room + text) / 2.0 + one.off * TICK if room < text + TICK else 0.0
 
 
 def _draw_axes(pen: Pen, cell: Cell, origin: FloatArray, low: FloatArray, high: FloatArray) -> None:
     """Draw the plane of the truss, the setting-out line's level, and the faces of the gusset of a single angle."""
     beyond = BEYOND * pen.scale
+    x, y = origin
     left, right = min(float(low[0]), -cell.gusset / 2.0) - beyond / 2.0, float(high[0]) + beyond / 2.0
     bottom, top = float(low[1]) - beyond, float(high[1]) + beyond
-    pen.line(SETTING_OUT, origin + [0.0, bottom], origin + [0.0, top])
-    pen.line(SETTING_OUT, origin + [left, 0.0], origin + [right, 0.0])
+    pen.line(SETTING_OUT, (x, y + bottom), (x, y + top))
+    pen.line(SETTING_OUT, (x + left, y), (x + right, y))
     if cell.gusset:
-        for side in (-1.0, 1.0):
-            at = side * cell.gusset / 2.0
-            pen.line(GUSSETS, origin + [at, bottom], origin + [at, top])
+        for at in (x - cell.gusset / 2.0, x + cell.gusset / 2.0):
+            pen.line(GUSSETS, (at, y + bottom), (at, y + top))
 
 
 def _dimensions(cell: Cell, unit: float) -> Iterator[Dimension]:
@@ -178,10 +190,11 @@ def _dimensions(cell: Cell, unit: float) -> Iterator[Dimension]:
         yield from _of_angles(cell, rings, low, high, unit)
     else:
         depth, width, wall = (float(value[0]) for value in (section.depth, section.width, section.thickness))
-        yield _upright("depth", 0.0, -depth / 2.0, depth / 2.0, float(low[0]) - LINE * unit)
+        across = _upright("depth", 0.0, -depth / 2.0, depth / 2.0, float(low[0]) - LINE * unit)
+        yield replace(across, sign=DIAMETER) if section.family == "CHS" else across
         if section.family != "CHS":
             yield _level("width", 0.0, -width / 2.0, width / 2.0, float(high[1]) + LINE * unit)
-        yield _level("wall", 0.0, width / 2.0 - wall, width / 2.0, float(low[1]) - LINE * unit)
+        yield _level("wall", 0.0, width / 2.0 - wall, width / 2.0, float(low[1]) - LINE * unit, off=1.0)
     if cell.pack is not None:
         x, (bottom, top) = float(cell.pack[1, 0]), cell.pack[[1, 2], 1]
         yield _upright("pack length", x, float(bottom), float(top), float(high[0]) + 2.0 * LINE * unit)
@@ -201,8 +214,9 @@ def _of_angles(cell: Cell, rings: FloatArray, low: FloatArray, high: FloatArray,
     legs_low, legs_high = sorted((heel, heel + inward * leg))
     yield _upright("connected leg", back, legs_low, legs_high, left)
     if not star:
-        yield _upright("setting-out line", back, *sorted((heel, 0.0)), left - LINE * unit)
-    yield _upright("thickness", back + out, *sorted((heel, heel + inward * t)), right)
+        yield _upright("setting-out line", back, min(heel, 0.0), max(heel, 0.0), left - LINE * unit, off=-inward)
+    face = heel + inward * t
+    yield _upright("thickness", back + out, min(heel, face), max(heel, face), right, off=-inward)
     yield _level("outstanding leg", heel, back, back + out, level)
     if section.pieces == 2:
         yield _level("gap", heel, -back, back, level)
@@ -214,9 +228,9 @@ def _of_angles(cell: Cell, rings: FloatArray, low: FloatArray, high: FloatArray,
         yield _level("gusset", heel, -back, back, level)
 
 
-def _level(what: str, y: float, left: float, right: float, at: float) -> Dimension:
-    return Dimension(what, np.array([left, y]), np.array([right, y]), np.array([left, at]), 0.0)
+def _level(what: str, y: float, left: float, right: float, at: float, off: float = 0.0) -> Dimension:
+    return Dimension(what, np.array([left, y]), np.array([right, y]), np.array([left, at]), 0.0, off)
 
 
-def _upright(what: str, x: float, bottom: float, top: float, at: float) -> Dimension:
-    return Dimension(what, np.array([x, bottom]), np.array([x, top]), np.array([at, bottom]), 90.0)
+def _upright(what: str, x: float, bottom: float, top: float, at: float, off: float = 0.0) -> Dimension:
+    return Dimension(what, np.array([x, bottom]), np.array([x, top]), np.array([at, bottom]), 90.0, off)

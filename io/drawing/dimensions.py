@@ -23,13 +23,19 @@ FIRST, BESIDE, APART = 18.0, 11.0, 8.0
 
 @dataclass(frozen=True, eq=False)
 class Dimension:
-    """One dimension: what it measures, from point to point (2,) in a direction, degrees, on a line through `line`."""
+    """One dimension: what it measures, from point to point (2,) in a direction, degrees, on a line through `line`.
+
+    off : to which side its text may stand off where it is short, +1 or -1 in that direction; 0: it stays.
+    sign : stands before the length, such as that of a diameter.
+    """
 
     what: str
     start: FloatArray
     end: FloatArray
     line: FloatArray
     angle: float
+    off: float = 0.0
+    sign: str = ""
 
     @property
     def length(self) -> float:
@@ -113,14 +119,14 @@ def _heights(truss: Truss, low: FloatArray, high: FloatArray, first: float, apar
     eaves = min((truss.xy[joint] for joint in (truss.top.joints[0], truss.top.joints[-1])), key=lambda point: point[1])
     heels = [_heel(truss, joint) for joint in (truss.bearing_joints[0], truss.bearing_joints[-1])]
     near, far = float(high[0]) + first, float(high[0]) + first + apart
-    if heels[1]:
+    if heels[1] and heels[1][1][1] < apex[1]:
         yield _upright("heel", *heels[1], near)
     if heels[0] and (not heels[1] or abs(_height(heels[0]) - _height(heels[1])) > TOLERANCES.same_length):
         yield _upright("heel", *heels[0], float(low[0]) - first)
     if apex[1] - eaves[1] > TOLERANCES.same_length:
         beside = not heels[1] or abs(heels[1][1][1] - eaves[1]) < TOLERANCES.same_length
         yield _upright("rise", eaves, apex, near if beside else far)
-        if heels[1] and beside:
+        if heels[1] and beside and heels[1][0][1] < eaves[1]:
             yield _upright("heel and rise", heels[1][0], apex, far)
     yield _upright("overall height", low, np.array([low[0], high[1]]), float(low[0]) - first - apart)
 

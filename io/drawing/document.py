@@ -7,11 +7,12 @@ from collections.abc import Iterator
 from contextlib import contextmanager
 from pathlib import Path
 
-import ezdxf
 import numpy as np
 from ezdxf import units, zoom
+from ezdxf._options import options as library
 from ezdxf.document import Drawing
-from ezdxf.layouts import Paperspace
+from ezdxf.filemanagement import new
+from ezdxf.layouts.layout import Paperspace
 
 from spanwright.design.result import Design
 from spanwright.io.drawing.arrangement import VIEW_TITLE, Arrangement, arrange
@@ -50,18 +51,18 @@ def write_drawing(design: Design, folder: Path) -> None:
 @contextmanager
 def fixed_marks() -> Iterator[None]:
     """Let ezdxf write no time of day and no random marks."""
-    before = ezdxf.options.write_fixed_meta_data_for_testing
-    ezdxf.options.write_fixed_meta_data_for_testing = True
+    before = library.write_fixed_meta_data_for_testing
+    library.write_fixed_meta_data_for_testing = True
     try:
         yield
     finally:
-        ezdxf.options.write_fixed_meta_data_for_testing = before
+        library.write_fixed_meta_data_for_testing = before
 
 
 def draw(design: Design) -> Drawing:
     """Return the drawing of a passing design."""
     arranged = arrange(design)
-    doc = ezdxf.new(VERSION)
+    doc = new(VERSION)
     doc.units = units.MM
     doc.header["$MEASUREMENT"] = 1
     set_up(doc, arranged.elevation.scale, arranged.sections.scale)

@@ -1,4 +1,4 @@
-"""The elevation of a truss: setting-out lines, steel true to size, signs, marks and dimensions, in model space at 1:1."""
+"""The elevation of a truss: setting-out lines, steel true to size, signs, marks and dimensions, in model mm."""
 
 from __future__ import annotations
 
@@ -42,9 +42,11 @@ class Elevation:
         return size
 
     @property
-    def led(self) -> int:
-        """Number of labels that stand off their member, with a leader."""
-        return sum(label.leader is not None for label in self.labels)
+    def wanting(self) -> tuple[int, int]:
+        """Number of members without a label, and of labels that stand off their member, with a leader."""
+        marked = {label.bar for label in self.labels}
+        bare = sum(marked.isdisjoint(outline.bars) for outline in self.steel)
+        return bare, sum(label.leader is not None for label in self.labels)
 
 
 def lay_out(design: Design, scale: int) -> Elevation:
@@ -53,9 +55,9 @@ def lay_out(design: Design, scale: int) -> Elevation:
     outer = np.vstack([cut.outline for cut in cuts(design.setting, design.choices)])
     found = signs(design, scale)
     measured = dimensions(design.setting.truss, outer, scale)
-    taken = np.vstack([found.boxes, *(one.boxes(scale) for one in measured)])
-    texts = labels(design, found, taken)
-    around = [corners(one) for one in (*taken, *(label.box(scale) for label in texts))]
+    lines = np.vstack([one.boxes(scale) for one in measured])
+    texts = labels(design, found, lines)
+    around = [corners(one) for one in (*lines, *found.boxes, *(label.box(scale) for label in texts))]
     points = np.vstack([outer, *around])
     margin = MARGIN * scale
     low, high = points.min(axis=0) - margin, points.max(axis=0) + margin

@@ -1,7 +1,7 @@
 """Lettering: the text that a drawing may carry, its heights on paper, and how wide it is.
 
-Widths are those of the DejaVu Sans that comes with matplotlib, in which the PDF is set; the Arial that CAD systems take is
-narrower, so what fits here fits there.
+Widths are those of the DejaVu Sans that comes with matplotlib, in which the PDF is set; the Arial that CAD systems take
+is narrower, so what fits here fits there.
 """
 
 from __future__ import annotations

@@ -11,7 +11,7 @@ from spanwright.design.cutting import Cut, cuts
 from spanwright.design.lying import edges
 from spanwright.design.result import Design
 from spanwright.io.drawing.holding import PURLIN, Signs
-from spanwright.io.drawing.lettering import TEXT, width_of
+from spanwright.io.drawing.lettering import TEXT, cut_to, width_of
 from spanwright.io.drawing.pen import Pen
 from spanwright.io.drawing.places import Occupied, along_member, near_point, with_leader
 from spanwright.io.drawing.standards import JOINTS, MARKS, PURLINS, Layer
@@ -26,8 +26,10 @@ OFF = 0.9
 """mm on paper between a member's edge and the text beside it."""
 BEYOND_SIGNS = 7.5
 """mm on paper from a chord to texts beyond its purlins and joint names."""
-LEADERS = tuple(np.arange(6.0, 48.0, 3.0))
+LEADERS = tuple(np.arange(6.0, 54.0, 3.0))
 """mm on paper: lengths of leaders, tried in this order."""
+WIDEST_MARK = 60.0
+"""mm on paper: a longer mark is cut short."""
 ABOVE = (90.0, 60.0, 120.0, 40.0, 140.0, 0.0, 180.0)
 BELOW = (270.0, 300.0, 240.0, 320.0, 220.0, 0.0, 180.0)
 BESIDE = (180.0, 0.0, 135.0, 45.0, 225.0, 315.0, 90.0, 270.0)
@@ -36,8 +38,10 @@ BESIDE = (180.0, 0.0, 135.0, 45.0, 225.0, 315.0, 90.0, 270.0)
 
 @dataclass(frozen=True, eq=False)
 class Label:
-    """One text on the elevation: its middle (2,) in model mm, its angle in degrees, and its leader (2, 2) or None; whether a circle
-    stands round it.
+    """One text on the elevation.
+
+    middle : (2,) model mm. angle : degrees. leader : (2, 2), text first, or None. ringed : has it a circle round it?
+    bar : the first bar of the member that it marks, "" where it marks none.
     """
 
     text: str
@@ -46,16 +50,17 @@ class Label:
     layer: Layer
     leader: FloatArray | None = None
     ringed: bool = False
+    bar: str = ""
 
     def box(self, scale: float) -> FloatArray:
         """Return the (6,) box of its letters, model mm."""
         return box(self.middle, np.radians(self.angle), width_of(self.text) * scale, TEXT * scale)
 
 
-def labels(design: Design, found: Signs, taken: FloatArray) -> tuple[Label, ...]:
-    """Return every text of an elevation at the scale of its signs, clear of the (n, 6) boxes that are taken."""
+def labels(design: Design, found: Signs, dimensions: FloatArray) -> tuple[Label, ...]:
+    """Return every text of an elevation at the scale of its signs, clear of the (n, 6) boxes of its dimensions."""
     scale = found.scale
-    occupied = Occupied(np.vstack([_steel(design), taken]))
+    occupied = Occupied(np.vstack([_steel(design), found.boxes]), dimensions)
     placed = [*_purlin_numbers(design, found, occupied), *_joint_names(design, scale, occupied)]
     left = []
     for cut in sorted(cuts(design.setting, design.choices), key=lambda cut: cut.axis):
@@ -90,18 +95,22 @@ def mark_of(design: Design, cut: Cut) -> str:
         piece.mark for piece in design.pieces if first in piece.bars and piece.section in cut.choice.section.piece_names
     ]
     same = cut.choice.section.pieces > len(marks)
-    return f"{cut.choice.section.pieces} x {marks[0]}" if same else " + ".join(marks)
+    return cut_to(f"{cut.choice.section.pieces} x {marks[0]}" if same else " + ".join(marks), WIDEST_MARK)
 
 
 def section_of(cut: Cut) -> str:
-    """Return the section in short: "2L 65x50x5"; which way round it stands is in the schedule and the cross-sections."""
+    """Return the section in short: "2L 65x50x5"; which way round it stands is in the cross-sections."""
     return cut.choice.name.split(",")[0]
+
+
+def _in_one(design: Design, cut: Cut) -> str:
+    return f"{mark_of(design, cut)}  {section_of(cut)}"
 
 
 def _along(design: Design, cut: Cut, scale: float, occupied: Occupied) -> list[Label]:
     """Place mark and section along a member: in one line, else one on either side, else nothing."""
     mark, section = mark_of(design, cut), section_of(cut)
-    together = _beside(design, f"{mark}  {section}", cut, scale, occupied)
+    together = _beside(design, _in_one(design, cut), cut, scale, occupied)
     if together:
         return [together]
     before = occupied.texts
@@ -119,7 +128,9 @@ def _beside(design: Design, text: str, cut: Cut, scale: float, occupied: Occupie
     aways = (away, away + BEYOND_SIGNS * scale) if "chord" in role else (away,)
     sides = (-1.0, 1.0) if role == "bottom chord" else (1.0, -1.0)
     place = along_member(_joint_to_joint(design, cut), _size(text, scale), aways, sides, occupied)
-    return Label(text, place.middle, place.angle, MARKS) if place else None
+    if place is None:
+        return None
+    return Label(text, place.middle, place.angle, MARKS, bar=design.setting.truss.bar_names[cut.bars[0]])
 
 
 def _joint_to_joint(design: Design, cut: Cut) -> FloatArray:
@@ -131,12 +142,15 @@ def _joint_to_joint(design: Design, cut: Cut) -> FloatArray:
 
 
 def _with_leader(design: Design, cut: Cut, scale: float, occupied: Occupied) -> Iterator[Label]:
-    """Set mark and section off a member that is too short for them, with a leader to it."""
-    text = f"{mark_of(design, cut)}  {section_of(cut)}"
+    """Set mark and section off a member that is too short for them, with a leader; at worst the mark alone at it."""
+    text = _in_one(design, cut)
     middle = (cut.start + cut.finish) / 2.0
     found = with_leader(middle, _size(text, scale), [reach * scale for reach in LEADERS], occupied)
     if found:
-        yield Label(text, found[0].middle, 0.0, MARKS, found[1])
+        bar = design.setting.truss.bar_names[cut.bars[0]]
+        yield Label(text, found[0].middle, 0.0, MARKS, found[1], bar=bar)
+    elif alone := _beside(design, mark_of(design, cut), cut, scale, occupied):
+        yield alone
 
 
 def _purlin_numbers(design: Design, found: Signs, occupied: Occupied) -> Iterator[Label]:

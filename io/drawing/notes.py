@@ -19,6 +19,8 @@ from spanwright.io.schedule.notes import ESTIMATE
 from spanwright.io.text import kilograms
 from spanwright.truss.arrays import FloatArray
 
+WARNINGS = 6
+"""Warnings that a sheet has room for."""
 INDENT = 7.0
 HEAD = LARGE + 3.0
 SIGN_ROW, SIGN_COLUMN = 7.5, 62.0
@@ -62,26 +64,34 @@ def general_notes(design: Design, width: float) -> Notes:
     whole = assembly(setting, design.choices, design.pieces)
     camber = design.serviceability.camber
     lean = f", diagonals {setting.truss.lean}" if setting.truss.lean else ""
+    families = {choice.section.family for choice in design.choices}
     paragraphs = [
-        "All dimensions in mm. Do not scale. Setting-out lines are the centroid lines of the members; rafter panels are "
-        "measured along the slope.",
-        f"{setting.truss.form} truss{lean}; {project.quantity} off, {project.spacing:.0f} apart. Members to "
-        f"{standard.name}, actions to {project.actions}.",
+        "All dimensions in mm. Do not scale. Setting-out lines are the centroid lines of the members; rafter panels "
+        "are measured along the slope.",
+        f"Form of the truss: {setting.truss.form}{lean}; {project.quantity} off, {project.spacing:.0f} apart. Members "
+        f"to {standard.name}, actions to {project.actions}.",
         f"{ESTIMATE[0]}{ESTIMATE[1:].lower()}.",
-        "Gussets and connections are not shown; they are not designed yet. Which way round the angles of webs are turned "
-        "is settled with them.",
-        f"Webs are cut square {project.members.setback:.0f} along the web clear of the chords' edges, tubes to their face.",
+        "Gussets and connections are not shown; they are not designed yet.",
+        *(_ANGLES if "L" in families else ()),
+        f"Webs are cut square, {project.members.setback:.0f} along the web clear of the chords' edges; tubes that meet "
+        "tubes to their face.",
         _ends(design),
-        f"Gap between the angles of pairs {project.members.gap:.0f}, filled by packing plates as listed.",
+        *(_PAIRS if families & {"2L", "2L star"} else ()),
         f"Camber {camber:.0f} at mid-span." if camber else "No camber.",
         "Purlins, knee braces, ties and bearings are shown as signs, not to scale. The chords are held sideways only "
         "where the restraint table says so: it is part of the design.",
-        f"Mass of one truss {kilograms(whole.mass)}, to lift {kilograms(whole.lift_mass)} with the allowance for gussets "
-        "and fixings.",
+        f"Mass of one truss {kilograms(whole.mass)}, to lift {kilograms(whole.lift_mass)} with the allowance for "
+        "gussets and fixings.",
         *whole.remarks,
-        *design.warnings,
+        *design.warnings[:WARNINGS],
     ]
+    if len(design.warnings) > WARNINGS:
+        paragraphs.append(f"{len(design.warnings) - WARNINGS} more warnings are in results.json.")
     return Notes("GENERAL NOTES", tuple(paragraphs), width)
+
+
+_ANGLES = ("Which way round the single angles of webs are turned is settled with their gussets.",)
+_PAIRS = ("Between the angles of pairs stand packing plates as listed, as thick as the gap.",)
 
 
 def caution(design: Design, width: float) -> Notes:
@@ -166,11 +176,11 @@ def _brace(pen: Pen, at: FloatArray, *, counted: bool) -> None:
 
 
 def _bearing(pen: Pen, at: FloatArray, *, slides: bool) -> None:
-    draw_bearing(pen, at + [0.0, BEARING / 2.0 + 0.8], slides=slides)
+    draw_bearing(pen, at + np.array([0.0, BEARING / 2.0 + 0.8]), slides=slides)
 
 
 def _line(pen: Pen, at: FloatArray) -> None:
-    pen.line(SETTING_OUT, at - [5.5, 0.0], at + [6.5, 0.0])
+    pen.line(SETTING_OUT, (at[0] - 5.5, at[1]), (at[0] + 6.5, at[1]))
 
 
 _SIGNS: dict[str, Callable[[Pen, FloatArray], None]] = {

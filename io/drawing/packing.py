@@ -4,12 +4,16 @@ from __future__ import annotations
 
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
-from itertools import islice, permutations, product
+from itertools import islice, permutations
 
-FREE = (15.0, 10.0, 6.0)
+import numpy as np
+
+FREE = (24.0, 18.0, 12.0, 8.0, 6.0)
 """Left free between blocks, the most that there is room for."""
 LARGEST = 5
 """Blocks whose order is varied; the smaller ones always come after them."""
+SLACK = 1e-6
+"""mm: what adding up doubles may leave."""
 ORDERS = 120
 """Orders that are tried."""
 
@@ -37,7 +41,7 @@ class Spot:
 
     def clear_of(self, other: Spot, free: float) -> bool:
         """Whether two spots have so much between them."""
-        near = free - 1e-9
+        near = free - SLACK
         return (
             self.left >= other.right + near
             or other.left >= self.right + near
@@ -48,10 +52,10 @@ class Spot:
     def within(self, other: Spot) -> bool:
         """Whether the spot lies inside another."""
         return (
-            self.left >= other.left - 1e-9
-            and self.right <= other.right + 1e-9
-            and self.bottom >= other.bottom - 1e-9
-            and self.top <= other.top + 1e-9
+            self.left >= other.left - SLACK
+            and self.right <= other.right + SLACK
+            and self.bottom >= other.bottom - SLACK
+            and self.top <= other.top + SLACK
         )
 
 
@@ -104,21 +108,28 @@ def _orders(blocks: Sequence[Block]) -> Iterator[tuple[int, ...]]:
 
 def _place(sheet: Spot, taken: list[Spot], block: Block, free: float) -> tuple[int, Spot] | None:
     """Return the size and the spot of a block whose lower edge is highest."""
-    best: tuple[int, Spot] | None = None
-    for number, size in enumerate(block.sizes):
-        for spot in _spots(sheet, taken, size, free, at_right=block.at_right):
-            if best is not None and spot.bottom <= best[1].bottom + 1e-9:
-                break
-            if spot.within(sheet) and all(spot.clear_of(other, free) for other in taken):
-                best = number, spot
-                break
-    return best
+    found = [
+        (number, spot)
+        for number, size in enumerate(block.sizes)
+        if (spot := _highest(sheet, taken, size, free, at_right=block.at_right))
+    ]
+    return max(found, key=lambda one: (round(one[1].bottom, 6), -one[0]), default=None)
 
 
-def _spots(sheet: Spot, taken: list[Spot], size: Size, free: float, *, at_right: bool) -> Iterator[Spot]:
-    """Give the spots against edges of the sheet and of what is taken, high ones first."""
-    tops = {sheet.top, *(spot.bottom - free for spot in taken)}
-    lefts = {sheet.left, sheet.right - size[0]}
-    lefts |= {spot.right + free for spot in taken} | {spot.left - free - size[0] for spot in taken}
-    for top, left in product(sorted(tops, reverse=True), sorted(lefts, reverse=at_right)):
-        yield Spot(left, top, *size)
+def _highest(sheet: Spot, taken: list[Spot], size: Size, free: float, *, at_right: bool) -> Spot | None:
+    """Return the highest free spot against edges of the sheet and of what is taken, there the one farthest aside."""
+    left, right, bottom, top = np.array([(spot.left, spot.right, spot.bottom, spot.top) for spot in taken]).T
+    tops = np.unique(np.append(bottom - free, sheet.top))[::-1]
+    lefts = np.unique(np.concatenate([right + free, left - free - size[0], [sheet.left, sheet.right - size[0]]]))
+    tops = tops[(tops <= sheet.top + SLACK) & (tops - size[1] >= sheet.bottom - SLACK)]
+    lefts = lefts[(lefts >= sheet.left - SLACK) & (lefts + size[0] <= sheet.right + SLACK)]
+    if at_right:
+        lefts = lefts[::-1]
+    near = free - SLACK
+    beside = (lefts[:, None] >= right + near) | (left >= lefts[:, None] + size[0] + near)
+    over = (tops[:, None] - size[1] >= top + near) | (bottom >= tops[:, None] + near)
+    free_here = (over[:, None, :] | beside[None, :, :]).all(axis=2)
+    if not free_here.any():
+        return None
+    row, column = np.unravel_index(int(np.argmax(free_here)), free_here.shape)
+    return Spot(float(lefts[column]), float(tops[row]), *size)

@@ -8,7 +8,7 @@ from typing import Literal
 
 import numpy as np
 from ezdxf.enums import TextEntityAlignment
-from ezdxf.layouts import BaseLayout
+from ezdxf.layouts.base import BaseLayout
 
 from spanwright.io.drawing.lettering import TEXT, as_dxf
 from spanwright.io.drawing.standards import STYLE, Layer
@@ -83,16 +83,33 @@ class Pen:
         entity.dxf.width = self.layout.doc.styles.get(STYLE).dxf.width
         entity.set_placement(_pair(at), align=_PLACES[across, up])
 
-    def dimension(self, layer: Layer, start: Point, end: Point, line: Point, angle: float) -> None:
-        """Dimension the distance of two points in a direction, degrees; `line` is a point of the dimension line."""
-        self.layout.add_linear_dim(
+    def dimension(
+        self,
+        layer: Layer,
+        start: Point,
+        end: Point,
+        line: Point,
+        angle: float,
+        *,
+        shift: float = 0.0,
+        sign: str = "",
+    ) -> None:
+        """Dimension the distance of two points in a direction, degrees; `line` is a point of the dimension line.
+
+        shift : mm on paper by which its text stands off its middle, in that direction. sign : stands before the length.
+        """
+        dimension = self.layout.add_linear_dim(
             base=_pair(line),
             p1=_pair(start),
             p2=_pair(end),
             angle=angle,
+            text=f"{sign}<>",
             dimstyle=self.dimension_style,
             dxfattribs={"layer": layer.name},
-        ).render()
+        )
+        if shift:
+            dimension.shift_text(shift * self.scale, 0.0)
+        dimension.render()
 
 
 def _pair(point: Point) -> tuple[float, float]:

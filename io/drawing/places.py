@@ -1,4 +1,7 @@
-"""Where lettering goes in the elevation so that no two texts, and no text and steel, lie on each other. Model mm."""
+"""Where lettering goes in the elevation so that no two texts, and no text and steel, lie on each other. Model mm.
+
+Boxes are rows (6,), as in `spanwright.io.pictures.boxes`.
+"""
 
 from __future__ import annotations
 
@@ -8,13 +11,16 @@ from dataclasses import dataclass
 import numpy as np
 
 from spanwright.io.pictures.boxes import box, boxes_along, overlaps
-from spanwright.truss.arrays import FloatArray
+from spanwright.truss.arrays import BoolArray, FloatArray
 
-SHARES = (0.5, 0.46, 0.54, 0.42, 0.58, 0.38, 0.62, 0.34, 0.66, 0.3, 0.7, 0.25, 0.75, 0.2, 0.8)
+SHARES = np.array([0.5, 0.46, 0.54, 0.42, 0.58, 0.38, 0.62, 0.34, 0.66, 0.3, 0.7, 0.25, 0.75, 0.2, 0.8])
 """Places along a member that a label tries, in this order, as shares of its length."""
 
 TURNS = np.radians(np.arange(0.0, 360.0, 15.0))
 """Directions in which a label with a leader is tried."""
+
+Size = tuple[float, float]
+"""Length and height of a text with the room around it."""
 
 
 @dataclass(frozen=True, eq=False)
@@ -26,23 +32,46 @@ class Place:
 
 
 class Occupied:
-    """What stands on the drawing already, as boxes: steel and signs, and texts."""
+    """What stands on the drawing already: steel and signs; dimensions and texts, which no leader may cross."""
 
-    def __init__(self, steel: FloatArray) -> None:
+    def __init__(self, steel: FloatArray, dimensions: FloatArray) -> None:
         self.steel = steel
-        self.texts = np.zeros((0, 6))
+        self.texts = dimensions
 
-    def is_free(self, one: FloatArray) -> bool:
-        """Whether nothing overlaps a box."""
-        return not (overlaps(one, self.steel).any() or overlaps(one, self.texts).any())
+    def free(self, middles: FloatArray, angle: float, size: Size) -> BoolArray:
+        """Return (n,) True for boxes of one size and angle about (n, 2) middles that nothing overlaps."""
+        taken = np.vstack([self.steel, self.texts])
+        along, upward = np.array([np.cos(angle), np.sin(angle)]), np.array([-np.sin(angle), np.cos(angle)])
+        half = np.array(size) / 2.0
+        apart = taken[None, :, :2] - middles[:, None]
+        cos, sin = np.abs(taken[:, 2:4] @ along), np.abs(taken[:, 2:4] @ upward)
+        own, across = taken[:, 2:4], np.column_stack([-taken[:, 3], taken[:, 2]])
+        overlap = np.ones(apart.shape[:2], dtype=bool)
+        for distance, reach in (
+            (apart @ along, half[0] + taken[:, 4] * cos + taken[:, 5] * sin),
+            (apart @ upward, half[1] + taken[:, 4] * sin + taken[:, 5] * cos),
+            ((apart * own).sum(axis=2), taken[:, 4] + half[0] * cos + half[1] * sin),
+            ((apart * across).sum(axis=2), taken[:, 5] + half[0] * sin + half[1] * cos),
+        ):
+            overlap &= np.abs(distance) < reach
+        return np.asarray(~overlap.any(axis=1))
+
+    def first_free(self, middles: FloatArray, angle: float, size: Size) -> FloatArray | None:
+        """Return the first of (n, 2) middles about which a text finds room, and let it be taken; else None."""
+        free = self.free(middles, angle, size) if len(middles) else np.zeros(0, dtype=bool)
+        if not free.any():
+            return None
+        middle: FloatArray = middles[int(np.argmax(free))]
+        self.add(middle, angle, size)
+        return middle
 
     def crosses_text(self, start: FloatArray, end: FloatArray) -> bool:
         """Whether a line runs through a text."""
         return bool(overlaps(boxes_along(np.array([[start, end]]), 0.0)[0], self.texts).any())
 
-    def add(self, one: FloatArray) -> None:
+    def add(self, middle: FloatArray, angle: float, size: Size) -> None:
         """Let a box be taken by a text."""
-        self.texts = np.vstack([self.texts, one])
+        self.texts = np.vstack([self.texts, box(middle, angle, *size)])
 
 
 def readable(direction: FloatArray) -> float:
@@ -55,62 +84,53 @@ def readable(direction: FloatArray) -> float:
 
 
 def along_member(
-    ends: FloatArray, size: tuple[float, float], aways: Sequence[float], sides: Sequence[float], occupied: Occupied
+    ends: FloatArray, size: Size, aways: Sequence[float], sides: Sequence[float], occupied: Occupied
 ) -> Place | None:
     """Return the first free place for a text beside a member and along it, or None; the place is then taken.
 
-    ends : (2, 2). size : length and height of the text with its clearance. aways : distances of its near edge from the
-    member's line; sides : +1 the upper (of a post the left) side, -1 the other; both in the order to be tried.
+    ends : (2, 2). aways : distances of the text's near edge from the member's line; sides : +1 the upper (of a post the
+    left) side, -1 the other; both in the order to be tried.
     """
     span = ends[1] - ends[0]
     total = float(np.hypot(*span))
     angle = readable(span)
     upward = np.array([-np.sin(angle), np.cos(angle)])
+    shares = SHARES[np.minimum(SHARES, 1.0 - SHARES) * total >= size[0] / 2.0]
     for away in aways:
         for side in sides:
-            for share in SHARES:
-                if min(share, 1.0 - share) * total < size[0] / 2.0:
-                    continue
-                middle = ends[0] + share * span + side * (away + size[1] / 2.0) * upward
-                one = box(middle, angle, *size)
-                if occupied.is_free(one):
-                    occupied.add(one)
-                    return Place(middle, float(np.degrees(angle)))
+            middles = ends[0] + shares[:, None] * span + side * (away + size[1] / 2.0) * upward
+            middle = occupied.first_free(middles, angle, size)
+            if middle is not None:
+                return Place(middle, float(np.degrees(angle)))
     return None
 
 
 def near_point(
-    point: FloatArray,
-    size: tuple[float, float],
-    reaches: Iterable[float],
-    bearings: Sequence[float],
-    occupied: Occupied,
+    point: FloatArray, size: Size, reaches: Iterable[float], bearings: Sequence[float], occupied: Occupied
 ) -> Place | None:
     """Return the first free place for level text near a point, in one of these directions (degrees), or None."""
+    turns = np.radians(bearings)
+    towards = np.column_stack([np.cos(turns), np.sin(turns)])
+    extents = np.abs(towards) @ np.array(size) / 2.0
     for reach in reaches:
-        for bearing in np.radians(bearings):
-            towards = np.array([np.cos(bearing), np.sin(bearing)])
-            middle = point + towards * (reach + abs(towards) @ np.array(size) / 2.0)
-            one = box(middle, 0.0, *size)
-            if occupied.is_free(one):
-                occupied.add(one)
-                return Place(middle, 0.0)
+        middle = occupied.first_free(point + towards * (reach + extents)[:, None], 0.0, size)
+        if middle is not None:
+            return Place(middle, 0.0)
     return None
 
 
 def with_leader(
-    point: FloatArray, size: tuple[float, float], reaches: Iterable[float], occupied: Occupied
+    point: FloatArray, size: Size, reaches: Iterable[float], occupied: Occupied
 ) -> tuple[Place, FloatArray] | None:
     """Return the nearest free place for level text about a point and its leader (2, 2), text first, or None."""
+    towards = np.column_stack([np.cos(TURNS), np.sin(TURNS)])
+    half = np.array(size) / 2.0
     for reach in reaches:
-        for turn in TURNS:
-            middle = point + reach * np.array([np.cos(turn), np.sin(turn)])
-            if not occupied.is_free(box(middle, 0.0, *size)):
-                continue
-            half = np.array(size) / 2.0
+        middles = point + reach * towards
+        for middle in middles[occupied.free(middles, 0.0, size)]:
             feet = middle + half * np.array([[-1.0, 0.0], [1.0, 0.0], [0.0, -1.0], [0.0, 1.0]])
             start = feet[np.hypot(*(feet - point).T).argmin()]
             if not occupied.crosses_text(start, point):
-                occupied.add(box(middle, 0.0, *size))
+                occupied.add(middle, 0.0, size)
                 return Place(middle, 0.0), np.array([start, point])
     return None

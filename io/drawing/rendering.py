@@ -6,6 +6,7 @@ import io
 from collections import defaultdict
 from collections.abc import Iterable
 
+import numpy as np
 from ezdxf.addons.drawing.backend import Backend, BkPath2d, BkPoints2d, ImageData
 from ezdxf.addons.drawing.config import BackgroundPolicy, ColorPolicy, Configuration
 from ezdxf.addons.drawing.frontend import UniversalFrontend
@@ -13,7 +14,8 @@ from ezdxf.addons.drawing.pipeline import RenderPipeline2d
 from ezdxf.addons.drawing.properties import BackendProperties, RenderContext
 from ezdxf.addons.drawing.unified_text_renderer import UnifiedTextRenderer
 from ezdxf.document import Drawing
-from ezdxf.fonts import fonts
+from ezdxf.fonts.font_face import FontFace
+from ezdxf.fonts.fonts import AbstractFont
 from ezdxf.math import Vec2
 from ezdxf.npshapes import to_matplotlib_path
 from matplotlib.backends.backend_pdf import FigureCanvasPdf
@@ -21,10 +23,15 @@ from matplotlib.collections import LineCollection
 from matplotlib.figure import Figure
 from matplotlib.patches import PathPatch
 from matplotlib.path import Path
+from numpy.typing import ArrayLike
 
 from spanwright.io.drawing.lettering import sheet_font
+from spanwright.truss.arrays import FloatArray
 
-MM_PER_INCH, POINTS_PER_INCH = 25.4, 72.0
+POINTS_PER_INCH = 72.0
+POINTS_PER_MM = POINTS_PER_INCH / 25.4
+DECIMALS = 2
+"""Decimals of a point that are written: 0.004 mm."""
 FLATNESS = 0.02
 """mm on paper by which a curve may be drawn straight."""
 
@@ -32,7 +39,7 @@ FLATNESS = 0.02
 class OneFont(UnifiedTextRenderer):
     """Letters everything in the sheet's font, whatever fonts the machine has."""
 
-    def get_font(self, font_face: fonts.FontFace) -> fonts.AbstractFont:
+    def get_font(self, font_face: FontFace) -> AbstractFont:  # noqa: ARG002  # what the base class is given
         """Return the sheet's font."""
         return sheet_font()
 
@@ -40,7 +47,7 @@ class OneFont(UnifiedTextRenderer):
 class SheetPipeline(RenderPipeline2d):
     """The way from the drawing to the page, with the sheet's font and with line types in mm on paper.
 
-    ezdxf applies the pattern of a line where it is on paper already, so the scale of the viewport must not come in again.
+    ezdxf applies the pattern of a line where it is on paper already, so the viewport's scale must not come in again.
     """
 
     text_engine = OneFont()
@@ -77,11 +84,11 @@ class Page(Backend):
         """Take a curve."""
         self.lines[properties.lineweight].append([(point.x, point.y) for point in path.flattening(FLATNESS)])
 
-    def draw_filled_paths(self, paths: Iterable[BkPath2d], properties: BackendProperties) -> None:
+    def draw_filled_paths(self, paths: Iterable[BkPath2d], _: BackendProperties) -> None:
         """Take areas with holes, such as letters."""
         self.areas.append(to_matplotlib_path(paths))
 
-    def draw_filled_polygon(self, points: BkPoints2d, properties: BackendProperties) -> None:
+    def draw_filled_polygon(self, points: BkPoints2d, _: BackendProperties) -> None:
         """Take an area."""
         self.areas.append(Path([(point.x, point.y) for point in points.vertices()], closed=False))
 
@@ -108,17 +115,25 @@ def pdf_of(doc: Drawing, layout: str, title: str) -> bytes:
     return _set(page, sheet.dxf.paper_width, sheet.dxf.paper_height, title)
 
 
+def _in_points(places: ArrayLike) -> FloatArray:
+    """Return places on the page, mm, in points, so rounded that the file stays small."""
+    return np.round(np.asarray(places, dtype=float) * POINTS_PER_MM, DECIMALS)
+
+
 def _set(page: Page, width: float, height: float, title: str) -> bytes:
-    figure = Figure(figsize=(width / MM_PER_INCH, height / MM_PER_INCH))
-    axes = figure.add_axes((0.0, 0.0, 1.0, 1.0), xlim=(0.0, width), ylim=(0.0, height))
+    size = np.array([width, height]) * POINTS_PER_MM
+    figure = Figure(figsize=tuple(size / POINTS_PER_INCH), dpi=POINTS_PER_INCH)
+    axes = figure.add_axes((0.0, 0.0, 1.0, 1.0), xlim=(0.0, size[0]), ylim=(0.0, size[1]))
     axes.set_axis_off()
     for line_width, lines in sorted(page.lines.items()):
-        points = line_width / MM_PER_INCH * POINTS_PER_INCH
-        axes.add_collection(LineCollection(lines, linewidths=points, colors="black", capstyle="round"), autolim=False)
+        placed = [_in_points(line) for line in lines]
+        widths = line_width * POINTS_PER_MM
+        axes.add_collection(LineCollection(placed, linewidths=widths, colors="black", capstyle="round"), autolim=False)
     if page.areas:
-        patch = PathPatch(Path.make_compound_path(*page.areas), facecolor="black", linewidth=0.0)
-        axes.add_artist(patch)
+        whole = Path.make_compound_path(*page.areas)
+        axes.add_artist(PathPatch(Path(_in_points(whole.vertices), whole.codes), facecolor="black", linewidth=0.0))
     buffer = io.BytesIO()
     metadata = {"Creator": "Spanwright", "Producer": None, "CreationDate": None, "Title": title}
-    FigureCanvasPdf(figure).print_pdf(buffer, metadata=metadata)
+    FigureCanvasPdf(figure)
+    figure.savefig(buffer, format="pdf", metadata=metadata)
     return buffer.getvalue()

@@ -81,7 +81,7 @@ def _force(extreme: dict[str, Any]) -> str:
 
 
 def restraint_table(design: Design) -> Table:
-    """Return everything that holds the chords sideways, where, and the force it must resist; and what does not count."""
+    """Return everything that holds the chords sideways, where, and the force it must resist; and what holds nothing."""
     setting = design.setting
     restraint = setting.restraint
     forces = {force.part: force for force in design.restraint_forces}
@@ -89,7 +89,8 @@ def restraint_table(design: Design) -> Table:
     for name, points in design.held.items():
         for held in points:
             chords.setdefault(held.part, []).append(name)
-    why = {part.name: part.why_not for part in (*restraint.braces, *restraint.ties)}
+    why = {brace.name: brace.why_not for brace in restraint.braces}
+    why |= {tie.name: tie.why_not for tie in restraint.ties}
     xy = setting.truss.xy
     places = [(line.name, _at(design, line), line.x) for line in restraint.lines]
     places += [(f"{brace.name}", brace.at, float(xy[brace.joint, 0])) for brace in restraint.braces]
@@ -103,22 +104,25 @@ def restraint_table(design: Design) -> Table:
             at,
             f"{x - start:.0f}",
             _chords(chords.get(name, [])),
-            f"{forces[name].force / 1e3:.1f}" if name in forces else _loose(why.get(name, "")),
+            f"{forces[name].force / 1e3:.1f}" if name in forces else NONE,
         )
         for name, at, x in places
     )
     standard, project = setting.standard, setting.project
-    remarks = (
+    remarks: tuple[str, ...] = (
         f"Lines are anchored by {project.restraint.anchored_by}. Forces act to either side: "
-        f"{standard.restraint_share:.1%} of the greatest compression beside them ({standard.restraint_clause}). The anchor "
-        f"takes {kilonewtons(design.anchor_force)} from {project.quantity} trusses together.",
+        f"{standard.restraint_share:.1%} of the greatest compression beside them ({standard.restraint_clause}). The "
+        f"anchor takes {kilonewtons(design.anchor_force)} from {project.quantity} trusses together.",
     )
+    loose = "; ".join(f"{name}: {reason}" for name, reason in why.items() if reason)
+    if loose:
+        remarks = (*remarks, f"What holds nothing: {loose}.")
     heads = ("Restraint", "At", "x from left bearing, mm", "Holds", "Force, kN")
     return Table("RESTRAINT", heads, rows, frozenset({2, 4}), remarks)
 
 
 def _chords(names: list[str]) -> str:
-    return "both chords" if len(names) > 1 else f"{names[0]} chord" if names else NONE
+    return "both chords" if len(names) > 1 else f"{names[0]} chord" if names else "nothing"
 
 
 def _at(design: Design, line: PurlinLine) -> str:
@@ -128,10 +132,6 @@ def _at(design: Design, line: PurlinLine) -> str:
     if line.bar is not None:
         return design.setting.truss.bar_names[line.bar]
     return "overhang"
-
-
-def _loose(why: str) -> str:
-    return f"does not count: {why}" if why else "does not count"
 
 
 def bearing_table(design: Design) -> Table:

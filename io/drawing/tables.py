@@ -2,10 +2,10 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from functools import cached_property
 
-from spanwright.io.drawing.lettering import LARGE, STEP, TEXT, widest, width_of, wrapped
+from spanwright.io.drawing.lettering import LARGE, STEP, TEXT, cut_to, widest, width_of, wrapped
 from spanwright.io.drawing.pen import Pen
 from spanwright.io.drawing.standards import TABLE_FRAMES, TABLES
 
@@ -15,6 +15,8 @@ PAD = 1.2
 """Left free at either side of a cell's text."""
 TITLE_ROOM = LARGE + 2.5
 """Height of the title above a table."""
+WIDEST_CELL = 100.0
+"""A longer text is cut short."""
 BETWEEN = 4.0
 """Between the strips of a table that is drawn in several."""
 
@@ -29,12 +31,24 @@ class Table:
     right: frozenset[int] = frozenset()
     remarks: tuple[str, ...] = ()
 
+    def limited(self, most: int | None) -> Table:
+        """Return the table with so many rows, and the number of those left out as a remark."""
+        if most is None or len(self.rows) <= most:
+            return self
+        left_out = f"{len(self.rows) - most} more rows: see schedule.xlsx and results.json."
+        return replace(self, rows=self.rows[:most], remarks=(*self.remarks, left_out))
+
+    @cached_property
+    def cells(self) -> tuple[tuple[str, ...], ...]:
+        """The rows as they are lettered."""
+        return tuple(tuple(cut_to(cell, WIDEST_CELL) for cell in row) for row in self.rows)
+
     @cached_property
     def widths(self) -> tuple[float, ...]:
         """Width of each column."""
         found = []
         for at, head in enumerate(self.heads):
-            cells = widest([row[at] for row in self.rows])
+            cells = widest([row[at] for row in self.cells])
             head_room = max(widest(head.split()), 0.6 * width_of(head))
             found.append(max(cells, head_room) + 2.0 * PAD)
         return tuple(found)
@@ -84,7 +98,7 @@ class DrawnTable:
         pen.text(TABLES, (left, top - LARGE), self.table.title, LARGE)
         under = top - TITLE_ROOM
         for strip in range(self.strips):
-            rows = self.table.rows[strip * self._per_strip : (strip + 1) * self._per_strip]
+            rows = self.table.cells[strip * self._per_strip : (strip + 1) * self._per_strip]
             x = left + strip * (sum(self.table.widths) + BETWEEN)
             if rows:
                 self._draw_strip(pen, x, under, rows)

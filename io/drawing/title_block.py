@@ -62,20 +62,43 @@ def _rows(design: Design, scales: str, paper: str) -> list[tuple[tuple[Field, ..
         return width, caption, given.get(key, "")
 
     origin = f"{project.source_name or 'project'}, input {input_hash(project.source)}, Spanwright {__version__}"
+    mark = (45.0, "Mark, number off", f"{project.mark}, {project.quantity} off")
     return [
-        ((field(45.0, "Responsible dept", "department"), field(45.0, "Technical reference", "reference"),
-          field(45.0, "Created by", "creator"), field(45.0, "Checked by", "checker")), ROW),
-        ((field(45.0, "Approved by", "approver"), (45.0, "Document type", DOCUMENT),
-          field(45.0, "Document status", "status"), (45.0, "Mark, number off", f"{project.mark}, {project.quantity} off")), ROW),
+        (
+            (
+                field(45.0, "Responsible dept", "department"),
+                field(45.0, "Technical reference", "reference"),
+                field(45.0, "Created by", "creator"),
+                field(45.0, "Checked by", "checker"),
+            ),
+            ROW,
+        ),
+        (
+            (
+                field(45.0, "Approved by", "approver"),
+                (45.0, "Document type", DOCUMENT),
+                field(45.0, "Document status", "status"),
+                mark,
+            ),
+            ROW,
+        ),
         ((field(90.0, "Legal owner", "owner"), field(90.0, "Client", "client")), ROW),
         ((field(180.0, "Project", "project"),), ROW),
         (((180.0, "Title", project.title),), TITLE_ROW),
         ((field(180.0, "Supplementary title", "supplementary_title"),), ROW),
-        ((field(62.0, "Identification number", "number"), field(16.0, "Rev.", "revision"),
-          field(30.0, "Date of issue", "date"), (18.0, "Sheet", "1/1"), field(16.0, "Lang.", "language"),
-          (38.0, "Scale", scales)), ROW),
+        (
+            (
+                field(62.0, "Identification number", "number"),
+                field(16.0, "Rev.", "revision"),
+                field(30.0, "Date of issue", "date"),
+                (18.0, "Sheet", "1/1"),
+                field(16.0, "Lang.", "language"),
+                (38.0, "Scale", scales),
+            ),
+            ROW,
+        ),
         (((38.0, "Units", "mm"), (24.0, "Paper", paper), (118.0, "Made from", origin)), ROW),
-    ]  # fmt: skip
+    ]
 
 
 def _field(pen: Pen, left: float, bottom: float, width: float, high: float, caption: str, value: str) -> None:
