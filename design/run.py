@@ -15,6 +15,7 @@ from spanwright.design.analysis import Analysis, largest_difference
 from spanwright.design.certificate import next_lighter
 from spanwright.design.demand import of_bars
 from spanwright.design.groups import form_groups, sections_for
+from spanwright.design.lightening import lightened
 from spanwright.design.missing import if_missing
 from spanwright.design.pieces import pieces_of
 from spanwright.design.project import Project
@@ -46,14 +47,14 @@ def design(project: Project) -> Design:
     """
     setting = prepare(project)
     floors = [0] * len(setting.groups)
-    while True:  # a group never returns to a lighter section, so the loop ends
+    while True:  # upwards: a group never returns to a lighter section, so the loop ends
         analysis, wanted, choices = size(setting, floors)
         chosen = [choice.index for choice in choices]
         heavier = stiffened(setting, analysis, choices) if chosen == floors else chosen
         if heavier is None:
             break
         floors = heavier
-    return finish(setting, analysis, wanted, choices)
+    return finish(setting, *lightened(setting, (analysis, wanted, choices)))
 
 
 def check(project: Project) -> Design:

@@ -65,9 +65,16 @@ def choose(
     worst = np.where(fits[floor:], worst, np.inf)
     passing = np.flatnonzero(worst <= 1.0)
     index = floor + int(passing[0] if passing.size else np.argmin(worst))
+    return settle(group, candidates, index, standard, demand, fits)
+
+
+def settle(
+    group: Group, candidates: Candidates, index: int, standard: Standard, demand: Demand, joinable: BoolArray
+) -> Choice:
+    """Return the choice of one candidate, with its checks."""
     checks = standard.checks(candidates.take([index]), demand)
-    passes = bool(worst_ratio(checks).max() <= 1.0) and bool(fits[index])
-    return Choice(group, candidates, index, checks, passes, fits)
+    passes = bool(worst_ratio(checks).max() <= 1.0) and bool(joinable[index])
+    return Choice(group, candidates, index, checks, passes, joinable)
 
 
 def fitting(candidates: Candidates, chords: list[Candidates]) -> BoolArray:

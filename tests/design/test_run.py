@@ -75,6 +75,17 @@ def test_no_lighter_candidate_passes_beside_the_others(done: Design) -> None:
         assert not check(with_sections(done.setting.project, sections)).passes
 
 
+def test_a_group_that_uplift_made_heavy_in_the_first_round_comes_down_again() -> None:
+    """Reviewed: with no knee braces the diagonals of the pratt store stayed a size too heavy for its final mass."""
+    project = demo("pratt_store")
+    heavy = design(replace(project, restraint=replace(project.restraint, knee_braces="none")))
+    assert heavy.passes
+    for choice in heavy.choices:
+        for index in range(max(0, choice.index - 12), choice.index):
+            sections = {**sections_of(heavy), choice.group.name: choice.candidates.names[index]}
+            assert not check(with_sections(heavy.setting.project, sections)).passes
+
+
 def test_bar_forces_agree_with_a_solution_that_knows_no_stiffness(done: Design) -> None:
     greatest = float(np.abs(done.analysis.case_forces).max())
     assert done.second_difference <= TOLERANCES.second_solution * greatest
