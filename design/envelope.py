@@ -8,6 +8,7 @@ import numpy as np
 
 from spanwright.design.standard import Demand
 from spanwright.truss.arrays import FloatArray
+from spanwright.truss.tolerances import TOLERANCES
 
 
 @dataclass(frozen=True)
@@ -33,11 +34,18 @@ class BarEnvelope:
 
 
 def envelope(wanted: Demand) -> tuple[BarEnvelope, ...]:
-    """Return the envelope of every bar, in the truss's order."""
-    effects = (wanted.axial, -wanted.axial, wanted.sag, wanted.hog)
-    return tuple(BarEnvelope(bar, *(_extreme(effect[bar]) for effect in effects)) for bar in range(len(wanted.bars)))
+    """Return the envelope of every bar, in the truss's order; effects that are zero but for rounding count as none."""
+    force, moment = (
+        TOLERANCES.tiny_force * float(np.abs(effects).max(initial=0.0))
+        for effects in (wanted.axial, wanted.end_moments)
+    )
+    effects = ((wanted.axial, force), (-wanted.axial, force), (wanted.sag, moment), (wanted.hog, moment))
+    return tuple(
+        BarEnvelope(bar, *(_extreme(effect[bar], least) for effect, least in effects))
+        for bar in range(len(wanted.bars))
+    )
 
 
-def _extreme(values: FloatArray) -> Extreme:
+def _extreme(values: FloatArray, least: float) -> Extreme:
     at = int(np.argmax(values))
-    return Extreme(float(values[at]), at) if values[at] > 0.0 else Extreme(0.0, -1)
+    return Extreme(float(values[at]), at) if values[at] > least else Extreme(0.0, -1)

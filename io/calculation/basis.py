@@ -11,6 +11,7 @@ from spanwright.design.result import Design
 from spanwright.design.steels import steel
 from spanwright.io.calculation.blocks import Column, Fields, Paragraph, Points, Section, Table
 from spanwright.io.calculation.figures import fixed
+from spanwright.io.files import input_hash
 from spanwright.io.text import kilograms, kilonewtons, metres, rounded_up
 from spanwright.truss.inputs import FormInput
 
@@ -121,6 +122,7 @@ def basis(design: Design) -> Section:
             f"{truss.form}{lean}, span {metres(truss.span)}{_pitch(design)}, {len(truss.bar_names)} members, "
             f"{project.quantity} off, {metres(project.spacing)} apart{carried}",
         ),
+        ("Input", f"{project.source_name or 'no file'}, mark {input_hash(project.source)}"),
         ("Member standard", setting.standard.name),
         ("Loading standard", f"{project.actions}; load factors in the table of combinations"),
         ("Modulus of elasticity", f"{fixed(setting.standard.modulus, 0)} MPa"),

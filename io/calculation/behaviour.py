@@ -49,6 +49,6 @@ def deflection(design: Design) -> Section:
         "Deflection, sliding end and camber",
         (
             Table(columns, rows, note=note),
-            Fields((("Greatest movement of the sliding end", sliding), ("Camber", camber))),
+            Fields((("Sliding end moves", sliding), ("Camber", camber))),
         ),
     )

@@ -111,8 +111,11 @@ def _check(
     governs: str,
 ) -> CheckWork:
     known = {name: line.value for name, line in common.items()}
+    demand = float(check.demand[0, place])
     seen = [rule for rule in rules if printed.setdefault(rule, check.name) != check.name]
-    taken = [(_decisive(rule, float(check.demand[0, place])), printed[rule]) for rule in seen]
+    needed = {name for rule in rules if rule not in seen for name in _used(rule)}
+    results = [(_decisive(rule, demand), printed[rule]) for rule in seen]
+    taken = [(line, under) for line, under in results if line.symbol in needed or line.value == demand]
     known |= {line.symbol: line.value for line, _ in taken}
     works = [_rule(rule, known) for rule in rules if rule not in seen]
     at = int(check.combination[0, place])
@@ -128,6 +131,11 @@ def _check(
     )
 
 
+def _used(rule: _Explained) -> set[str]:
+    """Return the symbols that a rule's formulas use."""
+    return {name for line in rule.steps if line.formula for name in symbols_in(line.formula)}
+
+
 def _decisive(rule: _Explained, demand: float) -> Line:
     """Return the line of a rule that is a check's demand, or else its result."""
     return next((line for line in reversed(rule.steps) if line.value == demand), rule.steps[-1])
@@ -135,7 +143,7 @@ def _decisive(rule: _Explained, demand: float) -> Line:
 
 def _rule(rule: _Explained, known: dict[str, float]) -> RuleWork:
     """Work one rule; `known`, the values printed in this check so far, grows by its own."""
-    needed = {name for line in rule.steps if line.formula for name in symbols_in(line.formula)}
+    needed = _used(rule)
     fresh = tuple(line for line in rule.given if line.symbol in needed and known.get(line.symbol) != line.value)
     known |= {line.symbol: line.value for line in fresh}
     steps = []

