@@ -2,31 +2,87 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable
+from dataclasses import dataclass
 from pathlib import Path
 
 from spanwright.design.result import Design
 from spanwright.io.files import make_folder, remove
 from spanwright.io.results.document import write_results
+from spanwright.truss.errors import OutputError
 
-SCHEDULES = ("schedule.csv", "schedule.xlsx")
+
+@dataclass(frozen=True)
+class Output:
+    """One kind of output: its file names (or patterns), how it is written, and whether it is due now.
+
+    What is not due, or fails, leaves no file of an earlier run behind.
+    """
+
+    names: tuple[str, ...]
+    write: Callable[[Design, Path], object]
+    due: bool
 
 
-def write_all(design: Design, folder: Path | str, *, pictures: bool = True) -> None:
-    """Write results, schedules (where every member passes) and pictures into a folder.
+def write_all(
+    design: Design, folder: Path | str, *, pictures: bool = True, every_member: bool = False
+) -> tuple[OutputError, ...]:
+    """Write pictures, schedules, drawing, calculation and results into a folder.
 
-    A schedule that an earlier run left is removed where nothing may be cut now. Raises OutputError.
+    Schedules and drawing are written only where every member passes. pictures : leave them out with False.
+    every_member : work all members in full in the calculation.
+    Returns what failed; everything else is written all the same. Raises OutputError where results.json fails.
     """
     folder = Path(folder)
     make_folder(folder)
-    if pictures:
-        from spanwright.io.pictures import write_pictures
-
-        write_pictures(design, folder)
-    if design.pieces:
-        from spanwright.io.schedule import write_schedules
-
-        write_schedules(design, folder)
-    else:
-        for name in SCHEDULES:
-            remove(folder / name)
+    failures = []
+    for output in _outputs(design, pictures=pictures, every_member=every_member):
+        try:
+            if output.due:
+                output.write(design, folder)
+        except OutputError as error:
+            failures.append(error)
+        else:
+            if output.due:
+                continue
+        for pattern in output.names:
+            for path in folder.glob(pattern):
+                remove(path)
     write_results(design, folder)
+    return tuple(failures)
+
+
+def _outputs(design: Design, *, pictures: bool, every_member: bool) -> tuple[Output, ...]:
+    cut = bool(design.pieces)
+    return (
+        Output(("utilisation.*", "restraint.*", "wind_*.*"), _pictures, pictures),
+        Output(("schedule.*",), _schedules, cut),
+        Output(("drawing.*",), _drawing, cut),
+        Output(
+            ("calculation.pdf",), lambda design, folder: _calculation(design, folder, every_member=every_member), True
+        ),
+    )
+
+
+def _pictures(design: Design, folder: Path) -> None:
+    from spanwright.io.pictures import write_pictures
+
+    write_pictures(design, folder)
+
+
+def _schedules(design: Design, folder: Path) -> None:
+    from spanwright.io.schedule import write_schedules
+
+    write_schedules(design, folder)
+
+
+def _drawing(design: Design, folder: Path) -> None:
+    from spanwright.io.drawing.document import write_drawing
+
+    write_drawing(design, folder)
+
+
+def _calculation(design: Design, folder: Path, *, every_member: bool) -> None:
+    from spanwright.io.calculation.document import write_calculation
+
+    write_calculation(design, folder, every_member=every_member)

@@ -12,15 +12,23 @@ from spanwright.design.cautions import SHORT_CAUTION
 from spanwright.design.certificate import NextLighter
 from spanwright.design.result import Design
 from spanwright.io.text import kilograms, kilonewtons, metres, rounded_up
+from spanwright.truss.errors import OutputError
 
 MISSING_SHOWN = 3
 """Rows of what the roof cannot lose that fit on the screen; the rest is in the files."""
 
 
-def print_summary(design: Design, console: Console | None = None, *, written_to: Path | None = None) -> None:
+def print_summary(
+    design: Design,
+    console: Console | None = None,
+    *,
+    written_to: Path | None = None,
+    failures: tuple[OutputError, ...] = (),
+) -> None:
     """Print mass, deflection, each group's section with what governs it, what the roof cannot lose, and warnings.
 
     written_to : the folder that holds the files of this design, if any were written.
+    failures : outputs that could not be written.
     """
     out = console or Console(highlight=False)
     setting = design.setting
@@ -50,6 +58,8 @@ def print_summary(design: Design, console: Console | None = None, *, written_to:
     out.print(f"[bold]{verdict}[/bold]   greatest utilisation {rounded_up(float(design.utilisation.max()))}")
     if written_to is not None:
         out.print(f"written to {escape(str(written_to))}" + ("" if design.pieces else "; no schedule and no drawing"))
+    for failure in failures:
+        out.print(f"[bold]not written[/bold]: {escape(str(failure))}")
     out.print(f"[dim]{SHORT_CAUTION}[/dim]")
 
 

@@ -19,9 +19,12 @@ members the lightest section that passes every check. Prints a summary on one sc
 project file (roof.out/ for roof.toml):
 
   results.json                  everything, for machines
+  calculation.pdf               loads, forces, lengths and members worked line by line, for the checking engineer
+  drawing.dxf, drawing.pdf      elevation, sections and lists on a sheet, for the drawing office
   schedule.csv, schedule.xlsx   members and parts, for the workshop
   utilisation.png, .svg         the truss coloured by utilisation
   restraint.png, .svg           both chords with what holds them
+  wind_zones, wind_pressures    the roof in plan and the truss under wind, where loads follow from [site]
 
 A group that names one section ("2L 80x80x6") instead of a family ("2L") is checked.
 
@@ -30,7 +33,7 @@ examples:
   spanwright design roof.toml
   spanwright design roof.toml --out results --no-pictures
 
-exit status: 0 every member passes; 1 something fails; 2 the input is wrong
+exit status: 0 every member passes; 1 something fails or an output cannot be written; 2 the input is wrong
 """
 
 
@@ -76,9 +79,9 @@ def carry_out(arguments: Namespace, station: Callable[[Project], Design]) -> int
         except SpanwrightError as error:
             raise error.located(file=str(path)) from error
         folder = base / name.replace(" ", "-")
-        write_all(result, folder, pictures=not arguments.no_pictures)
-        print_summary(result, written_to=folder)
-        status = max(status, 0 if result.passes else 1)
+        failures = write_all(result, folder, pictures=not arguments.no_pictures, every_member=arguments.every_member)
+        print_summary(result, written_to=folder, failures=failures)
+        status = max(status, 0 if result.passes and not failures else 1)
     return status
 
 
