@@ -33,6 +33,9 @@ WALL = 5.0
 ARROW_STEP = 4.5
 """mm between arrows along the roof."""
 
+LEAST_ARROW = 0.4
+"""mm: a shorter arrow would be a blot."""
+
 
 @dataclass(frozen=True, eq=False)
 class _Board:
@@ -128,8 +131,9 @@ def _draw_block(sheet: Sheet, ends: FloatArray, height: float, pressure: float) 
     sheet.areas([np.array([ends[0], ends[1], ends[1] + off, ends[0] + off])], PALE, edge=SOFT, width=HAIR, order=2.0)
     count = max(1, round(length / ARROW_STEP))
     feet = [ends[0] + along * (number + 0.5) / count for number in range(count)]
-    arrows = [_arrow(foot, foot + off) if height < 0.0 else _arrow(foot + off, foot) for foot in feet]
-    sheet.lines([path for path in arrows if abs(height) > 0.4], HAIR, order=2.5)
+    if abs(height) > LEAST_ARROW:
+        arrows = [_arrow(foot, foot + off) if height < 0.0 else _arrow(foot + off, foot) for foot in feet]
+        sheet.lines(arrows, HAIR, order=2.5)
     middle = (ends[0] + ends[1]) / 2.0 + off + 0.6 * outward
     if length > 3.0:
         sheet.text(middle[0], middle[1], signed(pressure * 1e3), TINY, across="center")
@@ -143,7 +147,7 @@ def _draw_wall(sheet: Sheet, view: View, bearing: FloatArray, pressure: float, h
     sheet.areas([np.array([head, foot, foot + off, head + off])], PALE, edge=SOFT, width=HAIR, order=2.0)
     sheet.lines([np.array([head, foot])], THIN, order=3.0)
     middle = (head + foot) / 2.0
-    if abs(height) > 0.4:
+    if abs(height) > LEAST_ARROW:
         sheet.lines([_arrow(middle + off, middle) if height > 0.0 else _arrow(middle, middle + off)], HAIR, order=2.5)
     place = middle + off + np.array([0.6 * outward, -height_of(TINY) / 2.0])
     side: Across = "left" if outward > 0 else "right"
