@@ -8,6 +8,8 @@ import pytest
 from pictured import PAGES, ROOFS, drawn, laid, lines, outlines, texts, words
 from shapely import STRtree, box
 
+from spanwright.io.pictures.style import DENOMINATORS
+
 EVERY_PAGE = pytest.mark.parametrize("page", PAGES)
 EVERY_ROOF = pytest.mark.parametrize("roof", ROOFS)
 
@@ -39,6 +41,7 @@ def test_the_scale_that_is_stated_is_true(page: str, roof: str) -> None:
     """The bars are found on the sheet at their length over the stated scale, level and upright alike."""
     sheet, truss = laid(page, roof), drawn(roof).setting.truss
     scale = next(int(match[1]) for text in words(sheet) if (match := re.fullmatch(r"1:(\d+) on A4", text)))
+    assert scale in DENOMINATORS
     spans = [points[1] - points[0] for points, *_ in lines(sheet) if points.shape == (2, 2)]
     for vector in truss.vectors:
         assert any(np.allclose(span, vector / scale, atol=1e-6) for span in spans)

@@ -1,6 +1,7 @@
 """The picture `utilisation`: every value there and in its place, states told apart by more than colour."""
 
 import math
+from functools import cache
 from pathlib import Path
 from xml.etree import ElementTree
 
@@ -11,9 +12,8 @@ from pictured import ROOFS, drawn, fill_of, laid, lines, lines_on, outlines, wor
 from shapely import LineString
 
 from spanwright.design.result import Design
-from spanwright.io.pictures import write_pictures
 from spanwright.io.pictures.page import HEADING_BOTTOM
-from spanwright.io.pictures.sheet import Sheet
+from spanwright.io.pictures.sheet import Sheet, drawing_board
 from spanwright.io.pictures.state import MemberState, group_states, letters_from, member_states
 from spanwright.io.pictures.style import BANDS, INK, OVER, PAPER, Pen, band_of
 from spanwright.io.pictures.symbols import purlin_outlines
@@ -27,24 +27,27 @@ def states_of(design: Design) -> dict[str, MemberState]:
     return {state.name: state for state in member_states(design, group_states(design))}
 
 
-def segment_of(sheet: Sheet, design: Design, bar: int) -> FloatArray:
-    """Return the (2, 2) line on the sheet that is parallel to a bar and in its place among the chords."""
-    truss = design.setting.truss
-    drawn_lines = np.array([points for points, *_ in lines(sheet) if points.shape == (2, 2)])
-    first = truss.bottom.bars[0]
-    whole = truss.xy[truss.bottom.joints[-1]] - truss.xy[truss.bottom.joints[0]]
+@cache
+def segments_of(roof: str) -> FloatArray:
+    """Return (b, 2, 2) where the bars lie on the sheet, found from the lines drawn as long as the bottom chord's."""
+    sheet, truss = laid("utilisation", roof), drawn(roof).setting.truss
     scale = next(float(text[2:].split()[0]) for text in words(sheet) if text.startswith("1:"))
-    starts = drawn_lines[np.isclose(drawn_lines[:, 1] - drawn_lines[:, 0], truss.vectors[first] / scale).all(axis=1), 0]
-    ends = drawn_lines[:, 1]
-    origin = next(start for start in starts if np.isclose(ends, start + whole / scale).all(axis=1).any())
-    placed: FloatArray = origin + (truss.xy[truss.ends[bar]] - truss.xy[truss.bottom.joints[0]]) / scale
+    found = np.array([points for points, *_ in lines(sheet) if points.shape == (2, 2)])
+    left, right = truss.xy[[truss.bottom.joints[0], truss.bottom.joints[-1]]]
+    first = truss.vectors[truss.bottom.bars[0]] / scale
+    starts = found[np.isclose(found[:, 1] - found[:, 0], first).all(axis=1), 0]
+    origin = next(
+        start for start in starts if np.isclose(found[:, 1], start + (right - left) / scale).all(axis=1).any()
+    )
+    placed: FloatArray = origin + (truss.xy[truss.ends] - left) / scale
     return placed
 
 
 @EVERY_ROOF
 def test_every_members_value_is_text_in_the_svg(roof: str, tmp_path: Path) -> None:
     design = drawn(roof)
-    write_pictures(design, tmp_path)
+    with drawing_board():
+        laid("utilisation", roof).write(tmp_path, "utilisation")
     groups = ElementTree.parse(tmp_path / "utilisation.svg").getroot().iter("{http://www.w3.org/2000/svg}g")
     marked = {group.get("id"): "".join(group.itertext()).strip() for group in groups}
     for bar, name in enumerate(design.setting.truss.bar_names):
@@ -58,12 +61,12 @@ def test_values_stand_beside_members_and_on_none(roof: str) -> None:
     """Letters of the key may stand on their own member where even they find no room beside it."""
     sheet, design = laid("utilisation", roof), drawn(roof)
     bars = range(len(design.setting.truss.bar_names))
-    middle = {bar: LineString(segment_of(sheet, design, bar)) for bar in bars}
+    middle = [LineString(segment) for segment in segments_of(roof)]
     shapes = [(text, shape) for text, shape in outlines(sheet) if str(text.get_gid()).startswith("value-")]
     assert len(shapes) >= 0.9 * len(bars)
     for text, shape in shapes:
         if len(text.get_text()) > 2:
-            assert not any(line.intersects(shape) for line in middle.values()), text.get_text()
+            assert not any(line.intersects(shape) for line in middle), text.get_text()
             name = str(text.get_gid()).removeprefix("value-")
             nearest = min(bars, key=lambda bar: middle[bar].distance(shape.centroid))
             assert design.setting.truss.bar_names[nearest] == name
@@ -102,7 +105,7 @@ def test_a_member_over_one_is_barred_in_black_and_white_and_no_other_is() -> Non
     assert 0 < np.count_nonzero(design.utilisation > 1.0) < len(design.utilisation)
     colours = {band.colour for band in BANDS}
     for bar, utilisation in enumerate(design.utilisation):
-        styles = lines_on(sheet, segment_of(sheet, design, bar))
+        styles = lines_on(sheet, segments_of("loose")[bar])
         barred = any(colour == PAPER and dashed for _, colour, dashed in styles)
         assert barred == (utilisation > 1.0)
         assert barred != any(colour in colours for _, colour, _ in styles)
@@ -121,7 +124,7 @@ def test_its_value_is_white_on_black() -> None:
 def test_colours_go_by_band() -> None:
     design, sheet = drawn("howe"), laid("utilisation", "howe")
     for bar, utilisation in enumerate(design.utilisation):
-        colours = {colour for _, colour, _ in lines_on(sheet, segment_of(sheet, design, bar))}
+        colours = {colour for _, colour, _ in lines_on(sheet, segments_of("howe")[bar])}
         assert colours == {INK, BANDS[band_of(float(utilisation))].colour}
 
 
@@ -133,7 +136,7 @@ def test_compression_is_drawn_stouter_than_tension_and_says_so() -> None:
         governing = design.governing_of(choice, place).check
         assert state.sign == ("T" if governing.startswith("tension") else "C"), name
         assert state.words.endswith(f" {state.sign}")
-        widths[state.sign].add(min(width for width, *_ in lines_on(sheet, segment_of(sheet, design, bar))))
+        widths[state.sign].add(min(width for width, *_ in lines_on(sheet, segments_of("howe")[bar])))
     assert min(widths["C"]) > 1.5 * max(widths["T"])
 
 
@@ -142,7 +145,7 @@ def test_members_that_fail_a_limit_are_hatched_and_no_others() -> None:
     assert 0 < np.count_nonzero(design.limit_failed) < len(design.limit_failed)
     strokes = [points for points, _, colour, dashed in lines(sheet) if colour == INK and not dashed]
     for bar, failed in enumerate(design.limit_failed):
-        segment = segment_of(sheet, design, bar)
+        segment = segments_of("limits")[bar]
         span = segment[1] - segment[0]
         crossing = [
             stroke
@@ -158,7 +161,7 @@ def test_members_that_fail_a_limit_are_hatched_and_no_others() -> None:
 def test_loose_purlins_are_open_and_counted_ones_filled() -> None:
     design, sheet = drawn("loose"), laid("utilisation", "loose")
     truss, restraint = design.setting.truss, design.setting.restraint
-    left, right = (segment_of(sheet, design, bar) for bar in (truss.bottom.bars[0], truss.bottom.bars[-1]))
+    left, right = (segments_of("loose")[bar] for bar in (truss.bottom.bars[0], truss.bottom.bars[-1]))
     scale = truss.span / (right[1, 0] - left[0, 0])
     fills = {}
     for line in restraint.lines:
@@ -195,8 +198,8 @@ def test_the_table_calls_out_what_governs_each_group() -> None:
 
 
 def test_the_table_lies_below_the_truss() -> None:
-    design, sheet = drawn("steep"), laid("utilisation", "steep")
-    points = np.array([segment_of(sheet, design, bar) for bar in range(len(design.utilisation))])
+    sheet = laid("utilisation", "steep")
+    points = segments_of("steep")
     headings = [text for text in sheet.figure.artists if getattr(text, "get_text", str)() == "governing check"]
     assert headings[0].get_position()[1] + 20.0 < points[..., 1].min()  # type: ignore[attr-defined]
     assert points[..., 1].max() < HEADING_BOTTOM
