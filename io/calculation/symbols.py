@@ -43,8 +43,8 @@ SITE = (
 BASES = {"KL": "K L", "lam": "lambda"}
 """What stands before a subscript, where it is neither one letter nor a Greek name."""
 
-BRACED = {"r_02", "cos2", "c", "s"}
-"""Symbols that need brackets where something is raised or multiplied onto them."""
+BRACED = {"KL", "KL_out", "r_02", "cos2", "c", "s"}
+"""Symbols that need brackets where they are raised to a power."""
 
 
 def symbol(name: str) -> str:

@@ -56,8 +56,7 @@ def typeset(data: dict[str, Any]) -> bytes:
                 font_paths=fonts,
                 sys_inputs=inputs,
                 ignore_system_fonts=True,
-                pdf_standards="a-2u" if archive else None,
-                pdf_tags=False,
+                pdf_standards="a-2b" if archive else None,
             )
 
         try:

@@ -120,6 +120,7 @@ def test_a_rule_that_two_checks_share_is_worked_once() -> None:
             'cases(b & quad "if" a > "2", d & quad "if" a > "1", "0" & quad "else")',
         ),
         ("M_1*r_02**2", 'M_"1" thin (overline(r)_0^2)^("2")'),
+        ("E/KL**2", 'frac(E, (K L)^("2"))'),
         ("ratio + limit", '"ratio" + "limit"'),
     ],
 )
