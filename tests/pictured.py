@@ -135,29 +135,30 @@ def _outlines(sheet: Sheet) -> Iterator[tuple[Text, Polygon]]:
         yield text, affinity.scale(turned, 1 / PIXELS_PER_MM, 1 / PIXELS_PER_MM, origin=(0.0, 0.0))
 
 
-def lines(sheet: Sheet) -> Iterator[tuple[FloatArray, float, str, bool]]:
-    """Yield every line drawn: its points, mm; its width, mm; its colour; whether it is dashed."""
+def lines(sheet: Sheet) -> Iterator[tuple[FloatArray, float, str]]:
+    """Yield every line drawn: its points, mm; its width, mm; its colour."""
     for artist in sheet.figure.artists:
         if isinstance(artist, LineCollection):
-            width, colour, style = _style(artist)
+            widths: Any = artist.get_linewidth()
+            colours: Any = artist.get_color()
+            styles: Any = artist.get_linestyle()
+            assert styles == [(0, None)], "dashes are left to the reader of the SVG"
             for path in artist.get_paths():
-                yield np.asarray(path.vertices), width, colour, style
+                yield np.asarray(path.vertices), float(widths[0]) * 25.4 / 72.0, to_hex(colours[0])
 
 
-def _style(artist: LineCollection) -> tuple[float, str, bool]:
-    widths: Any = artist.get_linewidth()
-    colours: Any = artist.get_color()
-    styles: Any = artist.get_linestyle()
-    return float(widths[0]) * 25.4 / 72.0, to_hex(colours[0]), styles[0][1] is not None
-
-
-def lines_on(sheet: Sheet, segment: FloatArray) -> list[tuple[float, str, bool]]:
-    """Return width, colour and dashes of the lines drawn from end to end of a segment, mm."""
-    return [
-        (width, colour, dashed)
-        for points, width, colour, dashed in lines(sheet)
-        if points.shape == (2, 2) and np.allclose(points, segment)
-    ]
+def lines_on(sheet: Sheet, segment: FloatArray) -> list[tuple[float, str, float]]:
+    """Return width, colour and length of the lines drawn along a segment, whole or in part, mm."""
+    span = segment[1] - segment[0]
+    length = float(np.hypot(*span))
+    along, across = span / length, np.array([-span[1], span[0]]) / length
+    found = []
+    for points, width, colour in lines(sheet):
+        places = (points - segment[0]) @ along
+        beside = np.abs((points - segment[0]) @ across)
+        if points.shape == (2, 2) and beside.max() < 1e-6 and places.min() > -1e-6 and places.max() < length + 1e-6:
+            found.append((width, colour, float(np.ptp(places))))
+    return found
 
 
 def fill_of(sheet: Sheet, outline: FloatArray) -> str:

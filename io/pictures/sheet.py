@@ -6,6 +6,7 @@ import warnings
 from collections.abc import Iterator, Sequence
 from contextlib import contextmanager
 from io import BytesIO
+from itertools import pairwise
 from pathlib import Path
 from typing import Any, Literal
 
@@ -29,14 +30,13 @@ DOTS_PER_INCH = 200
 _PNG = {"Software": "Spanwright"}
 _SVG = {"Creator": "Spanwright", "Date": None}
 
-_LineStyle = tuple[float, float, str, tuple[float, float] | None]
+_LineStyle = tuple[float, float, str]
 _AreaStyle = tuple[float, str, str, float]
 _ABOVE_AREAS = 0.01
 
 _SETTINGS: dict[Any, Any] = {
     "svg.fonttype": "none",
     "svg.hashsalt": "spanwright",
-    "lines.scale_dashes": False,
     "text.hinting": "none",
     "font.sans-serif": ["DejaVu Sans", "Verdana", "Arial", "sans-serif"],
 }
@@ -78,8 +78,12 @@ class Sheet:
         dashes: tuple[float, float] | None = None,
         order: float = 1.0,
     ) -> None:
-        """Draw lines, (n, 2, 2) or n arrays (m, 2), mm; `width` and `dashes` (on, off) in mm; higher `order` on top."""
-        self._lines.setdefault((order, width, colour, dashes), []).extend(paths)
+        """Draw lines, (n, 2, 2) or n arrays (m, 2), mm; `width` and `dashes` (on, off) in mm; higher `order` on top.
+
+        Dashes are cut here: some readers of SVG leave them out, and would show a member over 1.00 as plain white.
+        """
+        pieces = paths if dashes is None else [piece for path in paths for piece in cut_in_dashes(path, dashes)]
+        self._lines.setdefault((order, width, colour), []).extend(pieces)
 
     def areas(
         self,
@@ -139,14 +143,12 @@ class Sheet:
                     transform=self._mm,
                 )
             )
-        for (order, width, colour, dashes), paths in self._lines.items():
-            style = "solid" if dashes is None else (0.0, tuple(length * POINTS_PER_MM for length in dashes))
+        for (order, width, colour), paths in self._lines.items():
             self.figure.add_artist(
                 LineCollection(
                     paths,
                     linewidths=width * POINTS_PER_MM,
                     colors=colour,
-                    linestyles=style,
                     capstyle="butt",
                     zorder=order + _ABOVE_AREAS,
                     transform=self._mm,
@@ -164,6 +166,19 @@ class Sheet:
         self.figure.savefig(svg, format="svg", metadata=_SVG)
         write_atomically(folder / f"{name}.png", png.getvalue())
         write_atomically(folder / f"{name}.svg", svg.getvalue())
+
+
+def cut_in_dashes(path: FloatArray, dashes: tuple[float, float]) -> list[FloatArray]:
+    """Return the dashes (2, 2) of a path (m, 2), mm: `dashes` on and off, begun anew at each of its points."""
+    pieces = []
+    on, off = dashes
+    for start, end in pairwise(path):
+        length = float(np.hypot(*(end - start)))
+        shares = np.arange(0.0, length, on + off)[:, None] / length
+        ends = np.minimum(shares + on / length, 1.0)
+        corners = start + np.stack([shares, ends], axis=1) * (end - start)
+        pieces += list(corners)
+    return pieces
 
 
 def rectangle(x: float, y: float, width: float, height: float) -> FloatArray:
