@@ -37,6 +37,8 @@ BEYOND = 5.0
 """mm on paper by which centre lines and gussets pass the steel."""
 NARROWEST = 62.0
 """mm on paper: least width of one cross-section, for its caption."""
+NARROW = 3.0
+"""mm on paper: a narrower gap is dimensioned on a line of its own."""
 DIAMETER = "\u00d8"
 HATCH = 1.4
 """mm on paper between hatching lines (ISO 128-3: at least 0.7)."""
@@ -83,8 +85,10 @@ def cross_sections(design: Design, scale: int, columns: int) -> CrossSections:
     cells = [_cell(design, choice, scale) for choice in design.choices]
     steel = max(float(np.ptp(cell.steel[:, 1])) for cell in cells) / scale
     lines = max(len(cell.caption) for cell in cells)
+    gap = design.setting.project.members.gap / scale
+    over = OVER if gap >= NARROW else OVER + LINE
     rows = tuple(tuple(cells[at : at + columns]) for at in range(0, len(cells), columns))
-    return CrossSections(scale, rows, steel + 2.0 * OVER + LARGE * STEP + lines * TEXT * STEP + 4.0)
+    return CrossSections(scale, rows, steel + 2.0 * over + LARGE * STEP + lines * TEXT * STEP + 4.0)
 
 
 def _cell(design: Design, choice: Choice, scale: int) -> Cell:
@@ -210,7 +214,8 @@ def _of_angles(cell: Cell, rings: FloatArray, low: FloatArray, high: FloatArray,
     heel = section.gap / 2.0 if star else upper if heel_up else lower
     inward = 1.0 if star or not heel_up else -1.0
     left, right = float(min(low[0], -back)) - LINE * unit, float(high[0]) + LINE * unit
-    level = float(high[1]) + LINE * unit if heel_up or star else float(low[1]) - LINE * unit
+    outward = LINE * unit if heel_up or star else -LINE * unit
+    level = float(high[1] if outward > 0.0 else low[1]) + outward
     legs_low, legs_high = sorted((heel, heel + inward * leg))
     yield _upright("connected leg", back, legs_low, legs_high, left)
     if not star:
@@ -219,13 +224,20 @@ def _of_angles(cell: Cell, rings: FloatArray, low: FloatArray, high: FloatArray,
     yield _upright("thickness", back + out, min(heel, face), max(heel, face), right, off=-inward)
     yield _level("outstanding leg", heel, back, back + out, level)
     if section.pieces == 2:
-        yield _level("gap", heel, -back, back, level)
+        yield _gap("gap", heel, back, level, outward, unit)
         if not star:
             yield _level("outstanding leg", heel, -back - out, -back, level)
         else:
             yield _upright("gap", back, -back, back, left - LINE * unit)
     elif cell.gusset:
-        yield _level("gusset", heel, -back, back, level)
+        yield _gap("gusset", heel, back, level, outward, unit)
+
+
+def _gap(what: str, y: float, half: float, level: float, outward: float, unit: float) -> Dimension:
+    """Dimension a gap in the line of the outstanding legs; where it is too narrow for that, on a line of its own."""
+    if 2.0 * half / unit < NARROW:
+        return _level(what, y, -half, half, level + outward, off=1.0)
+    return _level(what, y, -half, half, level)
 
 
 def _level(what: str, y: float, left: float, right: float, at: float, off: float = 0.0) -> Dimension:

@@ -8,7 +8,7 @@ from contextlib import contextmanager
 from pathlib import Path
 
 import numpy as np
-from ezdxf import units, zoom
+from ezdxf import units
 from ezdxf._options import options as library
 from ezdxf.document import Drawing
 from ezdxf.filemanagement import new
@@ -31,6 +31,8 @@ VERSION = "R2010"
 SHEET = "Sheet 1"
 APART = 1000.0
 """mm in model space between the elevation and the cross-sections below it."""
+WINDOW = 1.34
+"""Width over height of the narrowest window that the first view must fit."""
 ZOOM_LOCKED = 16384
 """Bit of a viewport's flags that locks its scale."""
 
@@ -80,7 +82,9 @@ def _draw_model(doc: Drawing, design: Design, arranged: Arrangement) -> FloatArr
     draw_elevation(Pen(space, elevation.scale, ELEVATION_STYLE), design, elevation)
     corner = np.array([elevation.low[0], elevation.low[1] - APART])
     draw_cross_sections(Pen(space, sections.scale, SECTION_STYLE), sections, corner)
-    zoom.window(space, tuple(elevation.low), tuple(elevation.high))
+    across, up = elevation.high - elevation.low
+    middle = (elevation.low + elevation.high) / 2.0
+    doc.set_modelspace_vport(max(float(up), float(across) / WINDOW), (float(middle[0]), float(middle[1])))
     low = np.array([elevation.low[0], corner[1] - sections.scale * sections.size[1]])
     doc.header["$EXTMIN"] = (*low.tolist(), 0.0)
     doc.header["$EXTMAX"] = (*elevation.high.tolist(), 0.0)

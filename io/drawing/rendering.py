@@ -3,8 +3,10 @@
 from __future__ import annotations
 
 import io
+import random
 from collections import defaultdict
-from collections.abc import Iterable
+from collections.abc import Iterable, Iterator
+from contextlib import contextmanager
 
 import numpy as np
 from ezdxf.addons.drawing.backend import Backend, BkPath2d, BkPoints2d, ImageData
@@ -111,8 +113,20 @@ def pdf_of(doc: Drawing, layout: str, title: str) -> bytes:
         lineweight_scaling=1.0,
         max_flattening_distance=FLATNESS,
     )
-    UniversalFrontend(RenderContext(doc), SheetPipeline(page), config).draw_layout(sheet)
+    with _no_chance():
+        UniversalFrontend(RenderContext(doc), SheetPipeline(page), config).draw_layout(sheet)
     return _set(page, sheet.dxf.paper_width, sheet.dxf.paper_height, title)
+
+
+@contextmanager
+def _no_chance() -> Iterator[None]:
+    """Let ezdxf, which shifts hatching lines by random numbers below 0.001 mm, shift them alike in every run."""
+    before = random.getstate()
+    random.seed(0)
+    try:
+        yield
+    finally:
+        random.setstate(before)
 
 
 def _in_points(places: ArrayLike) -> FloatArray:
