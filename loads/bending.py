@@ -2,7 +2,9 @@
 
 Each straight run of the chord is a beam over its joints, hinged to the next run at a kink (heel, ridge, any other
 change of slope); an overhang continues the end run as a cantilever. Only the component of a load across the chord
-bends it.
+bends it and is shared among its joints. The component along the chord goes to one joint whole: between the joints the
+bar's axial force steps by it, so one end of the bar carries more than the other, and the end that carries more is the
+one to check.
 """
 
 from __future__ import annotations
@@ -50,19 +52,32 @@ class Part:
 class Influence:
     """What unit forces at places (p,) of the top chord do.
 
-    shares : (j, p) the share of each force that goes to each joint of the truss.
+    shares : (j, p) the share of each force across the chord that goes to each joint of the truss.
     moments : (m, p) mm, the moment at each station, sagging +, for a unit force across the chord, pressing in.
     across : (p, 2) unit vectors across the chord at each place, pressing in.
+    ends : (p, 2) the lower and the upper joint of the bar at each place; for a place on a joint that joint twice, on an
+        overhang the chord's end joint twice.
     """
 
     shares: FloatArray
     moments: FloatArray
     across: FloatArray
+    ends: IntArray
 
-    def part(self, forces: FloatArray, derivation: tuple[str, ...]) -> Part:
-        """Return what forces (p, 2) N at the places do."""
+    def part(self, forces: FloatArray, derivation: tuple[str, ...], *, pulled: bool = False) -> Part:
+        """Return what forces (p, 2) N at the places do.
+
+        Across the chord they go to the joints as the reactions of its beams. Along it they go to the upper joint of
+        their bar: the whole bar then carries the compression of its lowest part, which is the greatest in it (seen by a
+        cut just above the lower joint). pulled : to the lower joint, for loads that count where the chord is pulled:
+        the whole bar then carries the tension of its uppermost part. No other bar of a determinate truss feels the
+        difference, and a force moved along its own line keeps sum and moment.
+        """
         pressing = (forces * self.across).sum(axis=1)
-        return Part(self.shares @ forces, self.moments @ pressing, derivation)
+        across = pressing[:, None] * self.across
+        joint_loads = self.shares @ across
+        np.add.at(joint_loads, self.ends[:, 0 if pulled else 1], forces - across)
+        return Part(joint_loads, self.moments @ pressing, derivation)
 
 
 @dataclass(frozen=True, eq=False)
@@ -109,11 +124,25 @@ class ChordBeams:
             shares[np.ix_(joints, here)] = beam.reactions(places[here])
             moments[np.ix_(inside, here)] = beam.moments(sections[inside], places[here])
         bar = np.searchsorted(chord.along[1:-1], places)
-        return Influence(shares, moments, self.across[bar])
+        return Influence(shares, moments, self.across[bar], self._ends_at(places, bar))
 
     def at_joints(self, forces: FloatArray, derivation: tuple[str, ...]) -> Part:
         """Return what forces (j, 2) N straight on the joints do: no bending."""
         return Part(forces, np.zeros(len(self.stations.at)), derivation)
+
+    def _ends_at(self, places: FloatArray, bar: IntArray) -> IntArray:
+        """Return (p, 2) the joints that a force along the chord may go to, the lower and the upper; see `Influence`.
+
+        bar : (p,) position in the chord of the bar at each place.
+        """
+        chord = self.truss.top
+        position = np.column_stack([bar, bar + 1])
+        on_left, on_right = places <= chord.along[bar], places >= chord.along[bar + 1]
+        position[on_left, 1] = bar[on_left]
+        position[on_right, 0] = bar[on_right] + 1
+        ends = np.array(chord.joints)[position]
+        by_height = np.argsort(self.truss.xy[ends, 1], axis=1, kind="stable")
+        return np.take_along_axis(ends, by_height, axis=1)
 
     def _run_of(self, places: FloatArray) -> IntArray:
         """Return (p,) the number of the run each place stands on; a place on a kink stands on the left one."""

@@ -135,7 +135,8 @@ def _permanent(roof: Roof, loads: LoadsInput) -> Iterator[Case]:
                 f"loads.{key}",
             )
     for name in PERMANENT:
-        case = _case(name, "permanent", roof.permanent(getattr(loads.roof_permanent, name)))
+        pressure = getattr(loads.roof_permanent, name)
+        case = _case(name, "permanent", roof.permanent(pressure, pulled=name == "least"))
         below = getattr(loads.ceiling_permanent, name)
         if below:
             case = case.joined_by(roof.beams.at_joints(*ceiling(roof.truss, below, roof.tributary)))

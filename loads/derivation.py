@@ -29,13 +29,14 @@ def force(x: float, y: float) -> str:
     return " and ".join(parts)
 
 
-def shares(truss: Truss, column: FloatArray) -> str:
-    """Return the shares (j,) of one force that go to the joints, as text."""
+def shares(truss: Truss, column: FloatArray, along_to: int) -> str:
+    """Return as text where one force goes: its part across the chord by shares (j,), along it to one joint."""
     listed = [(f"{share:.3f}", truss.joint_names[joint]) for joint, share in enumerate(column)]
     listed = [(share, name) for share, name in listed if float(share) != 0.0]
     if len(listed) == 1:
         return f"to {listed[0][1]}"
-    return "to the joints as a continuous beam: " + ", ".join(f"{share} to {name}" for share, name in listed)
+    across = ", ".join(f"{share} to {name}" for share, name in listed)
+    return f"to the joints, across the chord as a continuous beam: {across}; along it to {truss.joint_names[along_to]}"
 
 
 def total(forces: FloatArray) -> str:

@@ -33,11 +33,12 @@ class Roof:
     beams: ChordBeams
     tributary: float
 
-    def permanent(self, pressure: float) -> Part:
-        """Return the part of a permanent pressure on the slope, MPa."""
+    def permanent(self, pressure: float, *, pulled: bool = False) -> Part:
+        """Return the part of a permanent pressure on the slope, MPa; pulled : see `bending.Influence.part`."""
         forces = self.strips.on_slope(pressure * self.tributary)
         carried = [f"{say.metres(length)} of slope" for length in self.strips.lengths.sum(axis=1)]
-        return self._part(f"roof: {self._per_metre(pressure)} of slope", forces, carried, self._shares)
+        head, goes = f"roof: {self._per_metre(pressure)} of slope", self._shares_down if pulled else self._shares
+        return self._part(head, forces, carried, goes, pulled=pulled)
 
     def imposed(self, pressure: float, half: SlopeSide | None = None) -> Part:
         """Return the part of an imposed pressure on plan, MPa, on the whole roof or on one half alone."""
@@ -102,7 +103,7 @@ class Roof:
         for number, (where, _) in enumerate(standing):
             forces = np.zeros((len(standing), 2))
             forces[number, 1] = -load
-            text = f"man: {say.force(0.0, -load)} {where}, {say.shares(self.truss, influence.shares[:, number])}"
+            text = f"man: {say.force(0.0, -load)} {where}, {self._goes(influence, number)}"
             yield where, self._with_bending(influence.part(forces, (text,)))
 
     def _standing_between_joints(self) -> list[tuple[str, float]]:
@@ -124,7 +125,14 @@ class Roof:
 
     @cached_property
     def _shares(self) -> list[str]:
-        return [say.shares(self.truss, column) for column in self._carried.shares.T]
+        return [self._goes(self._carried, number) for number in range(len(self.names))]
+
+    @cached_property
+    def _shares_down(self) -> list[str]:
+        """Where each line's force goes in a case that counts where the chord is pulled."""
+        lower = [self.truss.joint_names[joint] for joint in self._carried.ends[:, 0]]
+        again = zip(self._shares_again, self.on_joint, lower, strict=True)
+        return [text if on_joint else f"{text}, but along the chord to {name}" for text, on_joint, name in again]
 
     @cached_property
     def _shares_again(self) -> list[str]:
@@ -132,7 +140,12 @@ class Roof:
         shares = zip(self._shares, self.on_joint, strict=True)
         return [text if on_joint else "shared as under most" for text, on_joint in shares]
 
-    def _part(self, head: str, forces: FloatArray, carried: list[str], goes: list[str]) -> Part:
+    def _goes(self, influence: Influence, number: int) -> str:
+        return say.shares(self.truss, influence.shares[:, number], int(influence.ends[number, 1]))
+
+    def _part(
+        self, head: str, forces: FloatArray, carried: list[str], goes: list[str], *, pulled: bool = False
+    ) -> Part:
         """Return the part of forces (l, 2); `carried` says what each line carries ("" = nothing), `goes` where to."""
         lines = [
             f"{name} at x {say.metres(x)}, {carries}: {say.force(*force)}, {where}"
@@ -141,7 +154,7 @@ class Roof:
             )
             if carries
         ]
-        return self._with_bending(self._carried.part(forces, (head, *lines, say.total(forces))))
+        return self._with_bending(self._carried.part(forces, (head, *lines, say.total(forces)), pulled=pulled))
 
     def _with_bending(self, part: Part) -> Part:
         return replace(part, derivation=(*part.derivation, *say.bending(self.beams, part.moments)))
