@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass, field
-from typing import Literal
+from typing import Any, Literal
 
 from spanwright.design.standard import Ends, Packs
 from spanwright.loads.inputs import LoadsInput
@@ -50,6 +50,21 @@ class DeflectionLimits:
 
 
 @dataclass(frozen=True)
+class DrawingRecord:
+    """The drawing that a truss was read from, for the record: the design takes nothing from it.
+
+    name : as the project file spells it. sha256 : of the file's bytes, hexadecimal.
+    record : what was understood, every finding, and what became of every entity, as plain values for JSON.
+    marked : the drawing with the findings marked, as a DXF file; empty where it cannot be written again.
+    """
+
+    name: str
+    sha256: str
+    record: dict[str, Any]
+    marked: bytes = field(default=b"", repr=False)
+
+
+@dataclass(frozen=True)
 class Project:
     """One truss, as the user states it.
 
@@ -60,7 +75,9 @@ class Project:
     groups : members (bar names) that get one section, beyond the grouping by role.
     title_block : ISO 7200 fields for documents (owner, number, revision, creator, approver...), all text.
     defaults_used : (key, value as text) of every default taken, for the record.
-    source : the text of the input that was read, whose hash every output carries; source_name : its file name.
+    warnings : sentences on the input, from reading it.
+    source : the text of the input that was read, whose hash every output carries, closed by a remark with the hash of
+        the drawing where there is one; source_name : its file name. drawing : what the truss was read from, if any.
     """
 
     title: str
@@ -81,5 +98,7 @@ class Project:
     groups: dict[str, tuple[str, ...]] = field(default_factory=dict)
     title_block: dict[str, str] = field(default_factory=dict)
     defaults_used: tuple[tuple[str, str], ...] = ()
+    warnings: tuple[str, ...] = ()
     source: str = ""
     source_name: str = ""
+    drawing: DrawingRecord | None = None

@@ -10,8 +10,9 @@ ANGLES = ("L", "2L", "2L star")
 
 
 def warnings_of(setting: Setting, choices: tuple[Choice, ...]) -> tuple[str, ...]:
-    """Return the warnings of geometry, restraint and loads, then those of the chosen sections."""
+    """Return the warnings of the input, geometry, restraint and loads, then those of the chosen sections."""
     return (
+        *setting.project.warnings,
         *setting.truss.warnings,
         *setting.restraint.warnings,
         *setting.load_set.warnings,

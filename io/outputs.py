@@ -7,9 +7,11 @@ from dataclasses import dataclass
 from pathlib import Path
 
 from spanwright.design.result import Design
-from spanwright.io.files import make_folder, remove
+from spanwright.io.files import make_folder, remove, write_atomically
 from spanwright.io.results.document import write_results
 from spanwright.truss.errors import OutputError
+
+_MARKED = "wireframe_marked.dxf"
 
 
 @dataclass(frozen=True)
@@ -54,6 +56,8 @@ def write_all(
 
 def _outputs(design: Design, *, pictures: bool, every_member: bool) -> tuple[Output, ...]:
     cut = bool(design.pieces)
+    drawing = design.setting.project.drawing
+    marked = drawing.marked if drawing else b""
     return (
         Output(("utilisation.*", "restraint.*", "wind_*.*"), _pictures, pictures),
         Output(("schedule.*",), _schedules, cut),
@@ -61,6 +65,7 @@ def _outputs(design: Design, *, pictures: bool, every_member: bool) -> tuple[Out
         Output(
             ("calculation.pdf",), lambda design, folder: _calculation(design, folder, every_member=every_member), True
         ),
+        Output((_MARKED,), lambda _, folder: write_atomically(folder / _MARKED, marked), bool(marked)),
     )
 
 

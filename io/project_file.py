@@ -3,22 +3,26 @@
     parse_project(text)            text > TOML > checked tables (schema.py) > Project
     read_project("roof.toml")      the same from a file
 
-Every mistake is an InputError that names the file, the dotted key, what was found and what would be right.
+Every mistake is an InputError that names the file, the dotted key, what was found and what would be right; where the
+truss stands in a drawing that gives none, it is a DrawingError that names the same.
 """
 
 from __future__ import annotations
 
 import tomllib
+from dataclasses import replace
 from pathlib import Path
 from typing import Any
 
 from pydantic import ValidationError
 
 from spanwright.design.project import Project
+from spanwright.io.drawn import read_drawn
 from spanwright.io.schema import ProjectFile, defaults_taken
 from spanwright.io.schema_errors import first_mistake
-from spanwright.truss.errors import InputError
-from spanwright.truss.inputs import FormInput
+from spanwright.io.schema_truss import DrawnTruss
+from spanwright.truss.errors import DrawingError, InputError
+from spanwright.truss.inputs import FormInput, GivenInput, RestraintInput
 from spanwright.truss.possible import refuse_impossible
 
 _LARGEST_FILE = 2_000_000  # bytes: a project file has some thousand; this refuses a device or a wrong file
@@ -28,42 +32,61 @@ _FROM_STARTER = "spanwright starter roof.toml writes a commented one to begin wi
 def read_project(path: str | Path) -> Project:
     """Read a project file.
 
-    InputError if the file cannot be read, is not UTF-8 or not TOML, or holds a mistake.
+    InputError if the file cannot be read, is not UTF-8 or not TOML, or holds a mistake; DrawingError if the drawing
+    that it names gives no truss.
     """
     path = Path(path)
     try:
-        return parse_project(_text_of(path), path.name)
-    except InputError as error:
+        return parse_project(_text_of(path), path.name, path.parent)
+    except (InputError, DrawingError) as error:
         error.file = str(path)
         raise
 
 
-def parse_project(text: str, name: str = "") -> Project:
-    """Read a project from the text of a project file; `name` is the file's name for messages and records.
+def parse_project(text: str, name: str = "", folder: str | Path = ".") -> Project:
+    """Read a project from the text of a project file.
 
-    InputError if it is not TOML or holds a mistake.
+    name : the file's name for messages and records. folder : what paths in the text are relative to.
+
+    InputError if it is not TOML or holds a mistake; DrawingError if the drawing that it names gives no truss.
     """
     try:
-        project = _project(ProjectFile.model_validate(_tables(text)), text, name)
+        project = _project(ProjectFile.model_validate(_tables(text)), text, name, Path(folder))
         if isinstance(project.truss, FormInput):
             refuse_impossible(project.truss)
     except ValidationError as error:
         raise first_mistake(error).located(file=name) from None
-    except InputError as error:
+    except (InputError, DrawingError) as error:
         raise error.located(file=name) from None
     return project
 
 
-def _project(file: ProjectFile, text: str, name: str) -> Project:
+def _project(file: ProjectFile, text: str, name: str, folder: Path) -> Project:
+    if not isinstance(file.truss, DrawnTruss):
+        return _stated(file, file.truss.value(), file.restraint.value(), text, name)
+    drawn = read_drawn(file.truss, file.restraint, text, folder)
+    project = _stated(file, drawn.truss, drawn.restraint, drawn.source, name)
+    return replace(
+        project,
+        supports="as given",
+        defaults_used=tuple((key, value) for key, value in project.defaults_used if key not in drawn.keys_marked),
+        warnings=drawn.warnings,
+        drawing=drawn.drawing,
+    )
+
+
+def _stated(
+    file: ProjectFile, truss: FormInput | GivenInput, restraint: RestraintInput, source: str, name: str
+) -> Project:
     return Project(
         title=file.title,
         standard=file.standard,
         actions=file.actions,
-        truss=file.truss.value(),
+        truss=truss,
         supports=file.truss.supports,
         spacing=file.truss.spacing,
         tributary=file.truss.tributary,
-        restraint=file.restraint.value(),
+        restraint=restraint,
         loads=file.loads.value(),
         site=None if file.site is None else file.site.value(file.loads.left_open),
         members=file.members.value(),
@@ -74,7 +97,7 @@ def _project(file: ProjectFile, text: str, name: str) -> Project:
         groups=dict(file.groups),
         title_block={key: text for key, text in file.title_block.model_dump().items() if text},
         defaults_used=tuple(defaults_taken(file)),
-        source=text,
+        source=source,
         source_name=name,
     )
 

@@ -6,10 +6,11 @@ from pydantic import ValidationError
 from pydantic_core import ErrorDetails
 
 from spanwright.io.schema import all_tables, tables_at
-from spanwright.io.schema_truss import GIVEN_KEYS
+from spanwright.io.schema_truss import DECIDING_KEYS
 from spanwright.io.units import shown
 from spanwright.truss.errors import InputError, UnknownNameError
 
+_WAYS = {"given": "joints and bars given one by one", "drawn": "a truss read from a drawing"}
 _WANTED = {
     "model_type": "a table of keys",
     "dict_type": "a table of keys",
@@ -46,7 +47,7 @@ def _translate(detail: ErrorDetails) -> InputError:
     if detail["type"] == "missing":
         return InputError("this key is required and missing", _meaning(place), _dotted(place))
     if detail["type"] == "extra_forbidden":
-        return _unknown_key(place)
+        return _unknown_key(place, str(detail["loc"][1]) if len(place) > 1 else "")
     wanted = _WANTED.get(detail["type"], detail["msg"])
     return InputError(f"{shown(detail['input'])} stands where something else is due", f"write {wanted}", _dotted(place))
 
@@ -65,14 +66,15 @@ def _dotted(place: tuple[int | str, ...]) -> str:
     return text
 
 
-def _unknown_key(place: tuple[int | str, ...]) -> InputError:
+def _unknown_key(place: tuple[int | str, ...], way: str) -> InputError:
+    """Return the mistake; `way` is how [truss] gives the truss, where the place is in it."""
     name = str(place[-1])
     known = list(dict.fromkeys(key for table in tables_at(place[:-1]) for key in table.model_fields))
     where = _dotted(place)
-    if name in known:
+    if name in known and way in _WAYS:
         return InputError(
-            "a form does not go with joints and bars given one by one",
-            f"leave out {name}, or leave out {', '.join(sorted(GIVEN_KEYS))}",
+            f"{name} does not go with {_WAYS[way]}",
+            f"leave out {name}, or leave out {', '.join(DECIDING_KEYS[way])}",
             where,
         )
     error = UnknownNameError.among(name, known, what="key", key=where)

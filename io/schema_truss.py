@@ -1,12 +1,13 @@
-"""The table [truss] of a project file: a form, or joints and bars one by one."""
+"""The table [truss] of a project file: a form, joints and bars one by one, or a drawing that holds them."""
 
 from __future__ import annotations
 
 import math
-from typing import Annotated, Any, Literal, Self, get_args
+from typing import Annotated, Any, Literal, Self
 
 from pydantic import Discriminator, Tag, model_validator
 
+from spanwright.io.schema_drawing import DrawingTable
 from spanwright.io.schema_fields import (
     Length,
     Name,
@@ -16,9 +17,11 @@ from spanwright.io.schema_fields import (
     field,
     key,
     length,
+    line_of_text,
     name,
     one_of,
     refused,
+    subtable,
 )
 from spanwright.io.units import shown, slope
 from spanwright.truss.errors import InputError
@@ -30,7 +33,8 @@ Supports = Literal["left pinned, right sliding", "both pinned", "as given"]
 Bearing = Literal["pinned", "sliding"]
 
 _FURTHEST = 1e6  # mm: 1 km, further from the origin than any drawing of one truss
-GIVEN_KEYS = frozenset({"joints", "bars", "joint_supports"})
+DECIDING_KEYS = {"given": ("joints", "bars", "joint_supports"), "drawn": ("wireframe", "drawing")}
+"""Keys that decide how [truss] gives the truss; without any of them it is a form."""
 
 
 def _whole(value: object) -> int:
@@ -58,12 +62,18 @@ def _bar(value: object) -> tuple[str, str, Role, str]:
     return name(value[0]), name(value[1]), role, name(value[3]) if len(value) == 4 else ""
 
 
+def _drawing(value: object) -> str:
+    path = line_of_text(value)
+    if not path:
+        raise InputError("the name of the drawing is empty", 'write its path from this file, such as "roof.dxf"')
+    return path
+
+
 class _AnyTruss(Table):
     spacing: Annotated[float, length("0.3 m", "30 m")] = key('distance from truss to truss, such as "5 m"')
     tributary_width: Annotated[float, length("0.1 m", "30 m")] | None = key(
         "width of roof that one truss carries", None, otherwise="the spacing"
     )
-    overhang: Length = key("top chord beyond the support, in plan, each side", "0 m")
 
     @property
     def tributary(self) -> float:
@@ -71,7 +81,11 @@ class _AnyTruss(Table):
         return self.spacing if self.tributary_width is None else self.tributary_width
 
 
-class FormTruss(_AnyTruss):
+class _StatedTruss(_AnyTruss):
+    overhang: Length = key("top chord beyond the support, in plan, each side", "0 m")
+
+
+class FormTruss(_StatedTruss):
     """The table [truss] with a form."""
 
     form: Annotated[FormName, one_of(FormName)] = key('the form of the truss: "Pratt", "Howe" or "Fink"')
@@ -110,7 +124,7 @@ class FormTruss(_AnyTruss):
         return FormInput(self.form, self.span, pitch, self.heel_depth, self.panels, self.overhang, self.diagonals)
 
 
-class GivenTruss(_AnyTruss):
+class GivenTruss(_StatedTruss):
     """The table [truss] with joints and bars one by one."""
 
     joints: dict[Name, Annotated[tuple[float, float], field(_point)]] = key(
@@ -137,13 +151,21 @@ class GivenTruss(_AnyTruss):
         return GivenInput(joints, bars, tuple(self.joint_supports.items()), self.overhang, bar_names)
 
 
+class DrawnTruss(_AnyTruss):
+    """The table [truss] with a drawing; what it holds is read by `spanwright.io.drawn`."""
+
+    wireframe: Annotated[str, field(_drawing)] = key('the drawing (DXF), by its path from this file: "roof.dxf"')
+    drawing: DrawingTable = subtable(DrawingTable)
+    overhang: Length | None = key("top chord beyond the support, in plan, each side", None, otherwise="as drawn")
+    supports: Annotated[FormSupports, one_of(FormSupports)] = key("the bearings", "left pinned, right sliding")
+
+
 def _way(table: Any) -> str:
-    return "given" if isinstance(table, dict) and not GIVEN_KEYS.isdisjoint(table) else "form"
+    keys = set(table) if isinstance(table, dict) else set()
+    return next((way for way in ("drawn", "given") if not keys.isdisjoint(DECIDING_KEYS[way])), "form")
 
 
-# A third way, a drawing (`wireframe = "roof.dxf"`), joins here as a table and a tag of its own.
 TrussTable = Annotated[
-    Annotated[FormTruss, Tag("form")] | Annotated[GivenTruss, Tag("given")],
+    Annotated[FormTruss, Tag("form")] | Annotated[GivenTruss, Tag("given")] | Annotated[DrawnTruss, Tag("drawn")],
     Discriminator(_way),
 ]
-TRUSS_WAYS: tuple[type[Table], ...] = tuple(get_args(entry)[0] for entry in get_args(get_args(TrussTable)[0]))

@@ -7,6 +7,7 @@ from pathlib import Path
 from typing import Any
 
 from spanwright import __version__
+from spanwright.design.project import DrawingRecord
 from spanwright.design.result import Design
 from spanwright.io.files import input_hash, write_atomically
 from spanwright.io.results.actions import cases, combinations, deflection, equilibrium, reactions, site
@@ -59,10 +60,17 @@ def document(design: Design) -> dict[str, Any]:
         "equilibrium": equilibrium(design),
         "deflection": deflection(design),
         "mass_kg": kilograms(design.mass),
-        "findings": [],
+        "drawing": _drawing(project.drawing),
+        "findings": project.drawing.record["findings"] if project.drawing else [],
         "warnings": list(design.warnings),
         "cautions": list(design.cautions),
     }
+
+
+def _drawing(drawing: DrawingRecord | None) -> dict[str, Any] | None:
+    if drawing is None:
+        return None
+    return {"sha256": drawing.sha256} | {key: value for key, value in drawing.record.items() if key != "findings"}
 
 
 def write_results(design: Design, folder: Path) -> Path:

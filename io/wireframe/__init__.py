@@ -10,7 +10,7 @@ Importing this package imports the DXF library; do so in the command that needs 
 """
 
 from spanwright.io.wireframe.importer import Wireframe, import_wireframe
-from spanwright.io.wireframe.marked_copy import write_marked_copy
+from spanwright.io.wireframe.marked_copy import marked_copy, write_marked_copy
 from spanwright.io.wireframe.options import Limits, Options
 from spanwright.io.wireframe.project_text import project_text
 from spanwright.io.wireframe.report import Finding, RefusedDrawingError, Report
@@ -24,6 +24,7 @@ __all__ = [
     "Report",
     "Wireframe",
     "import_wireframe",
+    "marked_copy",
     "project_text",
     "report_record",
     "report_text",

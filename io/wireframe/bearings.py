@@ -61,8 +61,13 @@ def _outermost(truss: Recognised, tolerance: float) -> list[int]:
     return outer
 
 
-def find_overhang(trunk: Trunk, truss: Recognised, tolerance: float) -> tuple[float, tuple[Remark, ...]]:
-    """Return the overhang of the top chord, mm in plan, and what to say of every bar that ends in the air."""
+def find_overhang(
+    trunk: Trunk, truss: Recognised, stated: float | None, tolerance: float
+) -> tuple[float, tuple[Remark, ...]]:
+    """Return the overhang of the top chord, mm in plan, and what to say of every bar that ends in the air.
+
+    stated : the user's overhang, which goes before what is drawn; None: as drawn. tolerance : mm.
+    """
     left = right = 0.0
     remarks: list[Remark] = []
     for (inner, tip), source in zip(trunk.hanging.tolist(), trunk.sources.tolist(), strict=True):
@@ -72,9 +77,15 @@ def find_overhang(trunk: Trunk, truss: Recognised, tolerance: float) -> tuple[fl
         if on_left or on_right:
             left, right = (plan, right) if on_left else (left, plan)
             text = f"the top chord runs on for {plan:.0f} mm in plan beyond its end joint"
-            remarks.append(Remark("W-404", text, "taken as overhang; its tip is no joint", source, at))
+            done = "taken as overhang" if stated is None else "the user states the overhang"
+            remarks.append(Remark("W-404", text, f"{done}; its tip is no joint", source, at))
         else:
             remarks.append(Remark("W-314", "a bar ends in the air", "left out", source, at))
+    if stated is not None:
+        if left + right and max(abs(left - stated), abs(right - stated)) > TOLERANCES.on_joint:
+            text = f"the drawn overhangs are {left:.0f} and {right:.0f} mm, the user's is {stated:.0f} mm"
+            remarks.append(Remark("W-410", text, "the user's was taken"))
+        return stated, tuple(remarks)
     if abs(left - right) > TOLERANCES.on_joint:
         text = f"the top chord overhangs by {left:.0f} mm on the left and {right:.0f} mm on the right"
         remarks.append(Remark("W-405", text, f"{max(left, right):.0f} mm was taken on both sides"))

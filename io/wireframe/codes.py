@@ -55,4 +55,5 @@ CODES: dict[str, Code] = {
     "W-407": Code("note", "the bearings"),
     "W-408": Code("warning", "no rule of a project file says where the marked purlins stand"),
     "W-409": Code("warning", "one bar was drawn on layers of different roles"),
+    "W-410": Code("warning", "the user's overhang differs from the one drawn"),
 }

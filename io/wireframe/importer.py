@@ -119,7 +119,7 @@ def _import(path: Path, options: Options, log: _Log) -> Wireframe:
     trunk = clean(flat.lines, roles, flat.marks, options, tolerance, say)
     truss, remarks = recognise(trunk.network, [roles[line] for line in trunk.network.sources], tolerance)
     say(remarks)
-    overhang, remarks = find_overhang(trunk, truss, tolerance)
+    overhang, remarks = find_overhang(trunk, truss, options.overhang, tolerance)
     say(remarks)
     xy = truss.network.xy
     marked = joints_marked(flat.marks, "supports", xy, range(len(xy)))

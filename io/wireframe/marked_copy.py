@@ -29,28 +29,49 @@ _LEAN = 45.0  # degrees: words that rise do not run over those of the next joint
 
 
 def write_marked_copy(path_in: Path, report: Report, path_out: Path) -> int:
-    """Write a copy of a drawing in which each finding that has a place is circled there and told in a line.
-
-    The marks of a code are on the layer "SPANWRIGHT <code>", in the plane of drawing. Returns how many there are.
+    """Write the marked copy of a drawing to a file, and return how many marks it has.
 
     Raises DrawingError if the drawing cannot be read, OutputError if the copy cannot be written or would be written
     over the drawing itself.
     """
     if path_out.exists() and path_out.samefile(path_in):
         raise OutputError("the marked copy would replace the drawing", "give it another name", file=str(path_out))
-    document, _ = read_drawing(path_in, AS_DRAWN.limits)
-    placed = [finding for finding in report.findings if finding.at]
     try:
-        for code, severity in sorted({(finding.code, finding.severity) for finding in placed}):
+        content = marked_copy(path_in, report)
+    except OutputError as error:
+        raise error.located(file=str(path_out)) from error
+    write_atomically(path_out, content)
+    return len(placed(report))
+
+
+def marked_copy(path: Path, report: Report, mark_of_input: str = "") -> bytes:
+    """Return a copy of a drawing, as a DXF file, in which each finding is circled at its place and told in a line.
+
+    The marks of a code are on the layer "SPANWRIGHT <code>", in the plane of drawing. `mark_of_input`, if any, is
+    the property "Input" of the file.
+
+    Raises DrawingError if the drawing cannot be read, OutputError if it cannot be written again.
+    """
+    document, _ = read_drawing(path, AS_DRAWN.limits)
+    findings = placed(report)
+    try:
+        for code, severity in sorted({(finding.code, finding.severity) for finding in findings}):
             if layer_name(code) not in document.layers:
                 document.layers.add(layer_name(code), color=_COLOURS[severity])
-        _Marker(document.modelspace(), report.facts).mark(placed)
-        content = _content(document)
+        _Marker(document.modelspace(), report.facts).mark(findings)
+        if mark_of_input:
+            properties = document.header.custom_vars
+            change = properties.replace if properties.has_tag("Input") else properties.append
+            change("Input", mark_of_input)
+        return _content(document)
     except READER_TROUBLE as error:
         found = f"the drawing cannot be written again ({type(error).__name__}: {error})"
-        raise OutputError(found, "mend the drawing in a drawing program first", file=str(path_out)) from error
-    write_atomically(path_out, content)
-    return len(placed)
+        raise OutputError(found, "mend the drawing in a drawing program first") from error
+
+
+def placed(report: Report) -> list[Finding]:
+    """Return the findings that have a place to mark."""
+    return [finding for finding in report.findings if finding.at and all(map(math.isfinite, finding.at))]
 
 
 def layer_name(code: str) -> str:

@@ -49,6 +49,7 @@ class Options:
     split_crossings : make a joint where two bars cross without one.
     up : the drawing's axis that is vertical, "x", "-x", "y", "-y", "z" or "-z"; "" takes y in plan, else z.
     bearings : the chord that bears; "" takes the lowest of the outermost joints.
+    overhang : mm in plan, of the top chord beyond its end joints, each side; None: as drawn.
     supports : what the left and the right bearing hold.
     """
 
@@ -61,6 +62,7 @@ class Options:
     split_crossings: bool = False
     up: str = ""
     bearings: BearingChord = ""
+    overhang: float | None = None
     supports: DrawnSupports = "left pinned, right sliding"
     limits: Limits = Limits()
 
@@ -106,6 +108,9 @@ def check_options(options: Options) -> None:
     tolerance = options.tolerance
     if tolerance is not None and not (math.isfinite(tolerance) and tolerance > 0):
         raise InputError(f"the tolerance is {tolerance:g} mm", 'give a positive length such as "5 mm"', "tolerance")
+    overhang = options.overhang
+    if overhang is not None and not (math.isfinite(overhang) and overhang >= 0):
+        raise InputError(f"the overhang is {overhang:g} mm", 'give a length such as "0.4 m"', "overhang")
     if options.up and options.up.removeprefix("-") not in _AXES:
         raise InputError(f'"{options.up}" is no axis', "give x, -x, y, -y, z or -z", "up")
     _check_choice(options.bearings, BearingChord, "bearings")

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from collections import Counter, defaultdict
 from typing import Any
 
@@ -27,10 +28,13 @@ def report_text(report: Report) -> str:
 
 
 def report_record(report: Report) -> dict[str, Any]:
-    """Return the report as plain values with units in the key names; places are in drawing units."""
+    """Return the report as plain values for JSON, with units in the key names; places are in drawing units.
+
+    Characters that cannot be printed are "?", coordinates that are no numbers None.
+    """
     facts = report.facts
     return {
-        "drawing": report.drawing,
+        "file": _printable(report.drawing),
         "unit": facts.unit,
         "unit_stated_by": facts.unit_from,
         "plane": facts.vertical,
@@ -44,12 +48,12 @@ def report_record(report: Report) -> dict[str, Any]:
                 "code": finding.code,
                 "severity": finding.severity,
                 "meaning": finding.meaning,
-                "text": finding.text,
-                "done": finding.done,
-                "handle": finding.handle,
-                "layer": finding.layer,
-                "blocks": list(finding.blocks),
-                "at": list(finding.at),
+                "entity": finding.handle,
+                "layer": _printable(finding.layer),
+                "blocks": [_printable(block) for block in finding.blocks],
+                "at": [value if math.isfinite(value) else None for value in finding.at],
+                "found": _printable(finding.text),
+                "done": _printable(finding.done),
             }
             for finding in report.findings
         ],
@@ -57,9 +61,9 @@ def report_record(report: Report) -> dict[str, Any]:
         "entities": [
             {
                 "kind": row.kind,
-                "layer": row.layer,
+                "layer": _printable(row.layer),
                 "outcome": row.outcome,
-                "reason": row.reason,
+                "reason": _printable(row.reason),
                 "count": row.count,
                 "handles": list(row.handles),
             }
