@@ -87,7 +87,8 @@ def _by_case(design: Design) -> Table:
                 *(kilo(float(v), 2) for v in left),
             )
         )
-    note = "Unfactored. A sum is load and reactions together, and must be zero."
+    stated = "" if len(design.analysis.arrangements) == 1 else ", with the supports as stated"
+    note = f"Unfactored{stated}. A sum is load and reactions together, and must be zero."
     return Table(tuple(columns), tuple(rows), title="By load case", note=note, dense=True)
 
 

@@ -71,8 +71,8 @@ def document(
         chord_bending(design),
         deflection(design),
         checks_by_hand(design),
-        for_the_hand(design),
         Section("Warnings", (Points(design.warnings),) if design.warnings else (Paragraph("None."),)),
+        for_the_hand(design),
         *pictures(design, folder),
     )
     return _page_data(
