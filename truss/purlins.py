@@ -59,7 +59,9 @@ class PurlinLine:
 def lay_purlins(truss: Truss, restraint: RestraintInput) -> tuple[PurlinLine, ...]:
     """Return the purlin lines from the left eaves over the ridge to the right.
 
-    - "at joints": one at every joint of the top chord, the end joints included.
+    - "at joints": one at every joint of the top chord, the end joints included, and one at the roof's edge where an
+      overhang is longer along the slope than sheeting cantilevers (`TOLERANCES.sheeting_cantilever`): it bends the
+      overhang, and is numbered like the others. A shorter overhang is carried by the line at the end joint.
     - a greatest spacing: on each slope the fewest equal spacings that do not exceed it, from the roof's edge to the
       ridge line or to the pair's lower line.
     - distances: up the slope from the roof's edge, on both slopes; of two unequal slopes the shorter one leaves out
@@ -117,7 +119,9 @@ def _ridge(apex: float, pair: float | None) -> list[float]:
 
 def _at_joints(chord: Chord, apex: float, pair: float | None) -> list[float]:
     others = [float(along) for along in chord.along if along != apex]
-    return [*others, *_ridge(apex, pair)]
+    ends = zip((0.0, chord.length), (-1.0, 1.0), chord.overhang, strict=True)
+    edges = [end + out * reach for end, out, reach in ends if reach > TOLERANCES.sheeting_cantilever]
+    return [*others, *edges, *_ridge(apex, pair)]
 
 
 def _spaced(chord: Chord, apex: float, spacing: float, pair: float) -> list[float]:

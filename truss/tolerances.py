@@ -47,6 +47,9 @@ class Tolerances:
     same_point: float = 0.5
     """mm: joints given one by one that are nearer than this are one joint, which is refused."""
 
+    sheeting_cantilever: float = 300.0
+    """mm along the slope: sheeting cantilevers no further beyond its last purlin (common practice)."""
+
     knee_reach: float = 300.0
     """mm in plan: a knee brace counts where a counted purlin stands within this of its joint (project rule)."""
 

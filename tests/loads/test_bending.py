@@ -77,8 +77,8 @@ def test_the_whole_bar_is_checked_with_the_force_of_its_end_that_carries_most(pu
     """Reviewed: the lower part of a rafter bar with a purlin in it carried up to 10 % more than its checked force.
 
     1 kN midway in TC1, 1 m from B0 on plan: B0 bears 7/8 kN. Cut TC1 just above B0, where it carries the thrust N and
-    the shear V = 13/32 of 0.8 kN, and the tie, which is level: N 0.6 + 7/8 - V 0.8 = 0, so N = -1.025 kN. Just below T1,
-    past the load, 0.6 kN along the slope is gone: -0.425 kN.
+    the shear V = 13/32 of 0.8 kN, and the tie, which is level: N 0.6 + 7/8 - V 0.8 = 0, so N = -1.025 kN. Just below
+    T1, past the load, 0.6 kN along the slope is gone: -0.425 kN.
     """
     truss = build_form(FOUR_PANELS)
     influence = beams_with(truss, 1250.0).influence(np.array([1250.0]))

@@ -150,6 +150,17 @@ def test_a_man_stands_at_the_outermost_purlin_of_an_overhang() -> None:
     assert "man on right overhang" in found
 
 
+def test_an_overhang_is_bent_as_a_cantilever_with_purlins_at_joints() -> None:
+    """Reviewed: it was not bent at all. 1 m of slope, 3 in 4, 5 m of roof: w l2/2 across the chord at the heel."""
+    truss = build_form(FormInput("Howe", 8000.0, math.atan2(3.0, 4.0), panels=4, overhang=800.0))
+    found = load_set(loads(man=900.0, wind=(SUCTION,)), truss)
+    cases, at_heel = named(found), 0
+    assert cases["most"].moments[at_heel] == pytest.approx(-0.25 * 5.0 * 0.8 * 1.0**2 / 2 * 1e6)
+    assert cases["imposed"].moments[at_heel] == pytest.approx(-0.30 * 5.0 * 0.8 * 0.8 * 1.0**2 / 2 * 1e6)
+    assert cases["gale"].moments[[0, -1]] == pytest.approx([0.8 * 5.0 / 2 * 1e6, 0.5 * 5.0 / 2 * 1e6])
+    assert cases["man on left overhang"].moments[at_heel] == pytest.approx(-900.0 * 0.8 * 1000.0)
+
+
 def test_wind_and_its_mirror_image() -> None:
     truss = build_form(ROOF)
     cases = named(load_set(loads(wind=(SUCTION,))))

@@ -6,6 +6,7 @@ from roofs import hand_made, mono_pitch, parallel, raised, restraint, triangular
 from spanwright.truss.errors import InputError
 from spanwright.truss.model import Truss
 from spanwright.truss.purlins import PurlinLine, lay_purlins
+from spanwright.truss.restraint import restrain
 
 
 def laid(truss: Truss, **changes: object) -> tuple[PurlinLine, ...]:
@@ -30,6 +31,39 @@ def test_at_joints_of_a_triangular_truss_the_heels_carry_a_line() -> None:
     lines = laid(truss)
     assert (lines[0].joint, lines[-1].joint) == truss.bearing_joints
     assert len(lines) == 9
+
+
+def test_at_joints_a_line_stands_at_the_edge_of_an_overhang_that_sheeting_does_not_span() -> None:
+    """Reviewed: with purlins at joints the overhang's load went to the heel. Sheeting cantilevers 300 mm (practice)."""
+    # 3 in 4: 240 mm in plan is 300 mm of slope, 241 mm is more
+    assert alongs(laid(raised(overhang=240.0))) == alongs(laid(raised()))
+    lines = laid(raised(overhang=800.0))
+    assert alongs(lines) == pytest.approx([-1000, *(2500 * k for k in range(9)), 21000])
+    assert [line.number for line in lines] == list(range(1, 12))
+    assert (lines[0].joint, lines[0].bar, lines[0].x, lines[0].y) == (
+        None,
+        None,
+        pytest.approx(-800),
+        pytest.approx(400),
+    )
+    assert len(laid(raised(overhang=241.0))) == 11
+
+
+def test_lines_at_the_edges_of_an_overhang_leave_the_braced_purlins_as_they_are() -> None:
+    """Counted from the ridge, number 0, they come last, and no joint of the bottom chord stands below them."""
+    for every in ("purlin", "2nd purlin", "3rd purlin", "5th purlin"):
+        plain, overhanging = (
+            [brace.at for brace in restrain(truss, restraint(knee_braces=f"every {every}")).braces]
+            for truss in (raised(), raised(overhang=800.0))
+        )
+        assert overhanging == plain != []
+
+
+def test_at_joints_a_mono_pitch_has_a_line_at_either_edge() -> None:
+    # 400 mm of overhang in plan is 500 mm of slope
+    lines = laid(mono_pitch(overhang=400.0))
+    assert alongs(lines) == pytest.approx([-500, 0, 5000, 10000, 15000, 15500])
+    assert [line.side for line in lines] == ["left"] * 4 + ["ridge", "left"]
 
 
 def test_a_ridge_pair_replaces_the_ridge_line_by_two() -> None:
