@@ -14,7 +14,7 @@ from importlib import import_module
 
 from spanwright import __version__
 
-_COMMANDS = ("design", "check", "strut", "sections", "starter")
+_COMMANDS = ("design", "check", "wireframe", "strut", "sections", "starter")
 _WRONG_INPUT = 2
 _FAULT = 70
 _INTERRUPTED = 130

@@ -123,7 +123,8 @@ def _warnings(name: str, report: Report) -> list[str]:
     if not counts:
         return []
     listed = "; ".join(f"{code} {meaning}" + (f" ({n})" if n > 1 else "") for (code, meaning), n in counts.items())
-    return [f"the import of {name} gave {counts.total()} warnings: {listed}; each stands in the findings"]
+    many = "s" if counts.total() > 1 else ""
+    return [f"the import of {name} gave {counts.total()} warning{many}: {listed}; the findings say where"]
 
 
 def _marked_copy(path: Path, report: Report, source: str) -> tuple[bytes, list[str]]:

@@ -8,6 +8,7 @@ from spanwright.io.wireframe.purlin_marks import MarkedPurlins
 _ACTIONS = """\
 # actions = "SANS 10160:2011"       # REQUIRED. Loading standard and edition: sets the load factors
 """
+_CHOICES = '"at joints", a greatest spacing "1.5 m", or a list of distances up the slope from the roof\'s edge'
 _SPACING = """\
 # spacing = "5 m"                   # REQUIRED. Truss to truss
 """
@@ -29,7 +30,8 @@ def project_text(wireframe: Wireframe, drawing_name: str) -> str:
     """Return a project file (TOML) with the joints, bars, bearings and restraint that were recognised.
 
     Keys that have no safe default stand as remarks that begin with `# ` and hold REQUIRED: take the `# ` away and
-    choose. Coordinates are written to the last digit, so that a truss drawn from here comes back unchanged.
+    choose. Where purlins are marked that no rule tells, their key holds what is refused until it is changed.
+    Coordinates are written to the last digit, so that a truss drawn from here comes back unchanged.
     """
     given, report = wireframe.given, wireframe.report
     warnings = sum(finding.severity == "warning" for finding in report.findings)
@@ -74,7 +76,8 @@ def _purlins(marked: MarkedPurlins) -> list[str]:
         if marked.purlins:
             listed = ", ".join(f"{purlin.along:.1f}" for purlin in marked.purlins)
             lines.append(f"# purlins are marked along the top chord, from its first joint, at {listed} mm")
-        return [*lines, '# purlins = "at joints"            # or a spacing "1.5 m", or distances up the slope']
+            return [*lines, f'purlins = "as marked"              # REQUIRED. {_CHOICES}']
+        return [*lines, f'# purlins = "at joints"            # {_CHOICES}']
     if marked.rule == "at joints":
         return [*lines, 'purlins = "at joints"']
     return [*lines, "purlins = [" + ", ".join(_length(distance) for distance in marked.rule) + "]"]

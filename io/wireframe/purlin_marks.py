@@ -12,7 +12,10 @@ from spanwright.io.wireframe.marks import FlatMark, stray
 from spanwright.io.wireframe.network import Remark
 from spanwright.truss.arrays import FloatArray
 from spanwright.truss.chords import slopes
+from spanwright.truss.errors import InputError
+from spanwright.truss.inputs import RestraintInput
 from spanwright.truss.model import Truss
+from spanwright.truss.purlins import lay_purlins
 from spanwright.truss.tolerances import TOLERANCES
 
 _WIDEST_PAIR = 1000.0  # mm from the apex: two ridge purlins further apart are no pair (practice: 150 to 300 mm)
@@ -85,14 +88,14 @@ def _purlin(truss: Truss, directions: FloatArray, along: float) -> PurlinMark:
 
 
 def _with_rule(truss: Truss, purlins: tuple[PurlinMark, ...]) -> tuple[MarkedPurlins, list[Remark]]:
-    chord, apex = truss.top, slopes(truss).apex_along
+    apex = slopes(truss).apex_along
     alongs = np.array([purlin.along for purlin in purlins])
     at_ridge = bool(np.abs(alongs - apex).min() <= TOLERANCES.on_joint)
     pair = None if at_ridge else _pair(alongs - apex)
     if not at_ridge and pair is None:
         return MarkedPurlins(purlins), [_no_rule("none is marked at the ridge, where a project file has one or a pair")]
-    if at_ridge and all(purlin.joint for purlin in purlins) and len(purlins) == len(chord.joints):
-        return MarkedPurlins(purlins, "at joints"), []
+    if _tells(truss, "at joints", pair, alongs):
+        return MarkedPurlins(purlins, "at joints", pair), []
     sides = _sides(truss, alongs, apex, pair or 0.0)
     first, *others = sides
     alike = all(len(side) == len(first) and np.allclose(side, first, atol=TOLERANCES.on_joint) for side in others)
@@ -101,7 +104,19 @@ def _with_rule(truss: Truss, purlins: tuple[PurlinMark, ...]) -> tuple[MarkedPur
         return MarkedPurlins(purlins, None, pair), [
             _no_rule(f"up the slopes from the roof's edge they stand at {listed}")
         ]
-    return MarkedPurlins(purlins, tuple(round(distance, 1) for distance in first), pair), []
+    rule = tuple(round(distance, 1) for distance in first)
+    if not _tells(truss, rule, pair, alongs):
+        return MarkedPurlins(purlins, None, pair), [_no_rule("a list of these distances would give other lines")]
+    return MarkedPurlins(purlins, rule, pair), []
+
+
+def _tells(truss: Truss, rule: PurlinRule, pair: float | None, alongs: FloatArray) -> bool:
+    """Return whether a rule gives the lines that are marked, `alongs` (p,) mm, and no other."""
+    try:
+        lines = lay_purlins(truss, RestraintInput(rule, "none", "nothing", True, pair))
+    except InputError:
+        return False
+    return len(lines) == len(alongs) and np.allclose([line.along for line in lines], alongs, atol=TOLERANCES.on_joint)
 
 
 def _pair(from_apex: FloatArray) -> float | None:

@@ -16,7 +16,7 @@ def report_text(report: Report) -> str:
 
     Of many findings of one code the first are shown; `report_record` has all.
     """
-    lines = [f"Wireframe {report.drawing}", *_facts(report.facts), ""]
+    lines = [f"Wireframe {_printable(report.drawing)}", *_facts(report.facts), ""]
     by_code: defaultdict[str, list[Finding]] = defaultdict(list)
     for finding in report.findings:
         by_code[finding.code].append(finding)
