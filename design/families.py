@@ -7,7 +7,7 @@ from typing import Any
 import numpy as np
 
 from spanwright.design.candidates import FAMILIES, Candidates, Family
-from spanwright.design.catalogue import COMMERCIAL, DENSITY, STOCKS, TO_ORDER, Catalogue, Process, shipped
+from spanwright.design.catalogue import COMMERCIAL, DENSITY, STOCKS, Catalogue, Process, shipped
 from spanwright.design.section_names import SectionName, angle_name, parse, tube_name
 from spanwright.design.section_rows import AngleRows, TubeRows, angle_rows, tube_rows
 from spanwright.design.steels import steel as grade_of
@@ -31,6 +31,7 @@ def candidates(
     min_thickness: float,
     min_wall: float,
     stocked: str,
+    equal_legs: bool = False,
     process: Process = "cold",
     catalogue: Catalogue | None = None,
 ) -> Candidates:
@@ -39,7 +40,9 @@ def candidates(
     steel : grade of the angles; tubes take its hollow-section twin.
     gap : mm between the angles of a pair. min_leg, min_thickness : mm, of angles. min_wall : mm, of tubes.
     stocked : a market whose stock marks filter the angles that have them, or "any". A size stocked in commercial
-        quality only is kept for steels without a certificate alone. Tables without marks pass; see `stock_notes`.
+        quality only is kept for steels without a certificate alone. Tables without marks pass;
+        see `spanwright.design.section_warnings`.
+    equal_legs : of angles, only those with equal legs.
     process : "cold" formed or "hot" finished tubes. catalogue : the shipped one unless given.
     Sections thicker than the grade's values reach are left out. Unequal legs come both ways round, and so do
     rectangular tubes.
@@ -56,6 +59,7 @@ def candidates(
     if isinstance(rows, AngleRows):
         keep &= (np.minimum(rows.shape.upright, rows.shape.level) >= min_leg) & (shape.thickness >= min_thickness)
         keep &= _in_stock(rows, stocked, certified=grade.certified)
+        keep &= (rows.shape.upright == rows.shape.level) | (not equal_legs)
         return _angles(family, rows.take(keep), steel, gap)
     return _tubes(family, rows.take(keep & (shape.thickness >= min_wall) & (rows.hot == (process == "hot"))), steel)
 
@@ -72,14 +76,15 @@ def find(
     *,
     steel: str,
     gap: float = 0.0,
+    process: Process = "cold",
     key: str = "members",
     catalogue: Catalogue | None = None,
 ) -> Candidates:
     """Return one section by the name a user writes, as candidates of length 1; no limit or stock mark is applied.
 
     steel : grade of angles; a tube takes its hollow-section twin. gap : mm, of a pair whose name states none.
-    key : project-file key for messages. A tube is cold formed unless the name says "hot finished" or the catalogue
-    has the size hot finished only.
+    process : of a tube whose name states none, where the catalogue has the size so; else as it has it.
+    key : project-file key for messages.
     Raises `InputError` for a text that is no section name or leaves open which way round, `UnknownNameError` for a
     size that is not in the catalogue.
     """
@@ -87,7 +92,7 @@ def find(
     rows = family_rows(catalogue or shipped(), said.family)
     here = np.array([size == said.size for size in rows.sizes])
     if isinstance(rows, TubeRows):
-        here = _of_process(here, rows.hot, said.process)
+        here = _of_process(here, rows.hot, said.process, process)
     if not here.any():
         raise _unknown(said, rows, key)
     picked = rows.take(here)
@@ -104,26 +109,6 @@ def find(
     return readings
 
 
-def stock_notes(chosen: Candidates, *, steel: str, stocked: str) -> tuple[str, ...]:
-    """Return a sentence for every chosen section whose supply is in doubt; none where `stocked` is "any"."""
-    if stocked == "any":
-        return ()
-    certified = grade_of(steel).certified
-    notes: list[str] = []
-    for i, (piece, mark) in enumerate(zip(chosen.piece_names, chosen.stock, strict=True)):
-        if chosen.family in TUBES:
-            notes.append(f"{piece}: no stock list of hollow sections for {stocked} is known, ask the merchant")
-        elif chosen.leg_connected[i] != chosen.leg_outstanding[i]:
-            notes.append(f"{piece}: no stock list of unequal angles for {stocked} is known, ask the merchant")
-        elif not mark:
-            notes.append(f"{piece}: not on the stock list for {stocked}")
-        elif mark == COMMERCIAL and certified:
-            notes.append(f"{piece}: stocked in {COMMERCIAL} only, not as {steel}")
-        elif mark.endswith(TO_ORDER):
-            notes.append(f"{piece}: on the stock list for {stocked}, but subject to availability")
-    return tuple(dict.fromkeys(notes))
-
-
 def _in_stock(rows: AngleRows, stocked: str, *, certified: bool) -> BoolArray:
     """True where a row's table has no marks for the market, or its mark offers the quality asked for."""
     if stocked == "any":
@@ -138,7 +123,7 @@ def _unknown(said: SectionName, rows: AngleRows | TubeRows, key: str) -> Unknown
     made = ""
     if isinstance(rows, TubeRows) and said.process:
         made = PROCESS_WORDS[said.process]
-        rows = rows.take(_of_process(np.ones(len(rows.sizes), dtype=np.bool_), rows.hot, said.process))
+        rows = rows.take(_of_process(np.ones(len(rows.sizes), dtype=np.bool_), rows.hot, said.process, ""))
     prefix = said.family.removesuffix(" star")
     known = np.array([_lengths(size) for size in rows.sizes])
     nearest = f"{prefix} {rows.sizes[np.argmin(np.sum(np.abs(known - _lengths(said.size)) / known, axis=1))]}{made}"
@@ -150,12 +135,10 @@ def _lengths(size: str) -> list[float]:
     return [float(length) for length in size.split("x")]
 
 
-def _of_process(here: BoolArray, hot: BoolArray, process: str) -> BoolArray:
-    """Keep the process stated, or cold formed where both are made."""
-    if process == "hot":
-        return here & hot
-    cold: BoolArray = here & ~hot
-    return cold if process == "cold" or cold.any() else here
+def _of_process(here: BoolArray, hot: BoolArray, stated: str, usual: str) -> BoolArray:
+    """Keep the process stated; where none is, the usual one if the size is made so."""
+    kept: BoolArray = here & (hot == ((stated or usual) == "hot"))
+    return kept if stated or kept.any() else here
 
 
 def _turned(family: Family, rows: AngleRows | TubeRows, steel: str, gap: float) -> Candidates:

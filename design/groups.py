@@ -104,7 +104,7 @@ def sections_for(group: Group, members: MembersInput) -> Candidates:
             group.key,
         )
     if not group.sized:
-        return find(group.wanted, steel=members.steel, gap=members.gap, key=group.key)
+        return find(group.wanted, steel=members.steel, gap=members.gap, process=members.tube_process, key=group.key)
     options = candidates(
         cast(Family, group.wanted),
         steel=members.steel,
@@ -113,6 +113,8 @@ def sections_for(group: Group, members: MembersInput) -> Candidates:
         min_thickness=members.min_thickness,
         min_wall=members.min_wall,
         stocked=members.stocked,
+        equal_legs=members.equal_legs,
+        process=members.tube_process,
     )
     if len(options) == 0:
         raise InputError(

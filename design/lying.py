@@ -55,3 +55,14 @@ def edges(section: Candidates, role: Role) -> tuple[float, float]:
         return lower, upper
     farther = max(-lower, upper)
     return -farther, farther
+
+
+def way_round(section: Candidates) -> str:
+    """Say which way round a chosen section stands, as the workshop says it; "" where there is one way only."""
+    in_plane, across = float(section.leg_connected[0]), float(section.leg_outstanding[0])
+    if in_plane == across:
+        return ""
+    if section.family in TUBES:
+        return f"{'upright' if in_plane > across else 'flat'}: its side of {in_plane:g} mm in the plane of the truss"
+    leg = "long" if in_plane > across else "short"
+    return f"{leg} leg to the gusset" if section.pieces == 1 else f"{leg} legs together"

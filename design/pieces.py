@@ -11,10 +11,11 @@ from dataclasses import dataclass, replace
 
 from spanwright.design.cutting import Cut, cuts
 from spanwright.design.hands import SQUARE_WORDS, Ends, ends_and_hand
-from spanwright.design.lying import TUBES, lying
+from spanwright.design.lying import TUBES, lying, way_round
 from spanwright.design.packs import PACK_WIDTH, Pack, packs
 from spanwright.design.setting import Setting
 from spanwright.design.sizing import Choice
+from spanwright.design.slots import SLOT_CLEARANCE, slotted_ends
 from spanwright.design.standard import Demand
 from spanwright.design.steels import steel
 from spanwright.truss.model import Truss
@@ -23,8 +24,8 @@ from spanwright.truss.tolerances import TOLERANCES
 STEEPEST_MITRE = 45.0
 """Degrees from square that any band saw reaches (common practice: 45 to 60)."""
 
-Shape = tuple[str, str, str, float, Ends]
-"""What makes pieces identical but for their hand: role, section, grade, cut length, ends."""
+Shape = tuple[str, str, str, str, float, Ends]
+"""What makes pieces identical but for their hand: role, section, way round, grade, cut length, ends."""
 
 
 @dataclass(frozen=True)
@@ -40,7 +41,9 @@ class Piece:
     paint_area : m2 each, the whole outline, contact faces of pairs included, ends not.
     ends : preparation of the two ends: "square", "mitre 12.0 deg, long at heel" (degrees from square),
         "profile to CHS 139.7x5 at 48.0 deg" (between the axes).
-    bars : names of the bars it makes up in one truss. remarks : sentences.
+    bars : names of the bars it makes up in one truss.
+    way : which way round it stands, "short leg to the gusset"; "" where there is one way only.
+    remarks : sentences, the way round first.
     """
 
     mark: str
@@ -55,6 +58,7 @@ class Piece:
     paint_area: float
     ends: Ends
     bars: tuple[str, ...]
+    way: str = ""
     remarks: tuple[str, ...] = ()
 
     @property
@@ -84,6 +88,7 @@ def _pieces(setting: Setting, cut: Cut) -> Iterator[Piece]:
     """Make the pieces that lie side by side in one run, as yet without marks."""
     section, role = cut.choice.section, cut.choice.group.role
     step = TOLERANCES.same_length
+    way = way_round(section)
     for lies in lying(section, role):
         length = cut.length(lies) / step
         whole = round(length) if "chord" in role else math.floor(length + TOLERANCES.length_dust / step)
@@ -101,7 +106,8 @@ def _pieces(setting: Setting, cut: Cut) -> Iterator[Piece]:
             paint_area=float(section.surface[0]) / section.pieces * step * whole / 1e3,
             ends=ends,
             bars=tuple(setting.truss.bar_names[bar] for bar in cut.bars),
-            remarks=_remarks(setting, cut, step * whole),
+            way=way,
+            remarks=((way,) if way else ()) + _remarks(setting, cut, step * whole),
         )
 
 
@@ -118,16 +124,30 @@ def _remarks(setting: Setting, cut: Cut, length: float) -> tuple[str, ...]:
         found.append(f"a mitre of more than {STEEPEST_MITRE:g} deg from square: check that the saw reaches it")
     if _ends_on_other_chord(setting.truss, cut):
         found.append("meets the other chord at the heel: nominal to the joint, trim to suit the heel detail")
-    weld = _end_weld(setting, cut)
+    slots = _slots(setting, cut)
+    weld = _end_weld(setting, cut, slots)
+    if slots:
+        where, wide = "both ends" if slots > 1 else "one end", setting.project.members.gap + SLOT_CLEARANCE
+        found.append(
+            f"slotted over the gusset at {where}: slots {wide:g} mm wide, at least {weld:.0f} mm of weld along each side "
+            "of the gusset"
+        )
     if length < 2.0 * weld:
         found.append(f"too short for the end welds assumed, {weld:.0f} mm along each edge at each end")
     return tuple(found)
 
 
-def _end_weld(setting: Setting, cut: Cut) -> float:
+def _slots(setting: Setting, cut: Cut) -> int:
+    """Return how many ends of a piece are slotted over a gusset."""
+    ends = slotted_ends(setting.truss, setting.groups, setting.options)
+    return min(2, int(ends[list(cut.bars)].sum()))
+
+
+def _end_weld(setting: Setting, cut: Cut, slots: int) -> float:
     """Return mm of weld along each edge that the checks assume at an end of a web; 0 where they assume none."""
     choice, ends = cut.choice, setting.project.ends
-    if "chord" in choice.group.role or choice.section.family in TUBES or ends.kind != "welded":
+    angle = "chord" not in choice.group.role and choice.section.family not in TUBES and ends.kind == "welded"
+    if not (slots or angle):
         return 0.0
     return ends.weld_length * float(choice.section.leg_connected[0])
 
@@ -167,7 +187,7 @@ def _marked(setting: Setting, raw: list[Piece]) -> list[Piece]:
 
 
 def _shape(piece: Piece) -> Shape:
-    return piece.description, piece.section, piece.grade, piece.cut_length, piece.ends
+    return piece.description, piece.section, piece.way, piece.grade, piece.cut_length, piece.ends
 
 
 def _free_name(name: str, taken: set[str]) -> str:

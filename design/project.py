@@ -5,6 +5,7 @@ from __future__ import annotations
 from dataclasses import dataclass, field
 from typing import Any, Literal
 
+from spanwright.design.catalogue import Process
 from spanwright.design.standard import Ends, Packs
 from spanwright.loads.inputs import LoadsInput
 from spanwright.loads.site_inputs import SiteInput
@@ -21,7 +22,9 @@ class MembersInput:
     by_role : for each role a family to choose from ("2L") or one section ("2L 80x80x6").
     by_group : the same for groups that the user names; overrides the role.
     min_leg, min_thickness, min_wall : mm; legs and thickness of angles, wall of tubes.
-    stocked : "South Africa" or "any".
+    stocked : "South Africa" or "any". equal_legs : of angles to choose from, only those with equal legs.
+    tube_process : whether tubes are taken from the "cold" formed or the "hot" finished sizes; struts have the strength
+        of cold-formed ones either way.
     fixings : share of the own mass added for gussets and bolts; absent where it helps.
     packs, stock_length (mm), setback (mm), web_angles : as in the project file.
     """
@@ -34,6 +37,8 @@ class MembersInput:
     min_thickness: float = 5.0
     min_wall: float = 3.0
     stocked: str = "South Africa"
+    equal_legs: bool = False
+    tube_process: Process = "cold"
     fixings: float = 0.08
     packs: Packs = Packs()
     stock_length: float = 12000.0

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 import numpy as np
 
@@ -11,6 +11,7 @@ from spanwright.design.candidates import Candidates
 from spanwright.design.demand import demand
 from spanwright.design.groups import Group
 from spanwright.design.project import Project
+from spanwright.design.slots import slot_widths
 from spanwright.design.standard import Demand, Standard
 from spanwright.loads.cases import LoadSet
 from spanwright.loads.combinations import Combination
@@ -53,4 +54,6 @@ def demand_of(setting: Setting, chosen: list[int]) -> tuple[Analysis, Demand]:
     mass, stiffness = section_arrays(setting, chosen)
     fixings = setting.project.members.fixings
     analysis = analyse(setting.truss, setting.load_set, setting.combinations, mass, stiffness, fixings)
-    return analysis, demand(setting.truss, setting.project, setting.lengths, setting.load_set.stations, analysis)
+    wanted = demand(setting.truss, setting.project, setting.lengths, setting.load_set.stations, analysis)
+    slots = slot_widths(setting.truss, setting.groups, setting.options, setting.project.members.gap)
+    return analysis, replace(wanted, slots=slots)

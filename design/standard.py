@@ -15,7 +15,8 @@ class Ends:
     """End connections that tension checks assume until joints are designed, and then require of them.
 
     kind : "welded" or "bolted".
-    weld_length : least length of the weld along each edge of the connected leg, in multiples of that leg.
+    weld_length : least length of the weld along each edge of the connected leg, in multiples of that leg; of a tube
+        slotted over a gusset: along each side of the gusset at both slots, in multiples of its depth.
     bolts : bolts in one line along the member; `bolt_diameter` mm; `punched` holes (else drilled); `bolt_grade` "8.8".
     """
 
@@ -59,6 +60,8 @@ class Demand:
     gusset : mm, thickness of the gussets: eccentricity of single angles that the one-leg rule does not cover.
     heel_up : (b,) True where the outstanding legs of a pair lie at the upper fibre; None: of every member, as in
         a top chord.
+    slots : (b,) mm, width of the slots of a tube that is fitted over a gusset at an end, 0 where it is welded all
+        round; None: nowhere.
     """
 
     bars: tuple[str, ...]
@@ -79,6 +82,7 @@ class Demand:
     packs: Packs
     gusset: float = 8.0
     heel_up: BoolArray | None = None
+    slots: FloatArray | None = None
 
 
 CheckKind = Literal["strength", "limit"]

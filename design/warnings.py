@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from spanwright.design.families import stock_notes
+from spanwright.design.section_warnings import section_warnings
 from spanwright.design.setting import Setting
 from spanwright.design.sizing import Choice, governing
 
@@ -16,18 +16,10 @@ def warnings_of(setting: Setting, choices: tuple[Choice, ...]) -> tuple[str, ...
         *setting.truss.warnings,
         *setting.restraint.warnings,
         *setting.load_set.warnings,
-        *_stock(setting, choices),
+        *section_warnings(setting, choices),
         *_legs_above_the_chords(choices),
         *_not_passing(setting, choices),
     )
-
-
-def _stock(setting: Setting, choices: tuple[Choice, ...]) -> list[str]:
-    members = setting.project.members
-    notes = [
-        note for choice in choices for note in stock_notes(choice.section, steel=members.steel, stocked=members.stocked)
-    ]
-    return list(dict.fromkeys(notes))
 
 
 def _legs_above_the_chords(choices: tuple[Choice, ...]) -> list[str]:

@@ -10,6 +10,8 @@ from spanwright.io.schema_fields import Name, Share, Table, counted, field, key,
 from spanwright.truss.errors import InputError
 
 Stock = Literal["South Africa", "any"]
+Legs = Literal["any", "equal"]
+TubeMaking = Literal["cold formed", "hot finished"]
 PackFixing = Literal["snug", "welded"]
 WebAngles = Literal["all on one side", "on both sides"]
 EndKind = Literal["welded", "bolted"]
@@ -69,6 +71,8 @@ class MembersTable(Table):
     min_thickness: Annotated[float, length("2 mm", "40 mm", "mm")] = key("least thickness of angles", "5 mm")
     min_wall: Annotated[float, length("1.5 mm", "40 mm", "mm")] = key("least wall of tubes", "3 mm")
     stocked: Annotated[Stock, one_of(Stock)] = key("whose stock marks limit the choice", "South Africa")
+    legs: Annotated[Legs, one_of(Legs)] = key("of angles to choose from", "any")
+    tubes: Annotated[TubeMaking, one_of(TubeMaking)] = key("how hollow sections are made", "cold formed")
     fixings: Share = key("of own mass, for gussets and bolts", "8 %")
     packs: Annotated[int, field(_packs)] = key("packing plates in panels that see compression", "2 a panel")
     pack_fixing: Annotated[PackFixing, one_of(PackFixing)] = key("how packs are fixed", "snug")
@@ -93,6 +97,8 @@ class MembersTable(Table):
             min_thickness=self.min_thickness,
             min_wall=self.min_wall,
             stocked=self.stocked,
+            equal_legs=self.legs == "equal",
+            tube_process="hot" if self.tubes == "hot finished" else "cold",
             fixings=self.fixings,
             packs=Packs(self.packs, PACK_FACTORS[self.pack_fixing]),
             stock_length=self.stock_length,

@@ -46,10 +46,14 @@ def limit_check(
     rules: tuple[Rule, ...],
     shape: tuple[int, int],
     applies: BoolArray | None = None,
+    unit: str = "-",
 ) -> Check:
-    """Return the check of a slenderness against its limit; `applies` (s, b) or (b,) masks where it arises."""
+    """Return the check of a value, such as a slenderness, against its limit, both in `unit`.
+
+    applies : (s, b) or (b,), masks where it arises.
+    """
     value = np.broadcast_to(value, shape)
     if applies is not None:
         value = np.where(applies, value, 0.0)
     limit = np.broadcast_to(limit, shape)
-    return Check(name, clause, "limit", value / limit, np.full(shape, -1), value, limit, "-", rules)
+    return Check(name, clause, "limit", value / limit, np.full(shape, -1), value, limit, unit, rules)

@@ -1,4 +1,4 @@
-"""Limits: slenderness (cl. 10.4.2) and the spacing of packs (cl. 19). Pass or fail, no part of the utilisation."""
+"""Limits: slenderness (cl. 10.4.2), spacing of packs (cl. 19), bolts that fit. Pass or fail, no utilisation."""
 
 from __future__ import annotations
 
@@ -6,6 +6,8 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from spanwright.design.back_marks import CLAUSE as BACK_MARKS
+from spanwright.design.back_marks import bolt_fit
 from spanwright.design.sans.built_up import TIE_SPACING, StrutPacks, TiePacks, pair_slenderness
 from spanwright.design.sans.case import Case
 from spanwright.design.sans.checking import limit_check
@@ -13,6 +15,7 @@ from spanwright.design.sans.constants import number
 from spanwright.design.sans.effects import column
 from spanwright.design.sans.one_leg import CLAUSE
 from spanwright.design.sans.struts import one_leg, one_leg_applies, pair_sideways
+from spanwright.design.sans.ties import TUBES
 from spanwright.design.standard import Check
 from spanwright.design.steps import Rule, given, step
 from spanwright.truss.arrays import FloatArray
@@ -39,7 +42,11 @@ class Slenderness(Rule):
 
 
 def limit_checks(case: Case) -> tuple[Check, ...]:
-    """Return the slenderness limits of the family and, for pairs, the spacing of packs."""
+    """Return the slenderness limits of the family, for pairs the spacing of packs, and whether bolts fit the leg."""
+    return (*_slender(case), *_bolts(case))
+
+
+def _slender(case: Case) -> tuple[Check, ...]:
     if case.candidates.family == "L":
         return _minor_axis(case), _one_leg(case)
     if case.candidates.family == "2L star":
@@ -90,3 +97,14 @@ def _spacing(case: Case) -> tuple[Check, Check]:
         limit_check(name, "19.1", strut.slenderness, strut.limit, (strut,), shape, compressed),
         limit_check(f"{name}, tie", "19.2", tie.slenderness, TIE_SPACING, (tie,), shape, ~compressed),
     )
+
+
+def _bolts(case: Case) -> tuple[Check, ...]:
+    """Return the check of angles with bolted ends; bolts of tubes stand in plates, which belong to the joint."""
+    ends = case.demand.ends
+    if ends.kind != "bolted" or case.candidates.family in TUBES:
+        return ()
+    rule = bolt_fit(column(case.candidates.leg_connected), ends.bolt_diameter)
+    diameter = np.asarray(rule.diameter)
+    name = "bolt fits the connected leg"
+    return (limit_check(name, BACK_MARKS, diameter, rule.greatest, (rule,), case.shape, unit="mm"),)

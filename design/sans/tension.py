@@ -1,7 +1,7 @@
 """Tension (cl. 12.3, 13.2): yield of the gross section, fracture of the net section with shear lag.
 
-Block shear belongs to the joint. Tubes are taken as welded all round, whatever the stated ends: a bolted end plate
-or cleat has its own net section, which belongs to the joint too.
+Block shear belongs to the joint. Tubes are taken as welded, whatever the stated ends: to tubes all round, to a gusset
+along slots. A bolted end plate or cleat has its own net section, which belongs to the joint too.
 """
 
 from __future__ import annotations
@@ -148,3 +148,41 @@ class WeldedTube(Rule):
     @step("A_ne", "mm2", "12.3.3.1", "A", "effective net area; the end is taken as welded all round")
     def net_area(self) -> FloatArray:
         return self.area
+
+
+@dataclass(frozen=True, eq=False)
+class SlottedTube(Rule):
+    """Effective net area of a tube slotted over a gusset and welded along it (12.3.2, 12.3.3.3).
+
+    Each half of the wall is an element connected along two parallel edges. Later editions of S16 allow more.
+    """
+
+    area: FloatArray = given("A", "mm2", "gross area")
+    thickness: FloatArray = given("t", "mm", "wall")
+    slot: FloatArray = given("b_s", "mm", "width of the slots, 0 where both ends are welded all round")
+    weld: FloatArray = given("L", "mm", "length of each of the four welds")
+
+    @step("A_n", "mm2", "12.3.2", "A - 2*b_s*t", "net area, both slots taken off")
+    def plain_net_area(self) -> FloatArray:
+        return self.area - 2.0 * self.slot * self.thickness
+
+    @step("w", "mm", "12.3.3.3", "A_n/(2*t)", "half of the wall, from weld to weld")
+    def width(self) -> FloatArray:
+        return self.plain_net_area / (2.0 * self.thickness)
+
+    @step(
+        "U",
+        "-",
+        "12.3.3.3",
+        f"where(b_s <= 0, 1, where(L >= 2*w, {WELD_LONG:g}, where(L >= w, {MID_WIDTH:g} + {MID_LENGTH:g}*L/w, "
+        f"{WELD_SHORT:g}*L/w)))",
+        "shear lag",
+    )
+    def lag(self) -> FloatArray:
+        w, L = self.width, self.weld
+        along = np.where(2 * w <= L, WELD_LONG, np.where(w <= L, MID_WIDTH + MID_LENGTH * L / w, WELD_SHORT * L / w))
+        return np.where(self.slot <= 0.0, 1.0, along)
+
+    @step("A_ne", "mm2", "12.3.3.3", "U*A_n", "effective net area of the member")
+    def net_area(self) -> FloatArray:
+        return self.lag * self.plain_net_area

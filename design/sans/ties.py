@@ -10,18 +10,20 @@ from spanwright.design.sans.case import Case
 from spanwright.design.sans.checking import strength_check
 from spanwright.design.sans.compression import PHI
 from spanwright.design.sans.effects import column
-from spanwright.design.sans.tension import BoltedAngle, GrossYield, NetFracture, WeldedAngle, WeldedTube
+from spanwright.design.sans.tension import BoltedAngle, GrossYield, NetFracture, SlottedTube, WeldedAngle, WeldedTube
 from spanwright.design.standard import Check
 from spanwright.truss.arrays import FloatArray
 
 TUBES = ("CHS", "SHS", "RHS")
+
+NetSection = WeldedAngle | BoltedAngle | WeldedTube | SlottedTube
 
 
 @dataclass(frozen=True, eq=False)
 class Tie:
     """The rules of a member in tension."""
 
-    net: WeldedAngle | BoltedAngle | WeldedTube
+    net: NetSection
     gross_yield: GrossYield
     fracture: NetFracture
 
@@ -47,12 +49,16 @@ def tension_checks(case: Case, tie: Tie) -> tuple[Check, Check]:
     )
 
 
-def net_section(case: Case) -> WeldedAngle | BoltedAngle | WeldedTube:
-    """Return the net section: angles by their stated ends; tubes always as welded all round."""
+def net_section(case: Case) -> NetSection:
+    """Return the net section: angles by their stated ends, tubes welded, all round or where slotted over a gusset."""
     c, ends = case.candidates, case.demand.ends
-    if c.family in TUBES:
-        return WeldedTube(column(c.area))
     connected, thickness = column(c.leg_connected), column(c.thickness)
+    if c.family in TUBES:
+        slots = case.demand.slots
+        if slots is None or not slots.any():
+            return WeldedTube(column(c.area))
+        weld = ends.weld_length * connected
+        return SlottedTube(column(c.area), thickness, slots, weld)
     if ends.kind == "welded":
         weld = ends.weld_length * connected
         return WeldedAngle(c.pieces, connected, column(c.leg_outstanding), thickness, weld, weld)

@@ -5,7 +5,6 @@ from __future__ import annotations
 from spanwright import __version__
 from spanwright.design.nesting import END_TRIM, KERF
 from spanwright.design.result import Design
-from spanwright.design.standard import Ends
 from spanwright.io.files import input_hash
 from spanwright.io.schedule.table import Column, Table, table
 from spanwright.io.text import kilograms, metres
@@ -28,6 +27,11 @@ READING = (
         "turned; they are rounded down to 1 mm. Tubes that meet tubes are cut to their face. Whether webs "
         "of one joint clear each other is settled with its gusset.",
     ),
+    (
+        "Way round",
+        "The remarks of every angle with unequal legs say which leg goes to the gusset, of pairs which legs are "
+        "together. Turned the other way the member may fail.",
+    ),
     ("Ends", "Degrees of a mitre are from square; of a profile, between the two axes."),
     ("Mass", "Mass per metre times cut length, nothing taken off for mitres and holes."),
     (
@@ -44,7 +48,7 @@ def notes_table(design: Design) -> Table:
         *_truss(design),
         *READING,
         ("Cutting", _cutting(design)),
-        ("Ends required", _ends(design.setting.project.ends)),
+        ("Ends required", _ends(design)),
     ]
     rows += [("Warning", warning) for warning in design.warnings]
     rows += [("Caution", caution) for caution in design.cautions]
@@ -81,11 +85,14 @@ def _cutting(design: Design) -> str:
     )
 
 
-def _ends(ends: Ends) -> str:
+def _ends(design: Design) -> str:
+    ends, slots = design.setting.project.ends, design.demand.slots
+    slotted = ""
+    if slots is not None and slots.any():
+        slotted = f" Tubes slotted over gussets: four welds a slotted end, {ends.weld_length:g} times the depth long."
     begin = "The checks of tension assume, and so require: "
     if ends.kind == "welded":
-        return f"{begin}end welds at least {ends.weld_length:g} times the connected leg long, along each edge of it."
-    holes = "punched" if ends.punched else "drilled"
-    return (
-        f"{begin}{ends.bolts} bolts M{ends.bolt_diameter:g} {ends.bolt_grade} in one line at each end, holes {holes}."
-    )
+        welds = f"end welds at least {ends.weld_length:g} times the connected leg long, along each edge of it."
+        return f"{begin}{welds}{slotted}"
+    bolts = f"{ends.bolts} bolts M{ends.bolt_diameter:g} {ends.bolt_grade} in one line at each end"
+    return f"{begin}{bolts}, holes {'punched' if ends.punched else 'drilled'}.{slotted}"

@@ -9,7 +9,8 @@ import numpy as np
 import pytest
 
 from spanwright.design.candidates import FAMILIES, Candidates, Family
-from spanwright.design.families import candidates, find, stock_notes
+from spanwright.design.families import candidates, find
+from spanwright.design.section_warnings import stock_notes
 from spanwright.truss.errors import InputError, UnknownNameError
 
 
@@ -230,6 +231,20 @@ def test_unequal_angles_pass_the_stock_filter_with_a_note() -> None:
     assert [name for name in stocked.names if "together" in name] == unequal
 
 
+@pytest.mark.parametrize("family", ["L", "2L"])
+def test_equal_legs_keep_to_what_the_stock_list_covers(family: Family) -> None:
+    equal, free = choose(family, equal_legs=True, stocked="South Africa"), choose(family, stocked="South Africa")
+    assert equal.names == tuple(name for name in free.names if "leg" not in name)
+    assert all(equal.stock)
+
+
+def test_a_size_stands_as_the_project_makes_its_tubes_unless_its_name_says_so() -> None:
+    assert one("SHS 80x80x4", process="hot").names == ("SHS 80x80x4, hot finished",)
+    assert one("SHS 80x80x4 cold formed", process="hot").names == ("SHS 80x80x4",)
+    assert one("SHS 80x80x3", process="hot").names == ("SHS 80x80x3",)  # not made hot finished
+    assert one("CHS 76.1x3.6").names == ("CHS 76.1x3.6, hot finished",)  # not made cold formed
+
+
 @pytest.mark.parametrize(
     ("name", "steel", "note"),
     [
@@ -243,9 +258,9 @@ def test_unequal_angles_pass_the_stock_filter_with_a_note() -> None:
     ],
 )
 def test_stock_notes_say_what_is_in_doubt(name: str, steel: str, note: str) -> None:
-    notes = stock_notes(one(name), steel=steel, stocked="South Africa")
+    notes = stock_notes([one(name)], steel=steel, stocked="South Africa")
     assert [note in text for text in notes] == ([True] if note else [])
-    assert stock_notes(one(name), steel=steel, stocked="any") == ()
+    assert stock_notes([one(name)], steel=steel, stocked="any") == ()
 
 
 def test_steel_goes_by_thickness_and_tubes_take_the_twin() -> None:

@@ -249,3 +249,42 @@ def test_a_pack_of_a_starred_pair_reaches_over_both_legs() -> None:
 def test_a_roof_without_pairs_has_no_packs() -> None:
     where = shop(PRATT, sections={"top_chord": "SHS 100x100x5", "bottom_chord": "SHS 100x100x5"})
     assert not any(piece.description == "packing plate" for piece in where.pieces)
+
+
+def test_every_unequal_piece_says_which_leg_goes_to_the_gusset() -> None:
+    """Turned the other way the member fails, and the section of a piece does not show it."""
+    sections = {
+        "top_chord": "2L 80x60x6 long legs together",
+        "bottom_chord": "2L 80x60x6 short legs together",
+        "posts": "L 65x50x5 short leg connected",
+        "diagonals": "L 65x50x5 long leg connected",
+    }
+    told = {
+        "top chord": "long legs together",
+        "bottom chord": "short legs together",
+        "post": "short leg to the gusset",
+        "diagonal": "long leg to the gusset",
+    }
+    cut = [piece for piece in shop(HOWE, sections=sections).pieces if piece.description != "packing plate"]
+    assert {piece.description for piece in cut} == told.keys()
+    for piece in cut:
+        assert piece.way == piece.remarks[0] == told[piece.description]
+    assert all(piece.way == "" for piece in shop(HOWE).pieces)
+
+
+def test_flat_and_upright_tubes_are_told_apart() -> None:
+    sections = {"top_chord": "RHS 120x60x5 flat", "bottom_chord": "RHS 120x60x5 upright"}
+    pieces = shop(HOWE, sections=sections).pieces
+    assert {piece.way for piece in pieces if "chord" in piece.description} == {
+        "flat: its side of 60 mm in the plane of the truss",
+        "upright: its side of 120 mm in the plane of the truss",
+    }
+
+
+def test_pieces_that_differ_in_their_way_round_have_marks_of_their_own() -> None:
+    middle = '[members.groups]\nmiddle = "L 65x50x5 short leg connected"\n[groups]\nmiddle = ["P1"]'
+    where = shop(PRATT, sections={"posts": "L 65x50x5 long leg connected"}, more=middle)
+    first, last = where.piece("R1-P1"), where.piece("R1-P11")
+    assert (first.bars, last.bars) == (("P1",), ("P11",))
+    assert (first.way, last.way) == ("short leg to the gusset", "long leg to the gusset")
+    assert first.cut_length == last.cut_length

@@ -15,6 +15,7 @@ from spanwright.io.project_file import parse_project, read_project
 from spanwright.io.schema import ProjectFile, all_tables
 from spanwright.io.starter import starter_text
 from spanwright.loads.inputs import JointLoad, MostLeast, WindInput
+from spanwright.truss.errors import InputError
 from spanwright.truss.inputs import FormInput, GivenInput, RestraintInput
 
 LEAST = """
@@ -170,6 +171,20 @@ def test_groups_with_a_family_of_their_own() -> None:
     project = parse_project(LEAST + '[groups]\ntie = ["BC3"]\n[members.groups]\ntie = "2L 70x70x6"\n')
     assert project.groups == {"tie": ("BC3",)}
     assert project.members.by_group == {"tie": "2L 70x70x6"}
+
+
+def test_equal_legs_and_hot_finished_tubes_are_stated() -> None:
+    """Stock lists cover equal angles alone; tubes are sized from one table of dimensions."""
+    taken = parse_project(LEAST).members
+    assert (taken.equal_legs, taken.tube_process) == (False, "cold")
+    stated = parse_project(LEAST + '[members]\nlegs = "equal"\ntubes = "hot finished"\n').members
+    assert (stated.equal_legs, stated.tube_process) == (True, "hot")
+
+
+@pytest.mark.parametrize("line", ['legs = "unequal"', 'tubes = "hot"'])
+def test_words_for_legs_and_tubes_nobody_knows_are_refused(line: str) -> None:
+    with pytest.raises(InputError, match="is not one of the choices"):
+        parse_project(f"{LEAST}[members]\n{line}\n")
 
 
 def test_title_block_takes_any_script_and_a_date() -> None:

@@ -80,3 +80,12 @@ def test_the_same_input_gives_the_same_bytes(done: Design, tmp_path: Path) -> No
     assert (
         done.setting.project.source.encode() and json.loads(first)["project"]["as_read"] == done.setting.project.source
     )
+
+
+def test_pieces_of_unequal_angles_say_which_leg_goes_to_the_gusset() -> None:
+    found = document(design(demo("howe_workshop")))
+    unequal = [piece for piece in found["pieces"] if piece["section"].startswith("L ")]
+    assert unequal
+    for piece in unequal:
+        words = ("long legs together", "short legs together", "long leg to the gusset", "short leg to the gusset")
+        assert piece["remarks"][0] in words

@@ -298,6 +298,28 @@ def column_width(sheet: Worksheet, column: int) -> float:
     raise AssertionError(column)
 
 
+def test_every_unequal_angle_says_its_way_round_in_every_list(tmp_path: Path) -> None:
+    """Turned the other way the member fails: csv, xlsx, and the member sheet by the full name of the section."""
+    result = done("howe_workshop")
+    sheets = workbook(result, tmp_path)
+    told = {
+        f"{choice.name}": "legs together" if choice.section.pieces > 1 else "leg to the gusset"
+        for choice in result.choices
+        if choice.section.leg_connected[0] != choice.section.leg_outstanding[0]
+    }
+    assert told
+    by_mark = {piece.mark: piece for piece in result.pieces}
+    for rows, mark, remarks in ((table(sheets["Parts"]), "Mark", "Remarks"), (csv_rows(tmp_path), "mark", "remarks")):
+        for row in rows:
+            piece = by_mark.get(row[mark])
+            if piece is not None and piece.description != "packing plate":
+                name = result.choice_for(result.setting.truss.bar(piece.bars[0]))[0].name
+                leg = "short" if "short" in name else "long"
+                assert f"{leg} {told[name]}" in row[remarks].split("; ")
+    for row in table(sheets["Members"]):
+        assert row["Section"] in told
+
+
 def test_a_folder_that_cannot_be_written_is_named(tmp_path: Path) -> None:
     with pytest.raises(OutputError, match=r"schedule\.csv"):
         write_schedules(done("howe_workshop"), tmp_path / "missing")
