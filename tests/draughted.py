@@ -11,14 +11,15 @@ import numpy as np
 import shapely
 from demos import FOLDER
 from ezdxf.document import Drawing
-from ezdxf.entities import Text
+from ezdxf.entities.text import Text
 from matplotlib.font_manager import FontProperties
 from matplotlib.textpath import TextPath
 
 from spanwright.design.result import Design
 from spanwright.design.run import design
 from spanwright.io.drawing.arrangement import Arrangement, arrange
-from spanwright.io.drawing.document import draw, fixed_marks
+from spanwright.io.drawing.document import draw
+from spanwright.io.drawing.writing import dxf_bytes, fixed_marks
 from spanwright.io.project_file import parse_project
 
 _CAPITAL = 0.729
@@ -36,19 +37,17 @@ def _families(text: str, chords: str, webs: str) -> str:
 
 VARIANTS = {
     "pratt_store": lambda: _text("pratt_store"),
-    "howe_workshop": lambda: _text("howe_workshop"),
     "fink_barn": lambda: _text("fink_barn"),
     "round_tubes": lambda: _families(_text("howe_workshop"), "CHS", "CHS"),
-    "square_tubes": lambda: _families(_text("howe_workshop"), "RHS", "SHS"),
     "starred": lambda: _families(_text("howe_workshop"), "2L", "2L star"),
-    "overhang": lambda: _text("pratt_store").replace("panels     = 12", 'panels     = 12\noverhang   = "0.6 m"'),
     "loose": lambda: (
         _text("pratt_store")
         .replace('anchored_purlins = "all"', "anchored_purlins = [1, 3, 5, 7, 8, 10, 12, 14]")
         .replace('"every 2nd purlin"', '"every purlin"')
+        .replace("panels     = 12", 'panels     = 12\noverhang   = "0.6 m"')
     ),
 }
-"""Project texts by name: the demos, and every kind of section, with loose purlins, with an overhang."""
+"""Project texts by name: demos, tubes, starred pairs, and a roof with overhangs and loose purlins."""
 
 
 @cache
@@ -66,29 +65,27 @@ def arranged(name: str) -> Arrangement:
 @cache
 def drawing(name: str) -> Drawing:
     """Return its drawing as it comes back from the file's text."""
-    return reread(designed(name))
-
-
-def reread(found: Design) -> Drawing:
-    """Draw a design and read the drawing back."""
-    stream = io.StringIO()
     with fixed_marks():
-        draw(found).write(stream)
-    stream.seek(0)
-    return ezdxf.read(stream)  # type: ignore[attr-defined]  # ezdxf re-exports it without saying so
+        content = dxf_bytes(draw(designed(name), arranged(name)))
+    return ezdxf.read(io.StringIO(content.decode()))  # type: ignore[attr-defined]  # re-exported without saying so
+
+
+@cache
+def _extents(text: str) -> tuple[float, float]:
+    """Return where the letters of a text begin and end, for capitals 1 high."""
+    path = TextPath((0.0, 0.0), text, size=1.0 / _CAPITAL, prop=FontProperties(family="DejaVu Sans"))
+    return float(path.get_extents().x0), float(path.get_extents().x1)
 
 
 def outline_of(entity: Text) -> shapely.Polygon:
     """Return the box of a text's letters, measured by matplotlib, in the units of its layout."""
     height, turn = entity.dxf.height, np.radians(entity.dxf.rotation)
-    path = TextPath((0.0, 0.0), entity.plain_text(), size=height / _CAPITAL, prop=FontProperties(family="DejaVu Sans"))
-    extents = path.get_extents()
-    low, high = extents.x0 * entity.dxf.width, extents.x1 * entity.dxf.width
+    low, high = (height * entity.dxf.width * edge for edge in _extents(entity.plain_text()))
     align, start, end = entity.get_placement()
     at = np.array((start if align.name == "LEFT" or end is None else end).vec2)
     shift = {"LEFT": 0.0, "CENTER": -0.5, "RIGHT": -1.0}[align.name.split("_")[-1]] * (high + low)
     drop = -height / 2.0 if align.name.startswith("MIDDLE") else 0.0
-    corners = np.array([[low, 0.0], [high, 0.0], [high, height], [low, height]]) + [shift, drop]
+    corners = np.array([[low, 0.0], [high, 0.0], [high, height], [low, height]]) + np.array([shift, drop])
     turned = corners @ np.array([[np.cos(turn), np.sin(turn)], [-np.sin(turn), np.cos(turn)]])
     return shapely.Polygon(at + turned)
 

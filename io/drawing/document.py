@@ -2,14 +2,10 @@
 
 from __future__ import annotations
 
-import io
-from collections.abc import Iterator
-from contextlib import contextmanager
 from pathlib import Path
 
 import numpy as np
 from ezdxf import units
-from ezdxf._options import options as library
 from ezdxf.document import Drawing
 from ezdxf.filemanagement import new
 from ezdxf.layouts.layout import Paperspace
@@ -18,12 +14,13 @@ from spanwright.design.result import Design
 from spanwright.io.drawing.arrangement import VIEW_TITLE, Arrangement, arrange
 from spanwright.io.drawing.cross_sections import draw_cross_sections
 from spanwright.io.drawing.elevation import draw_elevation
-from spanwright.io.drawing.lettering import LARGE, TEXT, as_dxf
+from spanwright.io.drawing.lettering import LARGE, TEXT, printable
 from spanwright.io.drawing.packing import Spot
 from spanwright.io.drawing.pen import Pen
 from spanwright.io.drawing.rendering import pdf_of
 from spanwright.io.drawing.standards import ELEVATION_STYLE, NOTES, SECTION_STYLE, VIEWPORTS, set_up
 from spanwright.io.drawing.title_block import MARGIN, draw_frame, draw_title_block
+from spanwright.io.drawing.writing import dxf_bytes, fixed_marks
 from spanwright.io.files import input_hash, write_atomically
 from spanwright.truss.arrays import FloatArray
 
@@ -43,27 +40,14 @@ def write_drawing(design: Design, folder: Path) -> None:
     The same design gives the same bytes. Raises OutputError where that cannot be done.
     """
     with fixed_marks():
-        doc = draw(design)
-        stream = io.StringIO()
-        doc.write(stream)
-    write_atomically(folder / "drawing.dxf", stream.getvalue().encode(doc.output_encoding, errors="dxfreplace"))
+        doc = draw(design, arrange(design))
+        content = dxf_bytes(doc)
+    write_atomically(folder / "drawing.dxf", content)
     write_atomically(folder / "drawing.pdf", pdf_of(doc, SHEET, design.setting.project.title))
 
 
-@contextmanager
-def fixed_marks() -> Iterator[None]:
-    """Let ezdxf write no time of day and no random marks."""
-    before = library.write_fixed_meta_data_for_testing
-    library.write_fixed_meta_data_for_testing = True
-    try:
-        yield
-    finally:
-        library.write_fixed_meta_data_for_testing = before
-
-
-def draw(design: Design) -> Drawing:
-    """Return the drawing of a passing design."""
-    arranged = arrange(design)
+def draw(design: Design, arranged: Arrangement) -> Drawing:
+    """Return the drawing of a passing design, arranged so."""
     doc = new(VERSION)
     doc.units = units.MM
     doc.header["$MEASUREMENT"] = 1
@@ -71,7 +55,7 @@ def draw(design: Design) -> Drawing:
     corner = _draw_model(doc, design, arranged)
     _draw_sheet(doc, design, arranged, corner)
     doc.header.custom_vars.append("Input", input_hash(design.setting.project.source))
-    doc.header.custom_vars.append("Title", as_dxf(design.setting.project.title)[:250])
+    doc.header.custom_vars.append("Title", printable(design.setting.project.title)[:250])
     return doc
 
 

@@ -26,7 +26,8 @@ ELLIPSIS = "\u2026"
 LONGEST = 2000
 """Characters of a text that are looked at: a DXF line of text holds about that many."""
 
-_LOOKALIKES = {"\u2212": "-"}
+_LOOKALIKES = {"^": "\u02c6"}
+"""What stands for a character that begins a code wherever it is: a circumflex accent for a caret."""
 _SPLIT = ("%%", "\\U+", "\\u+", "\\M+", "\\m+")
 
 
@@ -45,18 +46,14 @@ def width_of(text: str, height: float = TEXT) -> float:
 def printable(text: str) -> str:
     """Return a text that shows as it is written: no control characters, and nothing a CAD system takes for a code.
 
-    Control characters become a blank, marks of writing direction go, and a blank parts the pairs that begin a code.
+    Control characters become a blank, marks of writing direction go, a caret becomes an accent, and a blank parts the
+    pairs that begin a code.
     """
     shown = "".join(_shown(char) for char in text[:LONGEST])
     for code in _SPLIT:
         while code in shown:
             shown = shown.replace(code, f"{code[0]} {code[1:]}")
     return shown
-
-
-def as_dxf(text: str) -> str:
-    """Return a printable text as DXF stores it: a blank behind a caret makes it one."""
-    return printable(text).replace("^", "^ ")
 
 
 def _shown(char: str) -> str:

@@ -118,7 +118,7 @@ def _place(sheet: Spot, taken: list[Spot], block: Block, free: float) -> tuple[i
 
 def _highest(sheet: Spot, taken: list[Spot], size: Size, free: float, *, at_right: bool) -> Spot | None:
     """Return the highest free spot against edges of the sheet and of what is taken, there the one farthest aside."""
-    left, right, bottom, top = np.array([(spot.left, spot.right, spot.bottom, spot.top) for spot in taken]).T
+    left, right, bottom, top = np.reshape([(spot.left, spot.right, spot.bottom, spot.top) for spot in taken], (-1, 4)).T
     tops = np.unique(np.append(bottom - free, sheet.top))[::-1]
     lefts = np.unique(np.concatenate([right + free, left - free - size[0], [sheet.left, sheet.right - size[0]]]))
     tops = tops[(tops <= sheet.top + SLACK) & (tops - size[1] >= sheet.bottom - SLACK)]

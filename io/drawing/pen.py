@@ -10,7 +10,7 @@ import numpy as np
 from ezdxf.enums import TextEntityAlignment
 from ezdxf.layouts.base import BaseLayout
 
-from spanwright.io.drawing.lettering import TEXT, as_dxf
+from spanwright.io.drawing.lettering import TEXT, printable
 from spanwright.io.drawing.standards import STYLE, Layer
 from spanwright.truss.arrays import FloatArray
 
@@ -76,7 +76,7 @@ class Pen:
         angle: float = 0.0,
     ) -> None:
         """Letter one line of text, `height` mm on paper, turned by `angle` degrees."""
-        if not (shown := as_dxf(text)).strip():
+        if not (shown := printable(text)).strip():
             return
         attributes = {"layer": layer.name, "style": STYLE, "rotation": angle}
         entity = self.layout.add_text(shown, height=height * self.scale, dxfattribs=attributes)

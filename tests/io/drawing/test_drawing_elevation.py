@@ -4,8 +4,8 @@ import numpy as np
 import pytest
 import shapely
 from draughted import VARIANTS, designed, drawing, outline_of, texts
-from ezdxf.entities import Dimension as DimensionEntity
-from ezdxf.entities import DXFEntity
+from ezdxf.entities.dimension import Dimension as DimensionEntity
+from ezdxf.entities.dxfentity import DXFEntity
 
 from spanwright.design.cutting import cuts
 from spanwright.design.dispatch import assembly
@@ -151,7 +151,9 @@ def test_every_member_carries_mark_and_section(name: str) -> None:
 def test_every_joint_and_purlin_line_is_named(name: str) -> None:
     space, setting = drawing(name).modelspace(), designed(name).setting
     assert {text.plain_text() for text in texts(space, "JOINTS")} == set(setting.truss.joint_names)
-    assert [text.plain_text() for text in texts(space, "PURLINS")] == [str(line.number) for line in setting.restraint.lines]
+    assert [text.plain_text() for text in texts(space, "PURLINS")] == [
+        str(line.number) for line in setting.restraint.lines
+    ]
 
 
 def test_signs_are_filled_where_they_count() -> None:

@@ -7,7 +7,7 @@ import numpy as np
 import pytest
 import shapely
 from draughted import VARIANTS, arranged, designed, drawing, outline_of, texts
-from ezdxf.entities import Viewport
+from ezdxf.entities.viewport import Viewport
 
 from spanwright.design.cautions import CAUTIONS
 from spanwright.io.drawing.standards import LAYERS
@@ -22,7 +22,8 @@ LINE_WIDTHS = {13, 18, 25, 35, 50, 70, 100}  # ISO 128-2, 1/100 mm
 
 def views(name: str) -> list[Viewport]:
     """Return the viewports but for the sheet's own."""
-    return [view for view in drawing(name).paperspace("Sheet 1").query("VIEWPORT") if view.dxf.id != 1]
+    found = drawing(name).paperspace("Sheet 1").query("VIEWPORT")
+    return [view for view in found if isinstance(view, Viewport) and view.dxf.id != 1]
 
 
 def lettered(name: str) -> list[str]:
@@ -134,7 +135,8 @@ def test_units_are_millimetres_in_every_place(name: str) -> None:
 
 @pytest.mark.parametrize("name", NAMES)
 def test_the_file_opens_on_the_truss(name: str) -> None:
-    view = drawing(name).viewports.get("*ACTIVE")[0].dxf
+    (active,) = drawing(name).viewports.get("*ACTIVE")  # type: ignore[misc]  # a list: names in this table repeat
+    view = active.dxf
     xy = designed(name).setting.truss.xy
     middle = np.array([view.center[0], view.center[1]])
     half = np.array([view.height * view.aspect_ratio, view.height]) / 2.0
