@@ -71,30 +71,37 @@ def _chord_moments(truss: Truss, stations: Stations, moments: FloatArray) -> tup
 
 
 def first_compression_webs(truss: Truss, axial: FloatArray) -> BoolArray:
-    """Return (b, c) True where a bar is the first compression web from a bearing in that combination.
+    """Return (b, c) True where a bar is reduced as the first compression web from a bearing in that combination.
 
-    SANS 10162-1 cl. 15 reduces its resistance. Every compression web that meets the bearing joint counts; where
-    none does, the nearest one along the span (the safe reading where a post stands over the bearing).
+    SANS 10162-1 cl. 15 reduces the resistance of one; which, it does not say for every form. The safe reading: every
+    compression web that meets the bearing joint or stands over it, and on each side of it the nearest other one along
+    the span. A web with less than `TOLERANCES.idle_web` of the combination's greatest web compression is reduced where
+    it comes first, but does not stand for the next.
     """
     first = np.zeros(axial.shape, dtype=np.bool_)
     webs = np.flatnonzero([role in WEBS for role in truss.roles])
     if webs.size == 0:
         return first
-    threshold = TOLERANCES.tiny_force * max(float(np.abs(axial).max()), 1.0)
-    pressed = axial[webs] < -threshold
+    compression = np.maximum(-axial[webs], 0.0)
+    pressed = compression > TOLERANCES.tiny_force * max(float(np.abs(axial).max()), 1.0)
+    counts = pressed & (compression >= TOLERANCES.idle_web * compression.max(axis=0))
+    reduced = np.zeros_like(pressed)
     for bearing in truss.bearing_joints:
-        meets = (truss.ends[webs] == bearing).any(axis=1)
-        first[webs[meets]] |= pressed[meets]
-        order = _by_distance(truss, webs, bearing)
-        nearest = order[np.argmax(pressed[order], axis=0)]
-        columns = np.flatnonzero(pressed.any(axis=0) & ~pressed[meets].any(axis=0))
-        first[webs[nearest[columns]], columns] = True
+        offsets = truss.xy[truss.ends[webs], 0] - truss.xy[bearing, 0]
+        near = (truss.ends[webs] == bearing).any(axis=1) | (np.abs(offsets) <= TOLERANCES.same_point).all(axis=1)
+        reduced |= pressed & near[:, None]
+        middle = offsets.mean(axis=1)
+        for side in (middle <= 0.0, middle >= 0.0):
+            reduced |= _up_to_the_nearest(np.abs(middle), pressed, counts, side & ~near)
+    first[webs] = reduced
     return first
 
 
-def _by_distance(truss: Truss, webs: IntArray, bearing: int) -> IntArray:
-    middle = truss.xy[truss.ends[webs]].mean(axis=1)
-    return np.argsort(np.abs(middle[:, 0] - truss.xy[bearing, 0]), kind="stable")
+def _up_to_the_nearest(distance: FloatArray, pressed: BoolArray, counts: BoolArray, side: BoolArray) -> BoolArray:
+    """Return (w, c) the pressed webs of one side that are no farther away than the nearest that counts."""
+    away = np.where(counts & side[:, None], distance[:, None], np.inf).min(axis=0)
+    found: BoolArray = pressed & side[:, None] & (distance[:, None] <= away + TOLERANCES.same_point)
+    return found
 
 
 def of_bars(whole: Demand, bars: IntArray) -> Demand:

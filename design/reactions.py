@@ -10,6 +10,7 @@ import numpy as np
 from spanwright.design.analysis import Analysis
 from spanwright.truss.arrays import FloatArray
 from spanwright.truss.model import Truss
+from spanwright.truss.tolerances import TOLERANCES
 
 Direction = Literal["down", "up", "sideways"]
 VARIABLE = ("imposed", "man", "snow", "wind")
@@ -37,7 +38,8 @@ class BearingForce:
 def bearing_forces(truss: Truss, analysis: Analysis) -> tuple[BearingForce, ...]:
     """Return the greatest forces on every bearing, factored first, then characteristic.
 
-    Characteristic: each permanent set alone and with each variable case, all at factor 1.0.
+    Characteristic: each permanent set alone and with each variable case, all at factor 1.0, for every arrangement of
+    the supports. Of combinations that give the same force, the one that pushes most sideways is reported.
     """
     columns = analysis.columns("STR", "STR-P", "EQU")
     factored = analysis.reactions[:, :, columns]
@@ -54,14 +56,12 @@ def bearing_forces(truss: Truss, analysis: Analysis) -> tuple[BearingForce, ...]
 def _characteristic(analysis: Analysis) -> tuple[FloatArray, tuple[str, ...]]:
     permanent = [at for at, case in enumerate(analysis.cases) if case.kind == "permanent"]
     variable = [at for at, case in enumerate(analysis.cases) if case.kind in VARIABLE]
-    reactions = analysis.solutions[0].reactions
+    together = [(lasting, *acting) for lasting in permanent for acting in ((), *((case,) for case in variable))]
     columns, labels = [], []
-    for lasting in permanent:
-        columns.append(reactions[:, :, lasting])
-        labels.append(analysis.cases[lasting].name)
-        for acting in variable:
-            columns.append(reactions[:, :, lasting] + reactions[:, :, acting])
-            labels.append(f"{analysis.cases[lasting].name} + {analysis.cases[acting].name}")
+    for reading, solution in zip(analysis.arrangements, analysis.solutions, strict=True):
+        for acting in together:
+            columns.append(solution.reactions[:, :, list(acting)].sum(axis=-1))
+            labels.append(" + ".join(analysis.cases[case].name for case in acting) + reading.suffix)
     return np.stack(columns, axis=-1), tuple(labels)
 
 
@@ -70,7 +70,8 @@ def _greatest(
 ) -> BearingForce:
     right, down = -reactions[joint, 0], reactions[joint, 1]  # on the support: opposite to the reaction on the truss
     measure = {"down": down, "up": -down, "sideways": np.abs(right)}[direction]
-    at = int(np.argmax(measure))
+    rounding = TOLERANCES.tiny_force * float(np.abs(reactions).max(initial=0.0))
+    at = int(np.argmax(np.where(measure >= measure.max() - rounding, np.abs(right), -1.0)))
     return BearingForce(
         truss.joint_names[joint],
         direction,

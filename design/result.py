@@ -6,6 +6,7 @@ from dataclasses import dataclass
 from functools import cached_property
 
 import numpy as np
+from scipy.constants import g
 
 from spanwright.design.analysis import Analysis
 from spanwright.design.cautions import CAUTIONS
@@ -18,9 +19,11 @@ from spanwright.design.serviceability import Serviceability
 from spanwright.design.setting import Setting
 from spanwright.design.sizing import Choice, Governing, governing
 from spanwright.design.standard import Demand
+from spanwright.loads.cases import own_mass_loads
 from spanwright.loads.combinations import combination_cautions
 from spanwright.truss.arrays import BoolArray, FloatArray
-from spanwright.truss.restraint import Held, RestraintForce
+from spanwright.truss.restraint import Held
+from spanwright.truss.restraint_forces import AnchorForce, RestraintForce
 
 
 @dataclass(frozen=True, eq=False)
@@ -30,8 +33,8 @@ class Design:
     choices, next_lighter : one a group. analysis, demand : for exactly the chosen sections.
     missing : what this roof cannot lose, worst first.
     held : for each chord ("top", "bottom") the points where it is held sideways.
-    restraint_forces : what each counted restraint must resist; anchor_force : their sum at the anchor, N, for all
-        trusses of the project.
+    restraint_forces : what each counted restraint must resist; anchor : their sum at the anchor, for all trusses of
+        the project, in the worst strength combination.
     second_difference : N, largest difference of the bar forces found without stiffness.
     pieces : what the workshop cuts, empty where a member does not pass.
     warnings : sentences.
@@ -46,7 +49,7 @@ class Design:
     missing: tuple[Missing, ...]
     held: dict[str, tuple[Held, ...]]
     restraint_forces: tuple[RestraintForce, ...]
-    anchor_force: float
+    anchor: AnchorForce
     bearing_forces: tuple[BearingForce, ...]
     second_difference: float
     pieces: tuple[Piece, ...]
@@ -69,6 +72,21 @@ class Design:
         """Names of the strength combinations, in the order of `demand.axial`."""
         pairs = zip(self.analysis.combinations, self.analysis.strength, strict=True)
         return tuple(combination.name for combination, counts in pairs if counts)
+
+    @property
+    def anchor_force(self) -> float:
+        """The plain sum of restraint forces at the anchor, N, of all trusses and one combination: the safe reading."""
+        return self.anchor.force
+
+    @property
+    def anchor_combination(self) -> str:
+        """Name of the strength combination that gives `anchor_force`, "" where nothing reaches the anchor."""
+        return self.strength_names[self.anchor.combination] if self.anchor.combination >= 0 else ""
+
+    @property
+    def anchor_force_relieved(self) -> float:
+        """`anchor_force`, N, with the relief that the standard gives to parallel trusses."""
+        return self.anchor.force * self.setting.standard.restraint_relief(self.setting.project.quantity)
 
     @cached_property
     def utilisation(self) -> FloatArray:
@@ -112,13 +130,14 @@ class Design:
         return tuple(self.choice_for(bar)[0].name for bar in range(len(self.setting.truss.bar_names)))
 
     def group_mass(self, choice: Choice) -> float:
-        """Return the mass of a group's members, joint to joint, kg."""
-        length = float(self.setting.truss.lengths[choice.group.bars].sum())
-        return length / 1e3 * float(choice.section.mass[0])
+        """Return the mass of a group's members, joint to joint and with the overhangs, kg: that of the own mass."""
+        mass_per_m = np.zeros(len(self.setting.truss.bar_names))
+        mass_per_m[choice.group.bars] = choice.section.mass[0]
+        return -float(own_mass_loads(self.setting.truss, mass_per_m)[:, 1].sum()) / g
 
     @property
     def mass(self) -> float:
-        """Mass of all members, joint to joint, without gussets and fixings, kg."""
+        """Mass of all members, joint to joint and with the overhangs, without gussets and fixings, kg."""
         return sum(self.group_mass(choice) for choice in self.choices)
 
     def __repr__(self) -> str:

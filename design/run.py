@@ -36,7 +36,8 @@ from spanwright.truss.given import build_given
 from spanwright.truss.inputs import GivenInput
 from spanwright.truss.lengths import buckling_lengths
 from spanwright.truss.model import Truss
-from spanwright.truss.restraint import anchor_force, held_points, restrain, restraint_forces
+from spanwright.truss.restraint import held_points, restrain
+from spanwright.truss.restraint_forces import anchor_force, restraint_forces
 
 
 def design(project: Project) -> Design:
@@ -130,9 +131,9 @@ def size(setting: Setting, floors: list[int]) -> tuple[Analysis, Demand, tuple[C
 def finish(setting: Setting, analysis: Analysis, wanted: Demand, choices: tuple[Choice, ...]) -> Design:
     """Add to a sized truss what its users ask next: certificates, deflection, restraint, bearings, pieces."""
     truss, project = setting.truss, setting.project
-    compression = np.maximum(-wanted.axial, 0.0).max(axis=1)
-    forces = restraint_forces(truss, setting.restraint, compression, setting.standard.restraint_share)
-    return Design(
+    compression = np.maximum(-wanted.axial, 0.0)
+    share, beta = setting.standard.restraint_share, setting.standard.restraint_beta
+    found = Design(
         setting=setting,
         analysis=analysis,
         demand=wanted,
@@ -141,10 +142,11 @@ def finish(setting: Setting, analysis: Analysis, wanted: Demand, choices: tuple[
         serviceability=serviceability(truss, project.deflection, analysis),
         missing=if_missing(setting, wanted, choices),
         held=held_points(truss, setting.restraint),
-        restraint_forces=forces,
-        anchor_force=anchor_force(forces, project.quantity),
+        restraint_forces=restraint_forces(truss, setting.restraint, compression, share, beta),
+        anchor=anchor_force(truss, setting.restraint, compression, share, project.quantity),
         bearing_forces=bearing_forces(truss, analysis),
         second_difference=largest_difference(truss, analysis),
         pieces=pieces_of(setting, wanted, choices),
-        warnings=warnings_of(setting, choices),
+        warnings=(),
     )
+    return replace(found, warnings=warnings_of(found))

@@ -8,7 +8,7 @@ import numpy as np
 
 from spanwright.design.analysis import Analysis
 from spanwright.design.project import DeflectionLimits
-from spanwright.truss.arrays import FloatArray
+from spanwright.truss.arrays import FloatArray, IntArray
 from spanwright.truss.model import Truss
 
 CAMBER_STEP = 5.0
@@ -19,10 +19,10 @@ CAMBER_LEAST = 15.0
 
 @dataclass(frozen=True)
 class Deflection:
-    """The greatest deflection of any joint against the line between the bearings.
+    """The deflection that comes nearest its limit, of any joint against the line between the bearings beside it.
 
     name : "variable" or "total". value : mm, down +. joint, combination : where and when.
-    limit : mm. span_over : the number that divides the span.
+    limit : mm, of the span that the joint stands in. span_over : the number that divides the span.
     """
 
     name: str
@@ -75,13 +75,27 @@ def serviceability(truss: Truss, limits: DeflectionLimits, analysis: Analysis) -
 
 
 def below_bearing_line(truss: Truss, displacements: FloatArray) -> FloatArray:
-    """Return (j, c) mm: how far each joint moves below the line between the outermost bearings, down +."""
-    left, right = truss.bearing_joints[0], truss.bearing_joints[-1]
-    share = (truss.xy[:, 0] - truss.xy[left, 0]) / truss.span
+    """Return (j, c) mm: how far each joint moves below the line between the bearings beside it, down +."""
+    left, right = _bearings_beside(truss)
+    share = (truss.xy[:, 0] - truss.xy[left, 0]) / _spans(truss)
     vertical = displacements[:, 1, :]
     line = vertical[left] + share[:, None] * (vertical[right] - vertical[left])
     below: FloatArray = line - vertical
     return below
+
+
+def _bearings_beside(truss: Truss) -> tuple[IntArray, IntArray]:
+    """Return (j,) the bearing joints left and right of each joint; beyond the outermost, those of the end span."""
+    bearings = np.array(truss.bearing_joints)
+    right = np.searchsorted(truss.xy[bearings, 0], truss.xy[:, 0]).clip(1, len(bearings) - 1)
+    return bearings[right - 1], bearings[right]
+
+
+def _spans(truss: Truss) -> FloatArray:
+    """Return (j,) mm: the span that each joint stands in, between neighbouring bearings."""
+    left, right = _bearings_beside(truss)
+    spans: FloatArray = truss.xy[right, 0] - truss.xy[left, 0]
+    return spans
 
 
 def _greatest(
@@ -89,15 +103,15 @@ def _greatest(
 ) -> tuple[Deflection, ...]:
     if not columns:
         return ()
-    here = sagging[:, columns]
-    joint, column = np.unravel_index(int(np.argmax(np.abs(here))), here.shape)
+    here, limits = sagging[:, columns], _spans(truss) / span_over
+    joint, column = np.unravel_index(int(np.argmax(np.abs(here) / limits[:, None])), here.shape)
     return (
         Deflection(
             name,
             float(here[joint, column]),
             truss.joint_names[joint],
             analysis.combinations[columns[column]].name,
-            truss.span / span_over,
+            float(limits[joint]),
             span_over,
         ),
     )

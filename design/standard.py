@@ -54,7 +54,7 @@ class Demand:
         fibre (>= 0) over all sections of the bar, N mm. Zero without chord bending.
     end_moments : (b, 2, c) N mm, sagging +, at the bar's left and right end.
     point_loads : (b,) number of transverse loads that stand between the bar's joints (0: none).
-    first_web : (b, c) True where the bar is the first compression web from a bearing in that combination.
+    first_web : (b, c) True where the bar is reduced as a first compression web from a bearing in that combination.
     one_leg : (b,) True for webs that may use the one-leg rule (plane truss web, webs all on one side).
     ends, packs : end connections and connectors assumed.
     gusset : mm, thickness of the gussets: eccentricity of single angles that the one-leg rule does not cover.
@@ -136,6 +136,13 @@ class Standard(Protocol):
     @property
     def restraint_clause(self) -> str:
         """Clause of `restraint_share`."""
+
+    @property
+    def restraint_beta(self) -> float:
+        """Factor beta of the stiffness 2 beta Cu/Lb that a point restraint must have, for many points."""
+
+    def restraint_relief(self, trusses: int) -> float:
+        """Share of the plain sum of restraint forces that the bracing of n parallel trusses must resist."""
 
     def checks(self, candidates: Candidates, demand: Demand) -> tuple[Check, ...]:
         """Check every candidate for every member; the order of the checks is the order of printing."""

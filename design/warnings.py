@@ -2,6 +2,9 @@
 
 from __future__ import annotations
 
+from spanwright.design.regrouping import worth_a_group
+from spanwright.design.restraint_advice import long_bottom_chords, soft_braces
+from spanwright.design.result import Design
 from spanwright.design.section_warnings import section_warnings
 from spanwright.design.setting import Setting
 from spanwright.design.sizing import Choice, governing
@@ -9,17 +12,48 @@ from spanwright.design.sizing import Choice, governing
 ANGLES = ("L", "2L", "2L star")
 
 
-def warnings_of(setting: Setting, choices: tuple[Choice, ...]) -> tuple[str, ...]:
-    """Return the warnings of the input, geometry, restraint and loads, then those of the chosen sections."""
+def warnings_of(found: Design) -> tuple[str, ...]:
+    """Return the warnings of the input, geometry, restraint and loads, then those of bearings and chosen sections."""
+    setting, choices = found.setting, found.choices
     return (
         *setting.project.warnings,
         *setting.truss.warnings,
         *setting.restraint.warnings,
+        *soft_braces(found),
         *setting.load_set.warnings,
+        *_thrust(found),
+        *_settlement(setting),
         *section_warnings(setting, choices),
         *_legs_above_the_chords(choices),
         *_not_passing(setting, choices),
+        *long_bottom_chords(found),
+        *worth_a_group(found),
     )
+
+
+def _thrust(found: Design) -> list[str]:
+    """Where more than one bearing is held sideways, the truss pushes both: what stands below must resist it."""
+    pushed = [
+        f"{force.value / 1e3:.1f} kN at {force.joint} ({force.combination})"
+        for force in found.bearing_forces
+        if force.factored and force.direction == "sideways" and force.value > 0.0
+    ]
+    if len(found.analysis.arrangements) == 1 or not pushed:
+        return []
+    return [
+        "more than one bearing is held sideways, so the truss thrusts: the columns must resist, factored, "
+        f"{' and '.join(pushed)}; every member also stands with one end sliding"
+    ]
+
+
+def _settlement(setting: Setting) -> list[str]:
+    names = [setting.truss.joint_names[joint] for joint in setting.truss.bearing_joints]
+    if len(names) <= 2:
+        return []
+    return [
+        f"the truss bears at {', '.join(names)}: that {', '.join(names[1:-1])} settles against the ends is not "
+        "considered, and the bar forces depend on it"
+    ]
 
 
 def _legs_above_the_chords(choices: tuple[Choice, ...]) -> list[str]:

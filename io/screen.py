@@ -10,7 +10,9 @@ from rich.table import Table
 
 from spanwright.design.cautions import SHORT_CAUTION
 from spanwright.design.certificate import NextLighter
+from spanwright.design.hand_checks import mass_per_area
 from spanwright.design.result import Design
+from spanwright.design.serviceability import Serviceability
 from spanwright.io.text import kilograms, kilonewtons, metres, rounded_up
 from spanwright.truss.errors import OutputError
 
@@ -40,16 +42,12 @@ def print_summary(
         f"{metres(project.spacing)} apart; {setting.standard.name}, {escape(project.actions)}"
     )
     out.print(_groups(design))
+    overhang = " and over the overhang" if any(truss.top.overhang) else ""
     out.print(
-        f"mass {kilograms(design.mass)} a truss, {design.mass / (truss.span * project.spacing) * 1e6:.1f} kg/m2 of plan, "
-        "joint to joint, without gussets and fixings"
+        f"mass {kilograms(design.mass)} a truss, {mass_per_area(design):.1f} kg/m2 of plan, "
+        f"members joint to joint{overhang}, without gussets and fixings"
     )
-    for row in design.serviceability.deflections:
-        verdict = "" if row.ratio <= 1.0 else "  [bold]EXCEEDED[/bold]"
-        out.print(
-            f"deflection, {row.name}: {row.value:.1f} mm at {row.joint} of {row.limit:.1f} mm allowed "
-            f"(span/{row.span_over:g}), {escape(row.combination)}{verdict}"
-        )
+    _print_movements(out, design.serviceability)
     out.print(_reactions(design))
     _print_missing(out, design)
     for warning in design.warnings:
@@ -79,6 +77,18 @@ def _groups(design: Design) -> Table:
             escape(_certificate(lighter)),
         )
     return table
+
+
+def _print_movements(out: Console, found: Serviceability) -> None:
+    for row in found.deflections:
+        verdict = "" if row.ratio <= 1.0 else "  [bold]EXCEEDED[/bold]"
+        way = "up" if row.value < 0.0 else "down"
+        out.print(
+            f"deflection, {row.name}: {abs(row.value):.1f} mm {way} at {row.joint} of {row.limit:.1f} mm allowed "
+            f"(span/{row.span_over:g}), {escape(row.combination)}{verdict}"
+        )
+    slides = f"sliding end moves {found.sliding:.1f} mm, {found.sliding_combination}; " if found.sliding else ""
+    out.print(escape(f"{slides}{f'camber {found.camber:.0f} mm' if found.camber else 'no camber'}"))
 
 
 def _certificate(lighter: NextLighter) -> str:

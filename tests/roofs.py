@@ -30,6 +30,11 @@ def raised(overhang: float = 0.0) -> Truss:
     return build_form(FormInput("Pratt", 16000.0, math.atan(0.75), 1000.0, 8, overhang))
 
 
+def shallow() -> Truss:
+    """Return a Pratt of 16 m in 8 panels of 2 m on a heel of 1 m, pitch 1 in 8: 1.25 m deep at B1, 2 m at B4."""
+    return build_form(FormInput("Pratt", 16000.0, math.atan(0.125), 1000.0, 8))
+
+
 def fink() -> Truss:
     """Return a compound Fink of 12 m at 30 degrees: inner bottom joints at 2, 4, 8 and 10 m, inner joints M1 and M2."""
     return build_form(FormInput("Fink", 12000.0, math.pi / 6, 0.0, 8))

@@ -71,7 +71,9 @@ class BottomTie:
 
 
 def place_knee_braces(truss: Truss, restraint: RestraintInput, lines: tuple[PurlinLine, ...]) -> tuple[KneeBrace, ...]:
-    """Return the knee braces, left to right; one to a line that is not anchored is there but does not count.
+    """Return the knee braces, left to right.
+
+    One to a line that is not anchored, or that rises more than `TOLERANCES.longest_knee`, is there but does not count.
 
     Listed joints: each takes the nearest anchored line within `TOLERANCES.knee_reach` in plan, else the nearest loose
     one. "every nth purlin": the ridge line or pair is number 0 and braced, then the nth, 2nth... on each side, down to
@@ -173,8 +175,15 @@ def _brace(truss: Truss, joint: int, lines: tuple[PurlinLine, ...]) -> KneeBrace
             BRACES_KEY,
         )
     line = min(within, key=lambda line: (not line.anchored, abs(line.x - x)))
-    why_not = "" if line.anchored else f"{line.name} is not anchored"
-    return KneeBrace(joint, name, line.number, float(line.y - y), why_not)
+    return KneeBrace(joint, name, line.number, float(line.y - y), _why_not(line, float(line.y - y)))
+
+
+def _why_not(line: PurlinLine, rise: float) -> str:
+    if not line.anchored:
+        return f"{line.name} is not anchored"
+    if rise > TOLERANCES.longest_knee + TOLERANCES.same_point:
+        return f"{line.name} is {rise / 1000:.2f} m above it, more than {TOLERANCES.longest_knee / 1000:g} m"
+    return ""
 
 
 def _middle(truss: Truss) -> int:

@@ -12,9 +12,7 @@ from dataclasses import dataclass, replace
 from functools import cached_property
 
 import networkx as nx
-import numpy as np
 
-from spanwright.truss.arrays import FloatArray
 from spanwright.truss.braces import BottomTie, KneeBrace, place_bottom_ties, place_knee_braces
 from spanwright.truss.errors import UnknownNameError
 from spanwright.truss.inputs import RestraintInput
@@ -54,19 +52,6 @@ class Held:
 
 
 @dataclass(frozen=True)
-class RestraintForce:
-    """The force, N, that a part must resist sideways, to either side, where it holds a chord.
-
-    part : its name. kind : "purlin line", "knee brace", "bottom tie" or "bearing". at : where, in words.
-    """
-
-    part: str
-    kind: str
-    at: str
-    force: float
-
-
-@dataclass(frozen=True)
 class Restraint:
     """What stands there to hold the chords sideways.
 
@@ -95,7 +80,9 @@ class Restraint:
                 graph.add_edge(line.name, line.joint)
         for brace in self.braces:
             graph.add_node(brace.name, kind="knee brace")
-            graph.add_edges_from([(brace.joint, brace.name), (brace.name, self.line(brace.line).name)])
+            graph.add_edge(brace.joint, brace.name)
+            if brace.counted:
+                graph.add_edge(brace.name, self.line(brace.line).name)
         for tie in self.ties:
             graph.add_node(tie.name, kind="bottom tie")
             graph.add_edge(tie.joint, tie.name)
@@ -218,55 +205,3 @@ def without(restraint: Restraint, part: str) -> Restraint:
 
 def _missing(brace: KneeBrace) -> KneeBrace:
     return replace(brace, why_not=brace.why_not or "its line is missing")
-
-
-def restraint_forces(
-    truss: Truss, restraint: Restraint, compression: FloatArray, share: float
-) -> tuple[RestraintForce, ...]:
-    """Return the force that each counted part must resist where it holds a chord.
-
-    compression : (b,) N, >= 0, greatest of each bar over all combinations. share : of that compression, by the
-    member standard (SANS 10162-1 cl. 9.2, simplified: 0.02, from memory).
-
-    The compression is the greatest in the two runs that meet at the point: at least that of the two adjacent bars,
-    and more where the chord is pressed harder further on. A part that holds both chords at a shared joint takes the
-    greater. A purlin line must carry its own force and those of the braces that run to it.
-    """
-    greatest: dict[str, RestraintForce] = {}
-    points = held_points(truss, restraint)
-    for chord in (truss.top, truss.bottom):
-        places = sorted({held.along for held in points[chord.name]})
-        for held in points[chord.name]:
-            force = share * _compression_beside(chord, places, held.along, compression)
-            if held.part not in greatest or force > greatest[held.part].force:
-                kind = restraint.graph.nodes[held.part]["kind"]
-                greatest[held.part] = RestraintForce(held.part, kind, _where(truss, chord, held), force)
-    return tuple(greatest.values())
-
-
-def _compression_beside(chord: Chord, places: list[float], along: float, compression: FloatArray) -> float:
-    lower = max((place for place in places if place < along), default=-np.inf)
-    upper = min((place for place in places if place > along), default=np.inf)
-    beside = (chord.along[:-1] < upper) & (chord.along[1:] > lower)
-    return float(compression[list(chord.bars)][beside].max(initial=0.0))
-
-
-def _where(truss: Truss, chord: Chord, held: Held) -> str:
-    if held.joint is not None:
-        return truss.joint_names[held.joint]
-    after = int(np.searchsorted(chord.along, held.along))
-    if after == 0:
-        return f"left of {truss.joint_names[chord.joints[0]]}"
-    if after == len(chord.joints):
-        return f"right of {truss.joint_names[chord.joints[-1]]}"
-    return f"{truss.joint_names[chord.joints[after - 1]]} to {truss.joint_names[chord.joints[after]]}"
-
-
-def anchor_force(forces: tuple[RestraintForce, ...], quantity: int) -> float:
-    """Return the sum of restraint forces that reaches the anchor from `quantity` trusses, N.
-
-    The plain sum over lines, braces and ties (bearings have ties of their own), all in one direction and with each
-    chord's own worst combination: the safe reading. Standards let parallel trusses share less, such as
-    0.2 + 0.8/sqrt(n) of the sum (CSA S16 cl. 9.2, from memory); that is left to the designer of the bracing.
-    """
-    return quantity * sum(force.force for force in forces if force.kind != "bearing")

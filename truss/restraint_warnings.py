@@ -18,10 +18,10 @@ def restraint_warnings(
     braces: tuple[KneeBrace, ...],
     ties: tuple[BottomTie, ...],
 ) -> tuple[str, ...]:
-    """Return the warnings, as sentences: what does not count, what is soft, and top chord ends held only beyond."""
+    """Return the warnings, as sentences: what does not count, and top chord ends held only beyond."""
     return (
         *_about_lines(restraint, lines),
-        *_about_braces(restraint, braces),
+        *_about_braces(restraint, lines, braces),
         *_about_ties(ties),
         *_about_ends(truss, restraint, lines),
     )
@@ -39,20 +39,25 @@ def _about_lines(restraint: RestraintInput, lines: tuple[PurlinLine, ...]) -> It
         yield f"Purlin lines {', '.join(loose)} are not anchored and hold nothing sideways."
 
 
-def _about_braces(restraint: RestraintInput, braces: tuple[KneeBrace, ...]) -> Iterator[str]:
+def _about_braces(
+    restraint: RestraintInput, lines: tuple[PurlinLine, ...], braces: tuple[KneeBrace, ...]
+) -> Iterator[str]:
     if restraint.knee_braces != "none" and not braces:
         yield (
             f'No knee brace stands: "{restraint.knee_braces}" is stated, but no joint of the bottom chord is within '
             f"{TOLERANCES.knee_reach / 1000:g} m in plan of these purlins."
         )
-    for brace in braces:
-        if not brace.counted:
+    loose = [brace for brace in braces if not brace.counted]
+    too_long = [brace for brace in loose if lines[brace.line - 1].anchored]
+    for brace in loose:
+        if brace not in too_long:
             yield f"The {brace.name} holds nothing: {brace.why_not}."
-        elif brace.rise > TOLERANCES.long_knee:
-            yield (
-                f"The {brace.name} is soft: line {brace.line} is {brace.rise / 1000:.2f} m above it, more than "
-                f"{TOLERANCES.long_knee / 1000:g} m; show that brace and purlin are stiff enough to hold the chord."
-            )
+    if too_long:
+        listed = ", ".join(f"{brace.at} ({brace.rise / 1000:.2f} m)" for brace in too_long)
+        yield (
+            f"Knee braces that rise more than {TOLERANCES.longest_knee / 1000:g} m are too soft and hold nothing: "
+            f"{listed}; tie these joints of the bottom chord to a braced bay instead (project rule)."
+        )
 
 
 def _about_ties(ties: tuple[BottomTie, ...]) -> Iterator[str]:

@@ -56,11 +56,27 @@ class Tolerances:
     long_knee: float = 1500.0
     """mm: a knee brace to a line further above its joint than this is soft; warned (practice: 1.0 to 1.5 m)."""
 
+    longest_knee: float = 2500.0
+    """mm: a knee brace that rises more than this holds nothing: too soft to count on unproven (project rule)."""
+
+    idle_web: float = 0.05
+    """Of the greatest web compression of a combination: a web pressed less does not stand for the first compression web
+    from a bearing; the search goes on to the next (project rule)."""
+
+    idle_group: float = 0.5
+    """Of the resistance: a group used less than this for strength is sized by something else (project rule)."""
+
+    worth_a_group: float = 0.02
+    """Of a truss's mass: a group that saves less is not worth another section in the workshop (project rule)."""
+
     least_length_factor: float = 0.5
     """Dimensionless: no effective length factor of a member held at both ends is less (both ends fixed, theory)."""
 
     long_ceiling_panel: float = 3000.0
     """mm on plan: in a longer bottom panel a ceiling's hangers stand between the joints; warned (project rule)."""
+
+    long_chord_panel: float = 3000.0
+    """mm: a longer chord bar is bent noticeably by its own mass, which goes to the joints; warned (project rule)."""
 
     by_hand: float = 1e-3
     """Relative: what a hand calculation may differ by from what was found (three figures of a pocket calculator)."""

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from dataclasses import dataclass, field
 
 from spanwright.design.candidates import Candidates
@@ -30,6 +31,7 @@ class Sans10162:
     expansion: float = field(default=number("steel", "expansion"), init=False)
     restraint_share: float = field(default=number("restraint", "share"), init=False)
     restraint_clause: str = field(default="9.2 (from memory)", init=False)
+    restraint_beta: float = field(default=number("restraint", "beta"), init=False)
 
     def checks(self, candidates: Candidates, demand: Demand) -> tuple[Check, ...]:
         """Check every candidate (s) for every member (b), in the order of printing: tension, compression, bending,
@@ -53,6 +55,10 @@ class Sans10162:
         Raises InputError as `checks` does.
         """
         return case_of(candidates, demand, hot_formed_tubes=self.hot_formed_tubes).packs
+
+    def restraint_relief(self, trusses: int) -> float:
+        """Return 0.2 + 0.8/sqrt(n) of n parallel trusses (cl. 9.2, from memory)."""
+        return number("restraint", "relief_base") + number("restraint", "relief_root") / math.sqrt(trusses)
 
     def verify_notes(self) -> tuple[str, ...]:
         """Return what to verify against a licensed copy of the standard, in short sentences."""

@@ -2,12 +2,16 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterable
 from typing import Any
 
+from spanwright.design.analysis import Analysis
 from spanwright.design.reactions import BearingForce
 from spanwright.design.result import Design
 from spanwright.io.results.numbers import millimetres, newtons, pairs, ratio
-from spanwright.truss.stiffness import reaction_sums
+from spanwright.truss.stiffness import Solution, reaction_sums
+
+Vectors = dict[str, list[float | None]]
 
 
 def site(design: Design) -> dict[str, Any] | None:
@@ -35,23 +39,34 @@ def site(design: Design) -> dict[str, Any] | None:
 
 
 def cases(design: Design) -> list[dict[str, Any]]:
-    """Return one row a load case, unfactored, with the first arrangement of the supports."""
+    """Return one row a load case, unfactored, for every arrangement of the supports."""
     names = design.setting.truss.joint_names
-    solution = design.analysis.solutions[0]
+    as_stated, *sliding = design.analysis.solutions
     return [
         {
             "name": case.name,
             "kind": case.kind,
             "derivation": list(case.derivation),
             "loads_N": pairs(case.joint_loads, names),
-            "reactions_N": pairs(solution.reactions[:, :, at], names),
-            "deflections_mm": {
-                name: [millimetres(float(value)) for value in solution.displacements[joint, :, at]]
-                for joint, name in enumerate(names)
-            },
+            "reactions_N": pairs(as_stated.reactions[:, :, at], names),
+            "reactions_one_end_sliding_N": _only(pairs(solution.reactions[:, :, at], names) for solution in sliding),
+            "deflections_mm": _displacements(as_stated, at, names),
+            "deflections_one_end_sliding_mm": _only(_displacements(solution, at, names) for solution in sliding),
         }
         for at, case in enumerate(design.analysis.cases)
     ]
+
+
+def _displacements(solution: Solution, case: int, names: tuple[str, ...]) -> Vectors:
+    return {
+        name: [millimetres(float(value)) for value in solution.displacements[joint, :, case]]
+        for joint, name in enumerate(names)
+    }
+
+
+def _only(found: Iterable[Vectors]) -> Vectors:
+    """Return the vectors of the one arrangement found, empty where there is none."""
+    return next(iter(found), {})
 
 
 def combinations(design: Design) -> list[dict[str, Any]]:
@@ -61,11 +76,18 @@ def combinations(design: Design) -> list[dict[str, Any]]:
         {
             "name": combination.name,
             "limit_state": combination.limit_state,
+            "supports": _supports(design.analysis, at),
             "factors": dict(combination.factors),
             "reactions_N": pairs(design.analysis.reactions[:, :, at], names),
         }
         for at, combination in enumerate(design.analysis.combinations)
     ]
+
+
+def _supports(analysis: Analysis, combination: int) -> str:
+    """Return which arrangement of the supports a combination stands on: "as stated" or "one end sliding"."""
+    of_each = len(analysis.combinations) // len(analysis.arrangements)
+    return analysis.arrangements[combination // of_each].suffix.removeprefix(", ") or "as stated"
 
 
 def reactions(design: Design) -> dict[str, Any]:

@@ -42,6 +42,11 @@ def _member(design: Design, choice: Choice, place: int, bar: int) -> dict[str, A
             case.name: newtons(float(force))
             for case, force in zip(analysis.cases, analysis.case_forces[bar], strict=True)
         },
+        "force_one_end_sliding_N": {
+            case.name: newtons(float(force))
+            for solution in analysis.solutions[1:]
+            for case, force in zip(analysis.cases, solution.forces[bar], strict=True)
+        },
         "force_by_combination_N": {
             combination.name: newtons(float(force))
             for combination, force in zip(analysis.combinations, analysis.forces[bar], strict=True)

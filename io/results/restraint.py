@@ -35,9 +35,18 @@ def restraint(design: Design) -> dict[str, Any]:
             for point in points
         ],
         "forces_N": [
-            {"part": force.part, "at": force.at, "force_N": newtons(force.force)} for force in design.restraint_forces
+            {
+                "part": force.part,
+                "at": force.at,
+                "force_N": newtons(force.force),
+                "combination": design.strength_names[force.combination] if force.force else "",
+                "required_stiffness_N_per_mm": newtons(force.stiffness),
+            }
+            for force in design.restraint_forces
         ],
         "anchor_force_N": newtons(design.anchor_force),
+        "anchor_force_combination": design.anchor_combination if design.anchor_force else "",
+        "anchor_force_relieved_N": newtons(design.anchor_force_relieved),
         "if_missing": [
             {
                 "part": row.part,

@@ -73,6 +73,56 @@ def test_combined_forces_are_the_factors_times_the_cases(done: Design) -> None:
         assert member["force_by_combination_N"][combination["name"]] == pytest.approx(expected, abs=1.0)
 
 
+def test_combinations_with_one_end_sliding_can_be_rebuilt_from_the_cases() -> None:
+    """Both pinned: bar forces and reactions of every combination from the case values that its supports name."""
+    found = document(design(replace(demo("pratt_store"), supports="both pinned")))
+    jsonschema.Draft202012Validator(SCHEMA).validate(found)
+    cases = {case["name"]: case for case in found["cases"]}
+    assert {combination["supports"] for combination in found["combinations"]} == {"as stated", "one end sliding"}
+    for combination in found["combinations"]:
+        sliding = combination["supports"] == "one end sliding"
+        assert sliding == combination["name"].endswith(", one end sliding")
+        infix = "_one_end_sliding" if sliding else ""
+        for member in found["members"]:
+            forces = member[f"force{infix}_N"]
+            expected = sum(factor * forces[case] for case, factor in combination["factors"].items())
+            assert member["force_by_combination_N"][combination["name"]] == pytest.approx(expected, abs=1.0)
+        for joint in ("B0", "B12"):
+            parts = [
+                factor * np.array(cases[case][f"reactions{infix}_N"].get(joint, [0.0, 0.0]))
+                for case, factor in combination["factors"].items()
+            ]
+            assert combination["reactions_N"][joint] == pytest.approx(sum(parts), abs=1.0)
+    moved = cases["imposed"]["deflections_one_end_sliding_mm"]["B12"][0]
+    assert moved > 0.1
+    assert cases["imposed"]["deflections_mm"]["B12"] == [0.0, 0.0]
+
+
+def test_with_one_arrangement_of_the_supports_nothing_is_said_of_another(done: Design) -> None:
+    found = document(done)
+    assert {combination["supports"] for combination in found["combinations"]} == {"as stated"}
+    assert all(member["force_one_end_sliding_N"] == {} for member in found["members"])
+    assert all(case["reactions_one_end_sliding_N"] == {} for case in found["cases"])
+
+
+def test_restraints_say_how_stiff_they_must_be_and_the_anchor_what_reaches_it(done: Design) -> None:
+    found = document(done)["restraint"]
+    named = {force["part"]: force for force in found["forces_N"]}
+    for force in done.restraint_forces:
+        assert named[force.part]["required_stiffness_N_per_mm"] == pytest.approx(force.stiffness, abs=0.05)
+        assert named[force.part]["combination"] == done.strength_names[force.combination]
+    assert found["anchor_force_N"] == pytest.approx(done.anchor_force, abs=0.05)
+    assert found["anchor_force_combination"] in done.strength_names
+    assert found["anchor_force_relieved_N"] < found["anchor_force_N"]
+
+
+def test_a_design_by_the_eurocode_keeps_the_schema_too() -> None:
+    """Its combinations have a limit state of their own."""
+    found = document(design(replace(demo("howe_workshop"), actions="EN 1990:2002, 6.10")))
+    jsonschema.Draft202012Validator(SCHEMA).validate(found)
+    assert "SLS quasi-permanent" in {combination["limit_state"] for combination in found["combinations"]}
+
+
 def test_the_same_input_gives_the_same_bytes(done: Design, tmp_path: Path) -> None:
     first = write_results(done, tmp_path).read_bytes()
     again = write_results(design(done.setting.project), tmp_path).read_bytes()

@@ -14,7 +14,8 @@ from spanwright.truss.inputs import RestraintInput
 from spanwright.truss.lengths import BucklingLengths, buckling_lengths
 from spanwright.truss.model import Chord, Truss
 from spanwright.truss.purlins import lay_purlins
-from spanwright.truss.restraint import held_points, parts, restrain, restraint_forces, without
+from spanwright.truss.restraint import held_points, parts, restrain, without
+from spanwright.truss.restraint_forces import anchor_force, restraint_forces
 from spanwright.truss.tolerances import TOLERANCES
 
 SLACK = 1e-6  # mm, rounding of sums of lengths
@@ -150,7 +151,8 @@ def test_what_counts_is_what_a_path_leads_from(roof: tuple[Truss, RestraintInput
     for line in held.lines:
         assert line.anchored == (line.name in held.counted)
     for brace in held.braces:
-        assert brace.counted == (brace.name in held.counted) == held.line(brace.line).anchored
+        short = brace.rise <= TOLERANCES.longest_knee + TOLERANCES.same_point
+        assert brace.counted == (brace.name in held.counted) == (held.line(brace.line).anchored and short)
     for tie in held.ties:
         assert tie.counted == (tie.name in held.counted)
     if wanted.anchored_by == "nothing":
@@ -199,12 +201,16 @@ def test_restraint_forces_are_shares_of_compressions_of_the_chords_they_hold(
 ) -> None:
     truss, wanted = roof
     held = restrain(truss, wanted)
-    compression = np.abs(np.sin(np.arange(len(truss.bar_names)))) * 1e5
-    forces = {force.part: force.force for force in restraint_forces(truss, held, compression, share)}
+    each = np.abs(np.sin(np.arange(2 * len(truss.bar_names)))).reshape(-1, 2) * 1e5
+    compression = each.max(axis=1)
+    found = restraint_forces(truss, held, each, share, 4.0)
+    forces = {force.part: force.force for force in found}
     for chord in (truss.top, truss.bottom):
         for point in held_points(truss, held)[chord.name]:
             assert forces[point.part] >= share * beside(chord, point.along, compression) - SLACK
     assert max(forces.values(), default=0.0) <= share * compression.max()
+    plain = sum(force.force for force in found if force.kind != "bearing")
+    assert anchor_force(truss, held, each, share, 3).force <= 3 * plain * (1 + 1e-12)
 
 
 def beside(chord: Chord, along: float, compression: np.ndarray) -> float:

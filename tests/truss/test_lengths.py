@@ -8,7 +8,7 @@ import math
 
 import numpy as np
 import pytest
-from roofs import fink, hand_made, mono_pitch, parallel, raised, restraint, scissor, triangular
+from roofs import fink, hand_made, mono_pitch, parallel, raised, restraint, scissor, shallow, triangular
 
 from spanwright.truss.errors import InputError, UnheldEndError
 from spanwright.truss.lengths import BucklingLengths, buckling_lengths
@@ -57,7 +57,7 @@ def test_a_chord_between_purlins_on_every_joint_has_its_panel_both_ways() -> Non
 
 def test_under_uplift_the_bottom_chord_runs_sideways_from_brace_to_brace() -> None:
     # load reversal: in plane one panel of 2 m, sideways two panels between braces, not one
-    truss = raised()
+    truss = shallow()
     found = lengths(truss, knee_braces="every 2nd purlin")
     bottom = list(truss.bottom.bars)
     assert found.in_plane[bottom] == pytest.approx([2000.0] * 8)
@@ -72,8 +72,13 @@ def test_purlins_alone_leave_the_bottom_chord_its_whole_length() -> None:
 
 
 def test_braces_to_loose_lines_leave_it_too() -> None:
-    truss = raised()
+    truss = shallow()
     assert sideways(truss, "BC4", knee_braces=("B4",), anchored=(1, 2, 3, 7, 8, 9)) == pytest.approx(16000.0)
+
+
+def test_a_brace_that_rises_too_far_leaves_it_too() -> None:
+    assert sideways(shallow(), "BC4", knee_braces=("B4",)) == pytest.approx(8000.0)
+    assert sideways(raised(), "BC4", knee_braces=("B4",)) == pytest.approx(16000.0)  # 4 m below the ridge
 
 
 def test_ties_hold_the_bottom_chord_where_they_cross() -> None:
@@ -341,12 +346,12 @@ def test_the_torsional_length_is_the_sideways_one_unless_twist_is_held() -> None
 
 
 def test_minor_is_the_greater_of_the_two() -> None:
-    found = lengths(raised(), knee_braces=("B4",), ridge_pair=300.0)
+    found = lengths(shallow(), knee_braces=("B4",), ridge_pair=300.0)
     assert found.minor == pytest.approx(np.maximum(found.in_plane, found.out_of_plane))
 
 
 def test_runs_are_listed_for_drawing_and_cover_each_chord() -> None:
-    truss = raised()
+    truss = shallow()
     runs = lengths(truss, knee_braces="every 2nd purlin").runs
     for chord in (truss.top, truss.bottom):
         on = [run for run in runs if run.chord == chord.name]
