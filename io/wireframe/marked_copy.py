@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import math
 from collections import Counter
-from collections.abc import Iterator
+from collections.abc import Iterator, Sequence
 from contextlib import contextmanager
 from io import StringIO
 from pathlib import Path
@@ -24,8 +24,11 @@ from spanwright.truss.errors import OutputError
 _RADIUS = 0.01  # of the span
 _USUAL_SPAN = 10_000.0  # mm, for the size of marks where the import did not get as far as a span
 _COLOURS = {"warning": 1, "note": 150}  # red and a light blue of the format's colour index
-_LONGEST = 120  # characters beside a mark
-_LEAN = 45.0  # degrees: words that rise do not run over those of the next joint
+_LONGEST = 120  # characters of a line in the list
+# of the list of findings, in radii of a mark: how far right of the marks, width of a column; and its rows
+_LIST_AWAY = 12.0
+_LIST_WIDTH = 60.0
+_LIST_ROWS = 60
 
 
 def write_marked_copy(path_in: Path, report: Report, path_out: Path) -> int:
@@ -45,20 +48,19 @@ def write_marked_copy(path_in: Path, report: Report, path_out: Path) -> int:
 
 
 def marked_copy(path: Path, report: Report, mark_of_input: str = "") -> bytes:
-    """Return a copy of a drawing, as a DXF file, in which each finding is circled at its place and told in a line.
+    """Return a copy of a drawing, as a DXF file, in which each finding is circled and numbered at its place.
 
-    The marks of a code are on the layer "SPANWRIGHT <code>", in the plane of drawing. `mark_of_input`, if any, is
-    the property "Input" of the file.
+    A list on the right tells all findings, warnings first. What belongs to a code is on the layer "SPANWRIGHT <code>",
+    in the plane of drawing. `mark_of_input`, if any, is the property "Input" of the file.
 
     Raises DrawingError if the drawing cannot be read, OutputError if it cannot be written again.
     """
     document, _ = read_drawing(path, AS_DRAWN.limits)
-    findings = placed(report)
     try:
-        for code, severity in sorted({(finding.code, finding.severity) for finding in findings}):
+        for code, severity in sorted({(finding.code, finding.severity) for finding in report.findings}):
             if layer_name(code) not in document.layers:
                 document.layers.add(layer_name(code), color=_COLOURS[severity])
-        _Marker(document.modelspace(), report.facts).mark(findings)
+        _Marker(document.modelspace(), report.facts).mark(placed(report), report.findings)
         if mark_of_input:
             properties = document.header.custom_vars
             change = properties.replace if properties.has_tag("Input") else properties.append
@@ -71,7 +73,7 @@ def marked_copy(path: Path, report: Report, mark_of_input: str = "") -> bytes:
 
 def placed(report: Report) -> list[Finding]:
     """Return the findings that have a place to mark."""
-    return [finding for finding in report.findings if finding.at and all(map(math.isfinite, finding.at))]
+    return [finding for finding in report.findings if finding.at]
 
 
 def layer_name(code: str) -> str:
@@ -80,31 +82,52 @@ def layer_name(code: str) -> str:
 
 
 class _Marker:
-    """Draws marks in the plane of drawing."""
+    """Draws marks in the plane of drawing: lengths and places below are in its own axes, `right` and `down` in it."""
 
     def __init__(self, space: Modelspace, facts: Facts) -> None:
         self._space = space
         self._ocs = OCS(facts.normal)
         self._extrusion = Vec3(facts.normal)
-        right = self._ocs.from_wcs(Vec3(facts.up).cross(self._extrusion))
-        self._rotation = math.degrees(math.atan2(right.y, right.x)) + _LEAN
+        self._right = self._ocs.from_wcs(Vec3(facts.up).cross(self._extrusion))
+        self._down = -self._ocs.from_wcs(Vec3(facts.up))
         self._radius = _RADIUS * (facts.span or _USUAL_SPAN) / LENGTH.factors[facts.unit or "mm"]
 
-    def mark(self, findings: list[Finding]) -> None:
-        """Circle every finding and tell it beside the circle; those at one place stand line under line."""
+    def mark(self, placed: list[Finding], findings: Sequence[Finding]) -> None:
+        """Circle and number what has a place, numbers at one place under each other, and list all on the right."""
         there: Counter[tuple[int, ...]] = Counter()
-        down = Vec3(0, -1).rotate_deg(self._rotation)
-        across = Vec3(1, 0).rotate_deg(self._rotation)
-        for finding in findings:
-            cell = tuple(round(value / self._radius) for value in finding.at)
-            centre = self._ocs.from_wcs(Vec3(finding.at))
-            attributes = {"layer": layer_name(finding.code), "extrusion": self._extrusion}
-            self._space.add_circle(centre, self._radius, dxfattribs=attributes)
-            text = self._space.add_text(
-                _told(finding), height=self._radius / 2, rotation=self._rotation, dxfattribs=attributes
-            )
-            text.dxf.insert = centre + (across * 1.2 + down * there[cell]) * self._radius
+        centres = [self._ocs.from_wcs(Vec3(finding.at)) for finding in placed]
+        for number, (finding, centre) in enumerate(zip(placed, centres, strict=True), 1):
+            cell = tuple(round(value / self._radius) for value in centre.xyz)
+            self._space.add_circle(centre, self._radius, dxfattribs=self._attributes(finding))
+            beside = self._right * 1.2 + self._down * (there[cell] - 0.2)
+            self._write(finding, f"{number}: {finding.code}", centre + beside * self._radius)
             there[cell] += 1
+        numbers = {id(finding): f"{number}: " for number, finding in enumerate(placed, 1)}
+        corner = self._corner(centres or [Vec3()])
+        for row, finding in enumerate(sorted(findings, key=_warnings_first)):
+            column, line = divmod(row, _LIST_ROWS)
+            place = self._right * column * _LIST_WIDTH + self._down * line * 1.2
+            self._write(finding, numbers.get(id(finding), "") + _told(finding), corner + place * self._radius)
+
+    def _corner(self, centres: list[Vec3]) -> Vec3:
+        """Return where the list begins: right of all marks, at the height of the highest."""
+        along = max(centre.dot(self._right) for centre in centres) + _LIST_AWAY * self._radius
+        up = max(-centre.dot(self._down) for centre in centres)
+        return self._right * along - self._down * up + Vec3(0, 0, centres[0].z)
+
+    def _write(self, finding: Finding, words: str, place: Vec3) -> None:
+        rotation = math.degrees(math.atan2(self._right.y, self._right.x))
+        text = self._space.add_text(
+            words, height=self._radius / 2, rotation=rotation, dxfattribs=self._attributes(finding)
+        )
+        text.dxf.insert = place
+
+    def _attributes(self, finding: Finding) -> dict[str, object]:
+        return {"layer": layer_name(finding.code), "extrusion": self._extrusion}
+
+
+def _warnings_first(finding: Finding) -> tuple[bool, str]:
+    return finding.severity != "warning", finding.code
 
 
 def _told(finding: Finding) -> str:

@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-import math
 from collections import Counter, defaultdict
 from typing import Any
 
@@ -30,7 +29,7 @@ def report_text(report: Report) -> str:
 def report_record(report: Report) -> dict[str, Any]:
     """Return the report as plain values for JSON, with units in the key names; places are in drawing units.
 
-    Characters that cannot be printed are "?", coordinates that are no numbers None.
+    Characters that cannot be printed are "?".
     """
     facts = report.facts
     return {
@@ -51,7 +50,7 @@ def report_record(report: Report) -> dict[str, Any]:
                 "entity": finding.handle,
                 "layer": _printable(finding.layer),
                 "blocks": [_printable(block) for block in finding.blocks],
-                "at": [value if math.isfinite(value) else None for value in finding.at],
+                "at": list(finding.at),
                 "found": _printable(finding.text),
                 "done": _printable(finding.done),
             }

@@ -17,9 +17,9 @@ from spanwright.io.command_line import main
 from spanwright.io.project_file import parse_project
 from spanwright.io.starter import starter_text
 
-COMMANDS = ("design", "check", "strut", "sections", "starter")
+COMMANDS = ("design", "check", "wireframe", "strut", "sections", "starter")
 SECOND_LOAD = 'joint = "B2"\ndown = "1 kN"\n[[loads.at_joint]]\ncase = "hoist"\nkind = "imposed"'
-HEAVY = ("numpy", "scipy", "networkx", "matplotlib", "pydantic", "rich")
+HEAVY = ("numpy", "scipy", "networkx", "matplotlib", "pydantic", "rich", "ezdxf")
 
 # A truss with a panel that no diagonal stiffens.
 QUADRANGLE = """

@@ -92,14 +92,25 @@ def test_the_marked_copy_circles_every_finding_at_its_place(tmp_path: Path, plac
     assert [circle.dxf.layer for circle in circles] == [layer_name(finding.code) for finding in placed]
     centres = [circle.ocs().to_wcs(circle.dxf.center).xyz for circle in circles]
     np.testing.assert_allclose(centres, [finding.at for finding in placed], atol=1e-6)
-    # seen square on, and the words beside it rising to the right
+    # seen square on, the number beside it, level in the drawing
     normal = np.array(circles[0].dxf.extrusion)
     assert abs(normal @ np.subtract(place((1, 0)), place((0, 0)))) < 1e-9
     texts = [mark for mark in marks if mark.dxftype() == "TEXT"]
-    assert all(text.dxf.text.startswith(text.dxf.layer.removeprefix("SPANWRIGHT ")) for text in texts)
-    beside = np.array(texts[0].ocs().to_wcs(texts[0].dxf.insert).xyz) - np.array(placed[0].at)
-    rising = np.subtract(place((1, 0)), place((0, 0))) + np.subtract(place((0, 1)), place((0, 0)))
-    assert beside == pytest.approx(1.2 * 120.0 * rising / np.sqrt(2), abs=1e-6)
+    assert all(text.dxf.layer.removeprefix("SPANWRIGHT ") in text.dxf.text for text in texts)
+    right, up = (np.subtract(place(axis), place((0, 0))) for axis in ((1, 0), (0, 1)))
+    where = [np.array(text.ocs().to_wcs(text.dxf.insert).xyz) for text in texts]
+    assert where[0] - np.array(placed[0].at) == pytest.approx(120.0 * (1.2 * right + 0.2 * up), abs=1e-6)
+    # every finding is told in the list to the right of all marks, warnings first; those with a place by number
+    listed = texts[len(placed) :]
+    assert len(listed) == len(report.findings)
+    assert min(point @ right for point in where[len(placed) :]) > max(
+        np.array(finding.at) @ right for finding in placed
+    )
+    told = [text.dxf.text for text in listed]
+    assert sum(": W-" in line for line in told) == len(placed)
+    warned = [CODES[text.dxf.layer.removeprefix("SPANWRIGHT ")].severity == "warning" for text in listed]
+    assert warned == sorted(warned, reverse=True)
+    assert warned[0]
     original = len(readfile(path).modelspace())
     assert len(readfile(copy).modelspace()) == original + len(marks)
 
