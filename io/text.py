@@ -4,7 +4,6 @@ from __future__ import annotations
 
 import math
 
-
 FIGURES = 5
 """Significant figures of a worked value."""
 

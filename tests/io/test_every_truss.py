@@ -6,8 +6,8 @@ import json
 from pathlib import Path
 
 import pytest
-
 from demos import FOLDER
+
 from spanwright.io.command_line import main
 
 
