@@ -79,8 +79,9 @@ def _not_passing(setting: Setting, choices: tuple[Choice, ...]) -> list[str]:
         bars = tuple(setting.truss.bar_names[bar] for bar in choice.group.bars)
         worst = governing(choice.checks, bars, None)
         begin = f"no candidate passes for the {choice.group.name}" if choice.group.sized else f"{choice.name} fails"
+        source = f"cl. {worst.clause}" if worst.clause[0].isdigit() else worst.clause
         sentences.append(
-            f"{begin}: {worst.check} (cl. {worst.clause}) of {worst.bar} is {worst.ratio:.2f} times its limit; "
+            f"{begin}: {worst.check} ({source}) of {worst.bar} is {worst.ratio:.2f} times its limit; "
             f"{_what_would_help(worst.check, choice)}"
         )
     return sentences
@@ -90,6 +91,8 @@ def _what_would_help(check: str, choice: Choice) -> str:
     if "out of plane" in check or "slenderness" in check:
         held = "more counted purlins, knee braces or ties" if "chord" in choice.group.role else "shorter webs"
         return f"{held}, or another family"
+    if "bolt" in check:
+        return "smaller bolts, welded ends, or longer legs"
     if "tension" in check:
         return "a longer weld or more bolts, a higher grade, or another family"
     return "closer trusses, a greater depth, shorter panels, or another family"

@@ -106,3 +106,13 @@ def test_sizing_avoids_legs_that_cannot_take_the_bolt() -> None:
     bolted = design(replace(project, ends=Ends("bolted", bolts=2, bolt_diameter=20.0)))
     assert bolted.passes
     assert all(float(choice.section.leg_connected[0]) >= 65.0 for choice in bolted.choices)
+
+
+def test_a_given_section_whose_leg_is_too_small_for_the_bolt_fails_and_says_what_helps() -> None:
+    project = demo("coast_shed")
+    members = replace(project.members, by_role={**project.members.by_role, "post": "L 50x50x5"})
+    found = design(replace(project, members=members, ends=Ends("bolted", bolts=2, bolt_diameter=20.0)))
+    assert not found.passes
+    (told,) = (text for text in found.warnings if text.startswith("L 50x50x5 fails"))
+    assert "bolt fits the connected leg (back-marks, common practice (from memory)) of P1 is 1.67 times" in told
+    assert told.endswith("smaller bolts, welded ends, or longer legs")
