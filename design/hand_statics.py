@@ -162,12 +162,12 @@ def _symmetry(truss: Truss, analysis: Analysis) -> Iterator[Comparison]:
 
 
 def mirror(truss: Truss) -> tuple[int, ...] | None:
-    """Return for each joint its mirror image about mid-span, or None where one has none."""
+    """Return for each joint its mirror image about mid-span, to rounding, or None where one has none."""
     middle = float(truss.xy[[truss.bearing_joints[0], truss.bearing_joints[-1]], 0].sum())
     image = np.column_stack([middle - truss.xy[:, 0], truss.xy[:, 1]])
     away = np.hypot(*(truss.xy[:, None, :] - image[None, :, :]).transpose(2, 0, 1))
     nearest = away.argmin(axis=0)
-    if np.any(away.min(axis=0) > TOLERANCES.same_point):
+    if np.any(away.min(axis=0) > TOLERANCES.drawing_noise):
         return None
     return tuple(int(joint) for joint in nearest)
 

@@ -9,7 +9,7 @@ from spanwright.design.project import Project
 from spanwright.io.project_file import read_project
 
 FOLDER = Path(__file__).parents[1] / "demo_projects"
-DEMOS = ("howe_workshop", "pratt_store", "fink_barn", "coast_shed")
+DEMOS = ("howe_workshop", "pratt_store", "fink_barn", "coast_shed", "scissor_hall")
 
 
 @cache
