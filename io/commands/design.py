@@ -25,6 +25,7 @@ project file (roof.out/ for roof.toml):
   utilisation.png, .svg         the truss coloured by utilisation
   restraint.png, .svg           both chords with what holds them
   wind_zones, wind_pressures    the roof in plan and the truss under wind, where loads follow from [site]
+  wireframe_marked.dxf          the drawing with every finding marked, where the truss is read from one
 
 A group that names one section ("2L 80x80x6") instead of a family ("2L") is checked.
 
