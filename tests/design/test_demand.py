@@ -60,14 +60,15 @@ def test_idle_is_judged_in_each_combination_by_itself() -> None:
 
 
 def test_a_bearing_between_the_ends_has_a_first_web_on_each_side() -> None:
+    """B-T1 is 2 m to the left of C, D-T3 is 4 m to its right and not the nearest to E."""
     truss = hand_made(
-        "A 0 0, B 3 0, C 6 0, D 9 0, E 12 0, T0 0 2, T1 3 2, T2 6 2, T3 9 2, T4 12 2",
+        "A 0 0, B 3 0, C 5 0, D 9 0, E 12 0, T0 0 2, T1 3 2, T2 5 2, T3 9 2, T4 12 2",
         "top T0 T1 T2 T3 T4, bottom A B C D E, web A T0, web B T1, web C T2, web D T3, web E T4, "
         "web T0 B, web T1 C, web C T3, web D T4",
         "A C E",
     )
-    pressed = {"C-T2": -9e3, "B-T1": -4e3, "D-T3": -3e3, "A-T0": -5e3, "E-T4": -5e3}
-    assert webs_marked(truss, pressed) == {"C-T2", "B-T1", "D-T3", "A-T0", "E-T4"}
+    pressed = {"C-T2": -9e3, "B-T1": -4e3, "D-T3": -3e3, "D-T4": -5e3}
+    assert webs_marked(truss, pressed) == set(pressed)
     assert webs_marked(truss, {"C-T3": -9e3, "T0-B": -4e3}) == {"C-T3", "T0-B"}
 
 
