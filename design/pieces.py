@@ -129,8 +129,8 @@ def _remarks(setting: Setting, cut: Cut, length: float) -> tuple[str, ...]:
     if slots:
         where, wide = "both ends" if slots > 1 else "one end", setting.project.members.gap + SLOT_CLEARANCE
         found.append(
-            f"slotted over the gusset at {where}: slots {wide:g} mm wide, at least {weld:.0f} mm of weld along each side "
-            "of the gusset"
+            f"slotted over the gusset at {where}: slots {wide:g} mm wide, at least {weld:.0f} mm of "
+            "weld along each side of the gusset"
         )
     if length < 2.0 * weld:
         found.append(f"too short for the end welds assumed, {weld:.0f} mm along each edge at each end")
