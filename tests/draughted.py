@@ -39,15 +39,16 @@ VARIANTS = {
     "pratt_store": lambda: _text("pratt_store"),
     "fink_barn": lambda: _text("fink_barn"),
     "round_tubes": lambda: _families(_text("howe_workshop"), "CHS", "CHS"),
-    "starred": lambda: _families(_text("howe_workshop"), "2L", "2L star"),
+    "starred": lambda: _families(_text("howe_workshop"), "2L", "2L star").replace(
+        "panels  = 10", 'panels  = 10\noverhang = "0.6 m"'
+    ),
     "loose": lambda: (
         _text("pratt_store")
         .replace('anchored_purlins = "all"', "anchored_purlins = [1, 3, 5, 7, 8, 10, 12, 14]")
         .replace('"every 2nd purlin"', '"every purlin"')
-        .replace("panels     = 12", 'panels     = 12\noverhang   = "0.6 m"')
     ),
 }
-"""Project texts by name: demos, tubes, starred pairs, and a roof with overhangs and loose purlins."""
+"""Project texts by name: demos, tubes, starred pairs with overhangs, and a roof with loose purlins."""
 
 
 @cache

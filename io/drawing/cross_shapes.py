@@ -8,6 +8,7 @@ import numpy as np
 
 from spanwright.design.candidates import Candidates
 from spanwright.design.lying import TUBES
+from spanwright.design.sizing import Choice
 from spanwright.truss.arrays import FloatArray
 from spanwright.truss.model import Role
 
@@ -22,6 +23,28 @@ class Shape:
     """One rolled piece in cross-section: its outer ring (n, 2), and of a tube its inner ring."""
 
     rings: tuple[FloatArray, ...]
+
+
+@dataclass(frozen=True, eq=False)
+class Cell:
+    """One cross-section: what it goes through, its pieces, its packing plate (4, 2) or None, gusset, title, caption.
+
+    width : mm on paper.
+    """
+
+    choice: Choice
+    pieces: tuple[Shape, ...]
+    pack: FloatArray | None
+    gusset: float
+    title: str
+    caption: tuple[str, ...]
+    width: float
+
+    @property
+    def steel(self) -> FloatArray:
+        """(n, 2) mm, all points of steel, packing plate included."""
+        rings = [ring for piece in self.pieces for ring in piece.rings]
+        return np.vstack([*rings, *([] if self.pack is None else [self.pack])])
 
 
 def shapes(section: Candidates, role: Role, gusset: float) -> tuple[Shape, ...]:

@@ -17,7 +17,7 @@ from spanwright.truss.chords import slopes
 from spanwright.truss.model import Truss
 from spanwright.truss.tolerances import TOLERANCES
 
-FIRST, BESIDE, APART = 18.0, 11.0, 8.0
+FIRST, BESIDE, APART = 19.0, 11.0, 8.0
 """mm on paper from the steel to the first dimension line above and below, and beside it; and from line to line."""
 
 

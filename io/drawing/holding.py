@@ -42,13 +42,18 @@ class Signs:
     scale: float
 
     @property
+    def brace_boxes(self) -> FloatArray:
+        """(n, 6) boxes that the knee braces take."""
+        found = [boxes_along(line[None], 0.6 * self.scale) for line, _ in self.braces]
+        return np.vstack([np.zeros((0, 6)), *found])
+
+    @property
     def boxes(self) -> FloatArray:
-        """(n, 6) boxes that the signs take."""
+        """(n, 6) boxes that the other signs take."""
         unit = self.scale
         found = [np.zeros((0, 6))]
         found += [box(ring.mean(axis=0), 0.0, 3.0 * unit, 3.0 * unit)[None] for ring, _, _ in self.purlins]
         found += [box(ring.mean(axis=0), 0.0, TIE[0] * unit, TIE[1] * unit)[None] for ring, _ in self.ties]
-        found += [boxes_along(line[None], 0.6 * unit) for line, _ in self.braces]
         high = BEARING + 2.0 * ROLLER + 1.2
         found += [
             box(top - np.array([0.0, high / 2.0 * unit]), 0.0, 2.4 * GROUND * unit, high * unit)[None]

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
+from itertools import product
 
 import numpy as np
 
@@ -24,12 +25,14 @@ CLEAR = 0.5
 """mm on paper left free on all sides of a text."""
 OFF = 0.9
 """mm on paper between a member's edge and the text beside it."""
-BEYOND_SIGNS = 7.5
+BEYOND_SIGNS = 8.4
 """mm on paper from a chord to texts beyond its purlins and joint names."""
 LEADERS = tuple(np.arange(6.0, 54.0, 3.0))
 """mm on paper: lengths of leaders, tried in this order."""
 WIDEST_MARK = 60.0
 """mm on paper: a longer mark is cut short."""
+LED_TO = (0.5, 0.42, 0.58, 0.34, 0.66)
+"""Places along a member that its leader may point to, as shares of its length."""
 ABOVE = (90.0, 60.0, 120.0, 40.0, 140.0, 0.0, 180.0)
 BELOW = (270.0, 300.0, 240.0, 320.0, 220.0, 0.0, 180.0)
 BESIDE = (180.0, 0.0, 135.0, 45.0, 225.0, 315.0, 90.0, 270.0)
@@ -60,7 +63,7 @@ class Label:
 def labels(design: Design, found: Signs, dimensions: FloatArray) -> tuple[Label, ...]:
     """Return every text of an elevation at the scale of its signs, clear of the (n, 6) boxes of its dimensions."""
     scale = found.scale
-    occupied = Occupied(np.vstack([_steel(design), found.boxes]), dimensions)
+    occupied = Occupied(np.vstack([_steel(design), found.brace_boxes]), found.boxes, dimensions)
     placed = [*_purlin_numbers(design, found, occupied), *_joint_names(design, scale, occupied)]
     left = []
     for cut in sorted(cuts(design.setting, design.choices), key=lambda cut: cut.axis):
@@ -144,8 +147,12 @@ def _joint_to_joint(design: Design, cut: Cut) -> FloatArray:
 def _with_leader(design: Design, cut: Cut, scale: float, occupied: Occupied) -> Iterator[Label]:
     """Set mark and section off a member that is too short for them, with a leader; at worst the mark alone at it."""
     text = _in_one(design, cut)
-    middle = (cut.start + cut.finish) / 2.0
-    found = with_leader(middle, _size(text, scale), [reach * scale for reach in LEADERS], occupied)
+    reaches = [reach * scale for reach in LEADERS]
+    for over_signs, share in product((False, True), LED_TO):
+        at = cut.start + share * (cut.finish - cut.start)
+        found = with_leader(at, _size(text, scale), reaches, occupied, over_signs=over_signs)
+        if found:
+            break
     if found:
         bar = design.setting.truss.bar_names[cut.bars[0]]
         yield Label(text, found[0].middle, 0.0, MARKS, found[1], bar=bar)

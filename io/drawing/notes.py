@@ -83,7 +83,7 @@ def general_notes(design: Design, width: float) -> Notes:
         f"Mass of one truss {kilograms(whole.mass)}, to lift {kilograms(whole.lift_mass)} with the allowance for "
         "gussets and fixings.",
         *whole.remarks,
-        *design.warnings[:WARNINGS],
+        *(f"{warning[:1].upper()}{warning[1:]}" for warning in design.warnings[:WARNINGS]),
     ]
     if len(design.warnings) > WARNINGS:
         paragraphs.append(f"{len(design.warnings) - WARNINGS} more warnings are in results.json.")

@@ -8,7 +8,7 @@ from itertools import islice, permutations
 
 import numpy as np
 
-FREE = (24.0, 18.0, 12.0, 8.0, 6.0)
+FREE = (24.0, 18.0, 12.0, 8.0, 6.0, 4.0)
 """Left free between blocks, the most that there is room for."""
 LARGEST = 5
 """Blocks whose order is varied; the smaller ones always come after them."""

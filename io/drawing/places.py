@@ -32,15 +32,16 @@ class Place:
 
 
 class Occupied:
-    """What stands on the drawing already: steel and signs; dimensions and texts, which no leader may cross."""
+    """What stands on the drawing already: steel, signs, and texts with the dimensions."""
 
-    def __init__(self, steel: FloatArray, dimensions: FloatArray) -> None:
+    def __init__(self, steel: FloatArray, signs: FloatArray, dimensions: FloatArray) -> None:
         self.steel = steel
+        self.signs = signs
         self.texts = dimensions
 
     def free(self, middles: FloatArray, angle: float, size: Size) -> BoolArray:
         """Return (n,) True for boxes of one size and angle about (n, 2) middles that nothing overlaps."""
-        taken = np.vstack([self.steel, self.texts])
+        taken = np.vstack([self.steel, self.signs, self.texts])
         along, upward = np.array([np.cos(angle), np.sin(angle)]), np.array([-np.sin(angle), np.cos(angle)])
         half = np.array(size) / 2.0
         apart = taken[None, :, :2] - middles[:, None]
@@ -65,9 +66,10 @@ class Occupied:
         self.add(middle, angle, size)
         return middle
 
-    def crosses_text(self, start: FloatArray, end: FloatArray) -> bool:
-        """Whether a line runs through a text."""
-        return bool(overlaps(boxes_along(np.array([[start, end]]), 0.0)[0], self.texts).any())
+    def crosses(self, start: FloatArray, end: FloatArray, *, signs: bool) -> bool:
+        """Whether a line runs through a text or a dimension, or with `signs` through a sign."""
+        line = boxes_along(np.array([[start, end]]), 0.0)[0]
+        return bool(overlaps(line, self.texts).any() or (signs and overlaps(line, self.signs).any()))
 
     def add(self, middle: FloatArray, angle: float, size: Size) -> None:
         """Let a box be taken by a text."""
@@ -120,9 +122,12 @@ def near_point(
 
 
 def with_leader(
-    point: FloatArray, size: Size, reaches: Iterable[float], occupied: Occupied
+    point: FloatArray, size: Size, reaches: Iterable[float], occupied: Occupied, *, over_signs: bool
 ) -> tuple[Place, FloatArray] | None:
-    """Return the nearest free place for level text about a point and its leader (2, 2), text first, or None."""
+    """Return the nearest free place for level text about a point and its leader (2, 2), text first, or None.
+
+    over_signs : whether the leader may cross signs.
+    """
     towards = np.column_stack([np.cos(TURNS), np.sin(TURNS)])
     half = np.array(size) / 2.0
     for reach in reaches:
@@ -130,7 +135,7 @@ def with_leader(
         for middle in middles[occupied.free(middles, 0.0, size)]:
             feet = middle + half * np.array([[-1.0, 0.0], [1.0, 0.0], [0.0, -1.0], [0.0, 1.0]])
             start = feet[np.hypot(*(feet - point).T).argmin()]
-            if not occupied.crosses_text(start, point):
+            if not occupied.crosses(start, point, signs=not over_signs):
                 occupied.add(middle, 0.0, size)
                 return Place(middle, 0.0), np.array([start, point])
     return None

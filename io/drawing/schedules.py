@@ -34,16 +34,15 @@ def parts(design: Design) -> Table:
     """Return the parts list, remarks as numbered sentences below it."""
     listed = parts_table(design)
     at = {column.key: place for place, column in enumerate(listed.columns)}
-    remarks: dict[str, int] = {}
+    numbers: dict[str, int] = {}
     rows = []
-    for row in listed.rows:
+    for row, piece in zip(listed.rows, design.pieces, strict=True):
         cells = [_cell(row[at[key]], listed.columns[at[key]].decimals) for key, _ in PARTS]
-        note = row[at["remarks"]]
-        cells.append(str(remarks.setdefault(str(note), len(remarks) + 1)) if note else "")
-        rows.append(tuple(cells))
+        notes = [str(numbers.setdefault(remark, len(numbers) + 1)) for remark in piece.remarks]
+        rows.append((*cells, ", ".join(notes)))
     right = frozenset(place for place, (key, _) in enumerate(PARTS) if listed.columns[at[key]].decimals is not None)
-    sentences = tuple(f"{number})  {text}" for text, number in remarks.items())
-    return Table("PARTS LIST", (*(head for _, head in PARTS), "Note"), tuple(rows), right, sentences)
+    sentences = tuple(f"{number})  {text}" for text, number in numbers.items())
+    return Table("PARTS LIST", (*(head for _, head in PARTS), "Notes"), tuple(rows), right, sentences)
 
 
 def _cell(value: str | float | None, decimals: int | None) -> str:

@@ -106,7 +106,7 @@ def _field(pen: Pen, left: float, bottom: float, width: float, high: float, capt
     pen.text(NOTES, (left + 1.0, bottom + high - 1.0 - TEXT), cut_to(caption, width - 2.0))
     if high == TITLE_ROW:
         for number, line in enumerate(wrapped(value, width - 4.0, TITLE, most=2)):
-            pen.text(TITLE_BLOCK, (left + 2.0, bottom + high - 9.5 - 7.5 * number), line, TITLE)
+            pen.text(TITLE_BLOCK, (left + 2.0, bottom + high - 10.4 - 7.0 * number), line, TITLE)
         return
     height = LARGE if cut_to(value, width - 2.0, LARGE) == value else TEXT
     pen.text(TITLE_BLOCK, (left + 1.0, bottom + 1.2), cut_to(value, width - 2.0, height), height)
