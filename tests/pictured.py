@@ -57,7 +57,7 @@ _FINK = 'form = "Fink"\nspan = "13.5 m"\npitch = "30 deg"\npanels = 8'
 _TIED = 'anchored_purlins = "all"\nbottom_ties = ["B2", "B5", "B8"]'
 _FINK_TIED = 'anchored_purlins = "all"\nbottom_ties = ["B1", "B2", "B3", "B4"]'
 _BRACED = 'ridge_purlins = "pair, 0.2 m from the apex"\nknee_braces = "every 2nd purlin"\nanchored_purlins = {anchored}'
-_LOOSE = "[1, 2, 3, 6, 7, 8, 9, 10, 11, 12, 13, 14]"
+_LOOSE = "[1, 2, 3, 4, 7, 8, 9, 10, 11, 12, 13, 14, 15, 16]"
 
 _ROOFS: dict[str, dict[str, str]] = {
     "howe": {"truss": _HOWE.format(pitch=18), "restraint": _TIED},
