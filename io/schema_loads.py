@@ -6,10 +6,11 @@ from typing import Annotated, Any, ClassVar, Literal, Self
 
 from pydantic import WrapValidator, model_validator
 
-from spanwright.io.schema_fields import Answer, Name, Table, field, key, one_of, ranged, refused
+from spanwright.io.schema_fields import Answer, Name, Table, field, key, number, one_of, ranged, refused
 from spanwright.io.units import FORCE, PRESSURE, shown
 from spanwright.loads.inputs import JointLoad, LoadsInput, MostLeast, WindInput
 from spanwright.loads.site_inputs import Derivable
+from spanwright.loads.strips import SIDES
 from spanwright.truss.errors import InputError
 
 CaseKind = Literal["permanent", "imposed", "snow", "wind"]
@@ -18,7 +19,8 @@ _surface_load = ranged(PRESSURE, "kPa", "0 kPa", "20 kPa")
 SurfaceLoad = Annotated[float, field(_surface_load)]
 WindPressure = Annotated[float, field(ranged(PRESSURE, "kPa", "-10 kPa", "10 kPa"))]
 WallForce = Annotated[float, field(ranged(FORCE, "kN", "-500 kN", "500 kN"))]
-PointForce = Annotated[float, field(ranged(FORCE, "kN", "-2000 kN", "2000 kN"))]
+_point_force = ranged(FORCE, "kN", "-2000 kN", "2000 kN")
+PointForce = Annotated[float, field(_point_force)]
 ManForce = Annotated[float, field(ranged(FORCE, "kN", "0 kN", "10 kN"))]
 
 
@@ -47,14 +49,51 @@ Permanent = Annotated[PermanentTable, WrapValidator(_one_or_two)]
 
 
 class WindTable(Table):
-    """A table [[loads.wind]]."""
+    """A table [[loads.wind]]. Whether a slope exists whose pressure is left out, the loads room judges."""
 
     name: Name = key('the name of the wind case, such as "across ridge, suction"')
-    left: WindPressure = key("net pressure normal to the left slope; + presses the roof in, - lifts it")
-    right: WindPressure = key("net pressure normal to the right slope; + presses the roof in, - lifts it")
+    left: WindPressure | None = key(
+        "net pressure normal to the left slope; + presses the roof in, - lifts it", None, otherwise="no such slope"
+    )
+    right: WindPressure | None = key(
+        "net pressure normal to the right slope; + presses the roof in, - lifts it", None, otherwise="no such slope"
+    )
     eaves_left: WallForce = key("horizontal force at the left bearing, + to the right", "0 kN")
     eaves_right: WallForce = key("horizontal force at the right bearing, + to the right", "0 kN")
     mirrored: Answer = key("whether the mirrored case is added", True)
+
+    @model_validator(mode="after")
+    def _presses(self) -> Self:
+        if self.left is None and self.right is None:
+            raise refused(
+                InputError("a wind case without a pressure", 'write left = "-0.75 kPa" and right = "-0.55 kPa"')
+            )
+        return self
+
+    def value(self) -> WindInput:
+        """Return it as the loads room takes it."""
+        unstated = tuple(side for side in SIDES if getattr(self, side) is None)
+        left, right = self.left or 0.0, self.right or 0.0
+        return WindInput(self.name, left, right, self.eaves_left, self.eaves_right, self.mirrored, unstated)
+
+
+class PermanentForceTable(Table):
+    """A permanent load at a joint with its greatest and its least credible value."""
+
+    most: PointForce = key('the greatest credible value, such as "8 kN"')
+    least: PointForce = key('the least credible value, such as "5 kN"; it counts where the load helps')
+
+
+def _force(value: Any, _: Any) -> float | PermanentForceTable:
+    if isinstance(value, dict):
+        return PermanentForceTable.model_validate(value)
+    try:
+        return _point_force(value)
+    except InputError as error:
+        raise refused(error) from error
+
+
+JointForce = Annotated[float | PermanentForceTable, WrapValidator(_force)]
 
 
 class JointLoadTable(Table):
@@ -65,14 +104,34 @@ class JointLoadTable(Table):
         'what acts; it sets the load factors. Write "permanent", "imposed", "snow" or "wind"'
     )
     joint: Name = key('the joint that carries the load, such as "B6"')
-    down: PointForce = key("downward", "0 kN")
-    right: PointForce = key("to the right", "0 kN")
+    down: JointForce = key(
+        'downward; of a permanent load also { most = "8 kN", least = "5 kN" }: one value is nothing where it helps',
+        "0 kN",
+    )
+    right: JointForce = key("to the right; of a permanent load also with most and least", "0 kN")
+    psi: Annotated[float, number(0.0, 1.0)] | None = key(
+        "share of an imposed load that accompanies roof imposed, man, snow and wind, 0 to 1",
+        None,
+        otherwise="1 where it is imposed",
+    )
 
     @model_validator(mode="after")
     def _acts(self) -> Self:
         if not self.model_fields_set & {"down", "right"}:
             raise refused(InputError("a load without a force", 'write down = "5 kN" or right = "1 kN"'))
+        pairs = [name for name in ("down", "right") if isinstance(getattr(self, name), PermanentForceTable)]
+        if pairs and self.kind != "permanent":
+            found = f"{pairs[0]} has a most and a least value, and the load is {self.kind}"
+            raise refused(InputError(found, 'write one value; most and least are for kind = "permanent"'))
         return self
+
+    def value(self) -> JointLoad:
+        """Return it as the loads room takes it."""
+        (down, least_down), (right, least_right) = (
+            (force.most, force.least) if isinstance(force, PermanentForceTable) else (force, None)
+            for force in (self.down, self.right)
+        )
+        return JointLoad(self.case, self.kind, self.joint, down, right, least_down, least_right, self.psi)
 
 
 def _none_or_cases(value: Any, cases: Any) -> Any:
@@ -99,10 +158,10 @@ class _AnyLoads(Table):
         return LoadsInput(
             roof_permanent=MostLeast(0.0, 0.0) if roof_permanent is None else roof_permanent.value(),
             roof_imposed=roof_imposed or 0.0,
-            wind=tuple(WindInput(w.name, w.left, w.right, w.eaves_left, w.eaves_right, w.mirrored) for w in wind or ()),
+            wind=tuple(table.value() for table in wind or ()),
             ceiling_permanent=self.ceiling_permanent.value(),
             man_load=man_load or 0.0,
-            at_joint=tuple(JointLoad(p.case, p.kind, p.joint, p.down, p.right) for p in self.at_joint),
+            at_joint=tuple(table.value() for table in self.at_joint),
         )
 
 

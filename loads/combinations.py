@@ -1,16 +1,21 @@
-"""Combinations of load cases by a loading standard, enumerated from its table and never chosen by a resultant."""
+"""Combinations of load cases by a loading standard, enumerated from its table and never chosen by a resultant.
+
+Imposed loads at joints that are cases of their own, such as a hoist, lead in rows of their own. Where another action
+leads, each accompanies it with its psi, or stays away: every subset of them stands, for a hoist that helps one member
+presses another.
+"""
 
 from __future__ import annotations
 
 import math
-from collections.abc import Callable
+from collections.abc import Callable, Iterator
 from dataclasses import dataclass
-from itertools import product
+from itertools import combinations, product
 from typing import Literal, cast
 
 import numpy as np
 
-from spanwright.loads.cases import Case
+from spanwright.loads.case import Case
 from spanwright.loads.intermediate import Intermediate, Mark, to_verify
 from spanwright.loads.national import national_basis
 from spanwright.loads.partial_factors import en_1990_factors
@@ -52,19 +57,26 @@ ACTIONS: dict[str, Actions] = {
 }
 """Loading standards by name."""
 
-COLUMNS = ("most", "least", "imposed", "man", "snow", "exceptional snow", "wind")
-"""Columns of such a file that may hold factors: the two permanent sets, then the kinds of variable cases.
+COLUMNS = ("most", "least", "imposed", "man", "snow", "exceptional snow", "wind", "at joint")
+"""Columns of such a file that may hold factors: the two permanent sets, then the kinds of variable cases; "at joint" is
+for imposed loads at joints that are cases of their own.
 
 A factor is a number or a product ("gQ*psi0_wind") of numbers and of values that the standard leaves to the site.
 """
+BESIDE = "beside"
+"""The column with the factor, before their own psi, of loads at joints that accompany what a row holds."""
+MOST_BESIDE = 4
+"""So many loads at joints may accompany others, in 16 ways; more would bury every other combination."""
+
+Terms = tuple[tuple[str, float], ...]
 
 
 @dataclass(frozen=True)
 class Combination:
     """One combination.
 
-    name : unique, as printed ("1.2 most + 1.6 imposed"); where two limit states hold the same sum, the later one in
-        the standard's file is printed with its limit state ("EQU: 0.9 least + 1.3 west gale").
+    name : unique, as printed ("1.2 most + 1.6 imposed + 0.48 hoist"); where two limit states hold the same sum, the
+        later one in the standard's file is printed with its limit state ("EQU: 0.9 least + 1.3 west gale").
     limit_state : "STR" and "STR-P" are for members, "EQU" for reactions only, "SLS" for total deflection,
         "SLS variable" for the deflection of the variable actions alone, "SLS quasi-permanent" for what lasts.
     factors : (case name, factor) each.
@@ -72,7 +84,7 @@ class Combination:
 
     name: str
     limit_state: LimitState
-    factors: tuple[tuple[str, float], ...]
+    factors: Terms
 
 
 def combine(cases: tuple[Case, ...], actions: str, site: SiteInput | None = None) -> tuple[Combination, ...]:
@@ -81,19 +93,26 @@ def combine(cases: tuple[Case, ...], actions: str, site: SiteInput | None = None
     site : its altitude and nation set the factors that the standard leaves to them; None: the recommended values, for a
     site not above 1000 m.
 
-    Raises UnknownNameError (key "actions") for a standard nobody knows, and InputError (key "actions") for a case of a
-    kind that the standard does not combine: it would act nowhere.
+    Raises UnknownNameError (key "actions") for a standard nobody knows; InputError (key "actions") for a case of a kind
+    that the standard does not combine, as it would act nowhere, and (key "loads.at_joint") where more than
+    `MOST_BESIDE` loads at joints accompany others.
     """
     standard = _standard(actions)
     rows, values = standard.rows(), standard.factors(site)
     _refuse_lost(cases, rows, actions)
-    combinations: dict[str, Combination] = {}
+    _refuse_many_beside(cases)
+    found: dict[str, Combination] = {}
+    sums: set[tuple[LimitState, frozenset[tuple[str, float]]]] = set()
     for row in rows:
         for combination in _expand(row, cases, values):
-            if combination.name in combinations:
+            same = combination.limit_state, frozenset(combination.factors)
+            if same in sums:  # two loads at joints with a psi of 1 each: either may lead
+                continue
+            sums.add(same)
+            if combination.name in found:
                 combination = _told_apart(combination)
-            combinations[combination.name] = combination
-    return tuple(combinations.values())
+            found[combination.name] = combination
+    return tuple(found.values())
 
 
 def combination_factors(actions: str, site: SiteInput | None = None) -> tuple[Intermediate, ...]:
@@ -109,7 +128,7 @@ def combination_cautions(cases: tuple[Case, ...], actions: str, site: SiteInput 
     standard = _standard(actions)
     values = standard.factors(site)
     used = [row for row in standard.rows() if _expand(row, cases, values)]
-    named = {part for row in used for column in COLUMNS for part in row.get(column, "").split("*")}
+    named = {part for row in used for column in (*COLUMNS, BESIDE) for part in row.get(column, "").split("*")}
     tables = (
         Intermediate("", f"combinations for {row['limit_state']}", math.nan, "-", mark=cast(Mark, row["mark"]))
         for row in used
@@ -144,8 +163,20 @@ def _refuse_lost(cases: tuple[Case, ...], rows: list[dict[str, str]], actions: s
             )
 
 
+def _refuse_many_beside(cases: tuple[Case, ...]) -> None:
+    names = [case.name for case in cases if case.psi]
+    if len(names) > MOST_BESIDE:
+        raise InputError(
+            f"{len(names)} imposed loads at joints accompany others: {', '.join(names)}",
+            f"at most {MOST_BESIDE} may: give one case name to those that act together, and psi = 0 to those that act "
+            "alone, such as the places of one hoist",
+            "loads.at_joint",
+        )
+
+
 def _expand(row: dict[str, str], cases: tuple[Case, ...], values: Factors) -> list[Combination]:
-    """Return one combination for every way to take one case of each kind that the row gives a factor.
+    """Return one combination for every way to take one case of each kind that the row gives a factor, and any of the
+    loads at joints beside them.
 
     None where a factor is 0: the standard's file has a row without that action.
     """
@@ -154,10 +185,21 @@ def _expand(row: dict[str, str], cases: tuple[Case, ...], values: Factors) -> li
         return []
     choices = [[(case.name, factor) for case in cases if _column(case) == column] for column, factor in factors.items()]
     state = cast(LimitState, row["limit_state"])
+    beside = _factor(row[BESIDE], values) if row.get(BESIDE) else 0.0
     return [
         Combination(" + ".join(f"{factor} {name}" for name, factor in terms), state, terms)
-        for terms in product(*choices)
+        for leading in product(*choices)
+        for terms in _accompanied(leading, cases, beside)
     ]
+
+
+def _accompanied(leading: Terms, cases: tuple[Case, ...], beside: float) -> Iterator[Terms]:
+    """Yield the terms of a combination without and with each subset of the loads at joints that may accompany them."""
+    there = {name for name, _ in leading}
+    able = [(case.name, round(beside * case.psi, 6)) for case in cases if case.psi and case.name not in there]
+    for count in range(len(able) + 1 if beside else 1):
+        for some in combinations(able, count):
+            yield (*leading, *some)
 
 
 def _factor(text: str, values: Factors) -> float:
@@ -167,7 +209,9 @@ def _factor(text: str, values: Factors) -> float:
 
 
 def _column(case: Case) -> str:
-    return case.name if case.kind == "permanent" else case.kind
+    if case.kind == "permanent":
+        return case.name
+    return case.kind if case.psi is None else "at joint"
 
 
 def _told_apart(combination: Combination) -> Combination:

@@ -20,6 +20,7 @@ class WindInput:
 
     eaves_left, eaves_right : N, horizontal at the bearings from wind on the walls, + to the right.
     mirrored : whether the mirrored case is added.
+    unstated : slopes whose pressure the user left out, here 0: right only where the roof has no such slope.
     """
 
     name: str
@@ -28,17 +29,28 @@ class WindInput:
     eaves_left: float = 0.0
     eaves_right: float = 0.0
     mirrored: bool = True
+    unstated: tuple[Literal["left", "right"], ...] = ()
 
 
 @dataclass(frozen=True)
 class JointLoad:
-    """A load at one joint; the name of an existing case joins that case. N; `right` + to the right."""
+    """A load at one joint; the name of an existing case joins that case. N; `right` + to the right.
+
+    A permanent load with a case name of its own joins "most" with `down` and `right`, and "least" with `least_down` and
+    `least_right`. None: not stated, and it counts as nothing in "least", where it would help; a load that lifts then
+    counts in "least" alone.
+    psi : of an imposed load that is a case of its own, the share of it that accompanies other variable loads, 0 to 1;
+        None: not stated, in full.
+    """
 
     case: str
     kind: Literal["permanent", "imposed", "snow", "wind"]
     joint: str
     down: float = 0.0
     right: float = 0.0
+    least_down: float | None = None
+    least_right: float | None = None
+    psi: float | None = None
 
 
 @dataclass(frozen=True)

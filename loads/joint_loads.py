@@ -75,6 +75,27 @@ def at_joint(truss: Truss, load: JointLoad) -> Derived:
     return forces, (f"{load.case}: {say.force(load.right, -load.down)} at {load.joint}",)
 
 
+def own_mass_warnings(truss: Truss) -> tuple[str, ...]:
+    """Return a sentence that names the parts of the chords that their own mass bends noticeably, if there are any.
+
+    A cantilever is bent like a span twice as long: w l2/2 = w (2 l)2/8.
+    """
+    limit = TOLERANCES.long_chord_panel
+    bars = (*truss.top.bars, *truss.bottom.bars)
+    long = [truss.bar_names[bar] for bar in bars if truss.lengths[bar] > limit]
+    long += [
+        f"{side} overhang"
+        for side, length in zip(("left", "right"), truss.top.overhang, strict=True)
+        if 2 * length > limit
+    ]
+    if not long:
+        return ()
+    return (
+        f"longer than {say.metres(limit)} between joints, or half of that as an overhang: {', '.join(long)}; "
+        "bending by own mass between joints (w L2/8, w l2/2) is left out and should be added there",
+    )
+
+
 def own_mass_loads(truss: Truss, mass_per_m: FloatArray) -> FloatArray:
     """Return (j, 2) N: the weight of the bars, half of each to each of its joints; an overhang's to the end joint.
 

@@ -33,6 +33,11 @@ class Roof:
     beams: ChordBeams
     tributary: float
 
+    @property
+    def has_both_slopes(self) -> bool:
+        """Whether the roof has a left and a right slope."""
+        return set(self.strips.slope) == set(SIDES)
+
     def permanent(self, pressure: float, *, pulled: bool = False) -> Part:
         """Return the part of a permanent pressure on the slope, MPa; pulled : see `bending.Influence.part`."""
         forces = self.strips.on_slope(pressure * self.tributary)

@@ -24,6 +24,7 @@ class Strips:
     middles : (q,) x of the middle of each piece, mm.
     directions : (q, 2) unit vectors, left to right.
     slope : (q,) the slope each piece lies on. half : (q,) the half of the roof it lies on.
+    halves_meet : x where the halves meet, mm: the apex, on a roof of one slope mid-span.
     """
 
     places: FloatArray
@@ -33,6 +34,7 @@ class Strips:
     directions: FloatArray
     slope: tuple[SlopeSide, ...]
     half: tuple[SlopeSide, ...]
+    halves_meet: float
 
     def on_slope(self, load: float) -> FloatArray:
         """Return (l, 2) N for a load down, N per mm of slope."""
@@ -94,6 +96,7 @@ def strips(truss: Truss, lines: tuple[PurlinLine, ...], cuts: FloatArray | None 
         roof.directions[bar],
         tuple(roof.side[at] for at in bar),
         tuple("left" if middle < half else "right" for middle in middles),
+        float(np.interp(half, along_of, x_of)),
     )
 
 

@@ -9,6 +9,7 @@ import pytest
 from hypothesis import HealthCheck, given, settings
 from hypothesis import strategies as st
 
+from spanwright.design.run import prepare
 from spanwright.io.project_file import parse_project, read_project
 from spanwright.io.starter import starter_text
 from spanwright.truss.errors import InputError, SpanwrightError, UnknownNameError
@@ -56,6 +57,8 @@ def mistake(text: str) -> InputError:
         ("gusset", "gusset = 8", "members.gusset", "8 has no unit", 'write "8 mm"'),
         ("roof_imposed", 'roof_imposed = "0.3"', "loads.roof_imposed", '"0.3" has no unit', 'write "0.3 kPa"'),
         ("left", 'left = "-0.75 kN"', "loads.wind[1].left", "is a force, not a pressure", "kPa"),
+        ("down", "psi = 1.5", "loads.at_joint[1].psi", "outside", "from 0 to 1"),
+        ("down", 'psi = "1"', "loads.at_joint[1].psi", "is not a number", "no quotes"),
         ("down", 'down = "5 kPa"', "loads.at_joint[1].down", "is a pressure, not a force", "kN"),
         ("pitch", 'pitch = "10 m"', "truss.pitch", "is a length, not an angle", "deg"),
         ("fixings", 'fixings = "0.08"', "members.fixings", '"0.08" has no unit', "%"),
@@ -130,7 +133,6 @@ def test_a_mistake_names_key_value_and_remedy(key: str, line: str, place: str, f
         ("bearings_held", "eaves strut"),
         ("roof_permanent", "uplift"),
         ("roof_imposed", "loading standard"),
-        ("left", "lifts"),
         ("kind", "load factors"),
     ],
 )
@@ -139,6 +141,26 @@ def test_a_required_key_that_is_missing_is_explained(key: str, meaning: str) -> 
     assert error.key.rpartition(".")[2] == key
     assert "required and missing" in error.found
     assert meaning in error.remedy
+
+
+def test_a_wind_case_states_a_pressure_on_every_slope_there_is() -> None:
+    """A roof of one slope may leave the other out, so it is the loads room that asks."""
+    with pytest.raises(InputError, match="no pressure on the left slope") as caught:
+        prepare(parse_project(changed("left", "")))
+    assert caught.value.key == "loads.wind"
+    assert 'left = "' in caught.value.remedy
+    assert mistake(changed("left", "").replace('right       = "-0.55 kPa"', "")).key == "loads.wind[1]"
+
+
+def test_most_and_least_of_a_load_at_a_joint_are_for_permanent_ones() -> None:
+    pair = 'down = { most = "8 kN", least = "5 kN" }'
+    error = mistake(changed("down", pair))
+    assert error.key == "loads.at_joint[1]"
+    assert "permanent" in error.remedy
+    permanent = changed("down", pair).replace('kind  = "imposed"', 'kind  = "permanent"')
+    (load,) = parse_project(permanent).loads.at_joint
+    assert (load.down, load.least_down, load.least_right) == (8000.0, 5000.0, None)
+    assert mistake(permanent.replace('least = "5 kN"', 'less = "5 kN"')).key == "loads.at_joint[1].down.less"
 
 
 @pytest.mark.parametrize("answer", ["", "wind = []", 'wind = "no"', "wind = 3"])

@@ -108,6 +108,13 @@ def test_the_least_file_lists_its_defaults() -> None:
     assert not {"truss.pitch", "truss.span", "loads.wind", "title_block.owner"} & set(taken)
 
 
+def test_the_psi_of_a_hoist_is_stated_or_recorded_as_a_default() -> None:
+    assert dict(parse_project(starter_text()).defaults_used)["loads.at_joint[1].psi"] == "1 where it is imposed"
+    stated = starter_with("psi = 0.3", "# psi = 1.0 ")
+    assert stated.loads.at_joint == (JointLoad("hoist", "imposed", "B6", 5000.0, psi=0.3),)
+    assert "loads.at_joint[1].psi" not in dict(stated.defaults_used)
+
+
 def test_every_default_listed_is_a_key_that_may_be_written() -> None:
     written = {(place, key) for place, table in all_tables() for key in table.model_fields}
     for key, _ in parse_project(LEAST).defaults_used:

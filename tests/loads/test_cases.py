@@ -1,6 +1,7 @@
 """Load cases of a small roof: 8 m span, 3-4-5 slopes, trusses 5 m apart."""
 
 import math
+from typing import Literal
 
 import numpy as np
 import pytest
@@ -114,10 +115,21 @@ def test_ceiling_by_half_panels_on_the_bottom_joints() -> None:
 
 def test_long_bottom_panels_warn_under_a_ceiling_only() -> None:
     fink = build_form(FormInput("Fink", 12000.0, math.radians(30.0), panels=4))  # bottom panels of 4 m
-    assert load_set(loads(), fink).warnings == ()
-    (warning,) = load_set(loads(ceiling=MostLeast(0.1e-3, 0.0)), fink).warnings
-    assert "hangers" in warning
+    assert not [text for text in load_set(loads(), fink).warnings if "hangers" in text]
+    (warning,) = [text for text in load_set(loads(ceiling=MostLeast(0.1e-3, 0.0)), fink).warnings if "hangers" in text]
     assert "BC1" in warning
+
+
+def test_bending_by_own_mass_is_left_out_and_said() -> None:
+    """Reviewed: own mass bends no chord here. A cantilever of 1.6 m is bent like a span of 3.2 m."""
+    assert "bending by own mass between joints is left out" in named(load_set(loads()))["most"].derivation
+    usual = build_form(FormInput("Howe", 12000.0, math.atan2(3.0, 4.0), panels=4, overhang=1100.0))  # panels of 3.75 m
+    (warning,) = [text for text in load_set(loads(), usual).warnings if "own mass" in text]
+    assert "TC1, TC2, TC3, TC4; " in warning
+    assert not [text for text in load_set(loads()).warnings if "own mass" in text]
+    far = build_form(FormInput("Howe", 8000.0, math.atan2(3.0, 4.0), panels=4, overhang=1280.0))  # 1.6 m of slope
+    (warning,) = [text for text in load_set(loads(), far).warnings if "own mass" in text]
+    assert "left overhang, right overhang" in warning
 
 
 def test_own_mass_goes_to_the_joints() -> None:
@@ -194,14 +206,32 @@ def test_wind_on_a_slope_that_does_not_exist() -> None:
     with pytest.raises(InputError) as caught:
         load_set(loads(wind=(SUCTION,)), truss)
     assert caught.value.key == "loads.wind"
-    assert "right slope" in caught.value.found
+    assert "no right slope" in caught.value.found
+    assert caught.value.remedy.startswith("leave right out")
+
+
+def test_on_one_slope_the_pressure_of_the_other_may_be_left_out() -> None:
+    """Reviewed: left and right were both required, and one of them refused."""
+    gale = WindInput("gale", -0.8e-3, 0.0, unstated=("right",))
+    alone = named(load_set(loads(wind=(gale,)), build_given(MONO)))["gale"]
+    stated = named(load_set(loads(wind=(WindInput("gale", -0.8e-3, 0.0),)), build_given(MONO)))["gale"]
+    assert alone.joint_loads == pytest.approx(stated.joint_loads)
+
+
+@pytest.mark.parametrize(("truss", "unstated"), [(MONO, "left"), (ROOF, "left"), (ROOF, "right")])
+def test_a_wind_pressure_left_out_on_a_slope_that_exists_is_refused(
+    truss: FormInput | GivenInput, unstated: Literal["left", "right"]
+) -> None:
+    built = build_given(truss) if isinstance(truss, GivenInput) else build_form(truss)
+    with pytest.raises(InputError, match=f"no pressure on the {unstated} slope") as caught:
+        load_set(loads(wind=(WindInput("gale", 0.0, 0.0, unstated=(unstated,)),)), built)
+    assert caught.value.key == "loads.wind"
 
 
 def test_one_slope_is_not_mirrored_and_says_so() -> None:
     found = load_set(loads(wind=(WindInput("gale", -0.8e-3, 0.0),)), build_given(MONO))
     assert [case.name for case in found.cases if case.kind == "wind"] == ["gale"]
-    (warning,) = found.warnings
-    assert "one slope" in warning
+    assert any("one slope" in warning for warning in found.warnings)
 
 
 def test_mirrored_wind_on_an_unsymmetric_truss_warns() -> None:
@@ -228,23 +258,6 @@ def test_two_cases_of_one_name_are_refused(names: tuple[str, str]) -> None:
     with pytest.raises(InputError) as caught:
         load_set(loads(wind=wind))
     assert caught.value.key == "loads.wind"
-
-
-def test_permanent_load_at_a_joint_joins_both_sets() -> None:
-    truss, bare = build_form(ROOF), named(load_set(loads()))
-    cases = named(load_set(loads(JointLoad("plant", "permanent", "B2", down=5000.0))))
-    assert list(cases) == list(bare)
-    for name in ("most", "least"):
-        added = cases[name].joint_loads - bare[name].joint_loads
-        assert added[truss.joint("B2")] == pytest.approx([0.0, -5000.0])
-        assert added.sum() == pytest.approx(-5000.0)
-
-
-def test_permanent_load_that_names_a_set_joins_that_one() -> None:
-    bare = named(load_set(loads()))
-    cases = named(load_set(loads(JointLoad("most", "permanent", "B2", down=5000.0))))
-    assert (cases["most"].joint_loads - bare["most"].joint_loads).sum() == pytest.approx(-5000.0)
-    assert cases["least"].joint_loads == pytest.approx(bare["least"].joint_loads)
 
 
 def test_imposed_load_at_a_joint_is_a_case_of_its_own_or_joins() -> None:

@@ -3,7 +3,7 @@ import pytest
 
 from spanwright.loads.cases import Case, CaseKind
 from spanwright.loads.combinations import ACTIONS, Combination, combine, factor_matrix
-from spanwright.truss.errors import UnknownNameError
+from spanwright.truss.errors import InputError, UnknownNameError
 
 NOTHING = np.zeros((2, 2))
 KINDS: dict[str, CaseKind] = {
@@ -69,6 +69,51 @@ def test_wind_and_imposed_never_meet(actions: str) -> None:
 
 def test_without_variable_cases_only_the_permanent_one_is_left() -> None:
     assert [combination.name for combination in combine(CASES[:2], "SANS 10160:2011")] == ["1.35 most"]
+
+
+def with_hoists(*psi: float) -> tuple[Case, ...]:
+    return (*CASES, *(Case(f"lift {k}", "imposed", NOTHING, np.zeros(0), psi=value) for k, value in enumerate(psi)))
+
+
+def test_every_subset_of_loads_at_joints_accompanies_what_leads() -> None:
+    """Factor 1.6 (1.0 beside 1.35 of permanent load, and for service) times the psi of each; one leads with its own."""
+    combinations = combine(with_hoists(0.5, 0.25), "SANS 10160:2019")
+    strength, service = names(combinations, "STR"), names(combinations, "SLS")
+    for permanent in ("1.2 most", "0.9 least"):
+        for leading in ("1.6 imposed", "1.6 man at T1", "1.6 gale"):
+            for some in ("", " + 0.8 lift 0", " + 0.4 lift 1", " + 0.8 lift 0 + 0.4 lift 1"):
+                assert f"{permanent} + {leading}{some}" in strength
+        assert f"{permanent} + 1.6 lift 0" in strength
+        assert f"{permanent} + 1.6 lift 1 + 0.8 lift 0" in strength
+    assert "1.35 most + 1.0 gale + 0.5 lift 0 + 0.25 lift 1" in names(combinations, "STR-P")
+    assert {
+        "1.1 most + 1.0 imposed + 0.25 lift 1",
+        "1.1 most + 1.0 lift 0",
+        "1.0 least + 0.6 gale + 0.5 lift 0",
+    } <= service
+    assert "1.0 imposed + 0.5 lift 0" in names(combinations, "SLS variable")
+    bare = combine(CASES, "SANS 10160:2019")
+    assert {combination.name for combination in bare} < {combination.name for combination in combinations}
+
+
+def test_a_load_at_a_joint_with_psi_0_leads_alone() -> None:
+    named = [one.name for one in combine(with_hoists(0.0), "SANS 10160:2011") if "lift" in one.name]
+    assert "1.2 most + 1.6 lift 0" in named
+    assert all(name.count("+") <= 1 for name in named)
+
+
+def test_two_that_act_in_full_make_one_sum() -> None:
+    strength = names(combine(with_hoists(1.0, 1.0), "SANS 10160:2011"), "STR")
+    assert "1.2 most + 1.6 lift 0 + 1.6 lift 1" in strength
+    assert "1.2 most + 1.6 lift 1 + 1.6 lift 0" not in strength
+
+
+@pytest.mark.parametrize("actions", ACTIONS)
+def test_more_loads_at_joints_than_can_be_told_are_refused(actions: str) -> None:
+    combine(with_hoists(1.0, 1.0, 1.0, 1.0, 0.0), actions)
+    with pytest.raises(InputError, match="5 imposed loads at joints") as caught:
+        combine(with_hoists(1.0, 1.0, 1.0, 1.0, 0.5), actions)
+    assert caught.value.key == "loads.at_joint"
 
 
 def test_a_case_named_like_a_kind_is_taken_by_its_kind() -> None:

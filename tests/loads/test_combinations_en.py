@@ -145,6 +145,43 @@ def test_imposed_never_meets_snow_or_wind(actions: str) -> None:
         assert len(kinds) + 1 >= len(combination.factors)
 
 
+HOIST = Case("hoist", "imposed", NOTHING, np.zeros(0), psi=0.7)
+
+
+@pytest.mark.parametrize(("actions", "heavy"), [(ONE, "1.35"), (TWO, "1.1475")])
+def test_a_hoist_leads_and_accompanies(actions: str, heavy: str) -> None:
+    """EN 1990 cl. 6.4.3.2 and 6.5.3 with a variable action that is no load of category H, its psi0 0.7: 1.5 x 0.7."""
+    combinations = combine((*CASES, HOIST), actions)
+    for permanent in (f"{heavy} most", "1.0 least"):
+        assert names(combinations, "STR") >= set().union(
+            sums(permanent, ("1.5", (*IMPOSED, *SNOW, *WIND)), ("1.05", ("hoist",))),
+            sums(permanent, ("1.5", SNOW), ("0.9", WIND), ("1.05", ("hoist",))),
+            sums(permanent, ("0.75", SNOW), ("1.5", WIND), ("1.05", ("hoist",))),
+            sums(permanent, ("0.75", SNOW), ("1.5", ("hoist",))),
+            sums(permanent, ("0.9", WIND), ("1.5", ("hoist",))),
+            sums(permanent, ("0.75", SNOW), ("0.9", WIND), ("1.5", ("hoist",))),
+            sums(permanent, ("1.5", ("hoist",))),
+        )
+    assert names(combinations, "EQU") == sums("0.9 least", ("1.5", WIND)) | sums(
+        "0.9 least", ("1.5", WIND), ("1.05", ("hoist",))
+    )
+    assert {"1.0 most + 0.6 gale + 1.0 hoist", "1.0 most + 1.0 imposed + 0.7 hoist"} <= names(combinations, "SLS")
+    assert {"0.5 snow + 1.0 hoist", "1.0 gale + 0.7 hoist"} <= names(combinations, "SLS variable")
+    assert {one.name for one in combine(CASES, actions)} < {one.name for one in combinations}
+
+
+def test_in_6_10a_a_hoist_accompanies_permanent_load_alone() -> None:
+    strength = names(combine((*CASES, HOIST), TWO), "STR")
+    assert {"1.35 most + 1.05 hoist", "1.35 most + 0.75 snow + 0.9 gale + 1.05 hoist"} <= strength
+    assert "1.35 most + 1.5 hoist" not in strength
+
+
+def test_imposed_load_with_a_psi0_accompanies_a_hoist() -> None:
+    """UK annex to EN 1990, from memory: psi0 of imposed load on roofs 0.7."""
+    strength = names(combine((*CASES, HOIST), ONE, site(0.0, "United Kingdom")), "STR")
+    assert {"1.35 most + 1.05 imposed + 1.5 hoist", "1.35 most + 1.05 man + 1.5 hoist"} <= strength
+
+
 def _by_hand(effect: dict[str, float], actions: str) -> float:
     """Return the greatest effect by EN 1990 6.10 or the worse of 6.10a and 6.10b, over every subset of actions that may
     act together, each at 1.5 or 1.5 psi0, and over both permanent sets.
