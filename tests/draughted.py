@@ -19,7 +19,7 @@ from spanwright.design.result import Design
 from spanwright.design.run import design
 from spanwright.io.drawing.arrangement import Arrangement, arrange
 from spanwright.io.drawing.document import draw
-from spanwright.io.drawing.writing import dxf_bytes, fixed_marks
+from spanwright.io.dxf_bytes import dxf_bytes, fixed_marks
 from spanwright.io.project_file import parse_project
 
 _CAPITAL = 0.729

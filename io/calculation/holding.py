@@ -20,7 +20,9 @@ def restraint(design: Design) -> Section:
         f"Each point restraint must resist {standard.restraint_share:g} of the greatest compression in the chord "
         f"beside it, to either side (cl. {standard.restraint_clause}). Summed over the lines, braces and ties of all "
         f"{design.setting.project.quantity} trusses, {kilo(design.anchor_force)} kN reach the anchor "
-        f"({given.anchored_by}); bearings have ties of their own. This is the plain sum, the safe reading."
+        f"({given.anchored_by}) in {design.anchor_combination}; bearings have ties of their own. This is the plain "
+        f"sum, the safe reading. Where parallel trusses may share less, by the same clause (from memory): "
+        f"{kilo(design.anchor_force_relieved)} kN."
     )
     return Section(
         "Restraint",
@@ -91,13 +93,20 @@ def _lines(design: Design) -> Table:
 def _forces(design: Design) -> Table:
     anchored_by = design.setting.project.restraint.anchored_by
     rows = tuple(
-        (force.part, force.at, kilo(force.force, 2), path(design.setting.restraint, force.part, anchored_by))
+        (
+            force.part,
+            force.at,
+            kilo(force.force, 2),
+            f"{force.stiffness:.0f}",
+            path(design.setting.restraint, force.part, anchored_by),
+        )
         for force in design.restraint_forces
     )
     columns = (
         Column("part", align="left"),
         Column("holds the chord at", align="left"),
         Column("force", "kN"),
+        Column("stiffness required", "N/mm"),
         Column("path of the force", align="left", share=1.0),
     )
     return Table(columns, rows, title="Restraint forces and their path", dense=True)

@@ -20,7 +20,7 @@ from spanwright.io.drawing.pen import Pen
 from spanwright.io.drawing.rendering import pdf_of
 from spanwright.io.drawing.standards import ELEVATION_STYLE, NOTES, SECTION_STYLE, VIEWPORTS, set_up
 from spanwright.io.drawing.title_block import MARGIN, draw_frame, draw_title_block
-from spanwright.io.drawing.writing import dxf_bytes, fixed_marks
+from spanwright.io.dxf_bytes import dxf_bytes, fixed_marks
 from spanwright.io.files import input_hash, write_atomically
 from spanwright.truss.arrays import FloatArray
 

@@ -36,7 +36,7 @@ def _forces(design: Design) -> str:
     return (
         f"Forces at restraints: {standard.restraint_share:.1%} of the greatest compression beside them "
         f"by clause {standard.restraint_clause}, to either side; at the anchor, from {project.quantity} off "
-        f"together, {kilonewtons(design.anchor_force)}."
+        f"together, {kilonewtons(design.anchor_force)}; {kilonewtons(design.anchor_force_relieved)} if they share."
     )
 
 

@@ -4,16 +4,13 @@ from __future__ import annotations
 
 import math
 from collections import Counter
-from collections.abc import Iterator, Sequence
-from contextlib import contextmanager
-from io import StringIO
+from collections.abc import Sequence
 from pathlib import Path
 
-from ezdxf._options import options as library
-from ezdxf.document import Drawing
 from ezdxf.layouts.layout import Modelspace
 from ezdxf.math import OCS, Vec3
 
+from spanwright.io.dxf_bytes import dxf_bytes, fixed_marks
 from spanwright.io.files import write_atomically
 from spanwright.io.units import LENGTH
 from spanwright.io.wireframe.options import AS_DRAWN
@@ -65,7 +62,8 @@ def marked_copy(path: Path, report: Report, mark_of_input: str = "") -> bytes:
             properties = document.header.custom_vars
             change = properties.replace if properties.has_tag("Input") else properties.append
             change("Input", mark_of_input)
-        return _content(document)
+        with fixed_marks():
+            return dxf_bytes(document)
     except READER_TROUBLE as error:
         found = f"the drawing cannot be written again ({type(error).__name__}: {error})"
         raise OutputError(found, "mend the drawing in a drawing program first") from error
@@ -133,21 +131,3 @@ def _warnings_first(finding: Finding) -> tuple[bool, str]:
 def _told(finding: Finding) -> str:
     told = f"{finding.code} {finding.text}" + (f"; {finding.done}" if finding.done else "")
     return "".join(c if c.isprintable() else "?" for c in told)[:_LONGEST]
-
-
-def _content(document: Drawing) -> bytes:
-    stream = StringIO()
-    with _fixed_dates():
-        document.write(stream)
-    return document.encode(stream.getvalue())
-
-
-@contextmanager
-def _fixed_dates() -> Iterator[None]:
-    """Let the DXF library write no dates and no chance numbers, so that the same input gives the same bytes."""
-    before = library.write_fixed_meta_data_for_testing
-    library.write_fixed_meta_data_for_testing = True
-    try:
-        yield
-    finally:
-        library.write_fixed_meta_data_for_testing = before
