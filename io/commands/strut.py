@@ -60,6 +60,7 @@ def _write(
     from spanwright.io.calculation.working import work
 
     about = (
+        ("Standard", standard.name),
         ("Section", f"{section.names[0]}, {_grade(arguments, section)}"),
         ("Force", f"{arguments.force}, factored"),
         ("In plane", arguments.in_plane),
@@ -67,7 +68,7 @@ def _write(
     )
     decides = governing(checks, ("strut",), None).check
     member = work("Compression member", about, checks, 0, lambda _: "", decides)
-    write_worked_member(path, f"{section.names[0]}, compression member", standard.name, member)
+    write_worked_member(path, f"{section.names[0]}, compression member", member)
 
 
 def run(arguments: Namespace) -> int:
