@@ -78,7 +78,8 @@ def test_no_lighter_candidate_passes_beside_the_others(done: Design) -> None:
 def test_a_group_that_uplift_made_heavy_in_the_first_round_comes_down_again() -> None:
     """Reviewed: with no knee braces the diagonals of the pratt store stayed a size too heavy for its final mass."""
     project = demo("pratt_store")
-    heavy = design(replace(project, restraint=replace(project.restraint, knee_braces="none")))
+    any_legs = replace(project, members=replace(project.members, equal_legs=False))
+    heavy = design(replace(any_legs, restraint=replace(project.restraint, knee_braces="none")))
     assert heavy.passes
     for choice in heavy.choices:
         for index in range(max(0, choice.index - 12), choice.index):
