@@ -38,8 +38,9 @@ class BearingForce:
 def bearing_forces(truss: Truss, analysis: Analysis) -> tuple[BearingForce, ...]:
     """Return the greatest forces on every bearing, factored first, then characteristic.
 
-    Characteristic: each permanent set alone and with each variable case, all at factor 1.0, for every arrangement of
-    the supports. Of combinations that give the same force, the one that pushes most sideways is reported.
+    Characteristic: each permanent set alone, with each variable case, and with that and all loads at joints that may
+    accompany it, all at factor 1.0, for every arrangement of the supports. Of combinations that give the same force, the
+    one that pushes most sideways is reported.
     """
     columns = analysis.columns("STR", "STR-P", "EQU")
     factored = analysis.reactions[:, :, columns]
@@ -54,14 +55,18 @@ def bearing_forces(truss: Truss, analysis: Analysis) -> tuple[BearingForce, ...]
 
 
 def _characteristic(analysis: Analysis) -> tuple[FloatArray, tuple[str, ...]]:
-    permanent = [at for at, case in enumerate(analysis.cases) if case.kind == "permanent"]
-    variable = [at for at, case in enumerate(analysis.cases) if case.kind in VARIABLE]
-    together = [(lasting, *acting) for lasting in permanent for acting in ((), *((case,) for case in variable))]
+    cases = analysis.cases
+    permanent = [at for at, case in enumerate(cases) if case.kind == "permanent"]
+    variable = [at for at, case in enumerate(cases) if case.kind in VARIABLE]
+    beside = [at for at, case in enumerate(cases) if case.psi]  # hoists and the like, which accompany the rest
+    acting = [(), *((case,) for case in variable)]
+    acting += [(case, *beside) for case in variable if beside and case not in beside]
     columns, labels = [], []
     for reading, solution in zip(analysis.arrangements, analysis.solutions, strict=True):
-        for acting in together:
-            columns.append(solution.reactions[:, :, list(acting)].sum(axis=-1))
-            labels.append(" + ".join(analysis.cases[case].name for case in acting) + reading.suffix)
+        for lasting in permanent:
+            for others in acting:
+                columns.append(solution.reactions[:, :, [lasting, *others]].sum(axis=-1))
+                labels.append(" + ".join(cases[case].name for case in (lasting, *others)) + reading.suffix)
     return np.stack(columns, axis=-1), tuple(labels)
 
 

@@ -97,3 +97,15 @@ def test_characteristic_uplift_is_the_least_permanent_load_with_the_wind() -> No
         key=lambda force: force.value,
     )
     assert up.combination.startswith("least + across ridge, suction")
+
+
+def test_a_hoist_presses_on_the_bearings_beside_the_imposed_load() -> None:
+    """Characteristic: permanent + imposed + hoist, all at 1.0; the hoist of 10 kN hangs at mid-span, half to each."""
+    done = design(demo("howe_workshop"))
+    found = [force for force in done.bearing_forces if force.joint == "B0" and not force.factored]
+    down = next(force for force in found if force.direction == "down")
+    assert down.combination == "most + imposed + hoist"
+    cases = {case.name: at for at, case in enumerate(done.analysis.cases)}
+    bearing = done.setting.truss.joint("B0")
+    vertical = done.analysis.solutions[0].reactions[bearing, 1]
+    assert down.value == pytest.approx(vertical[cases["most"]] + vertical[cases["imposed"]] + 5000.0)
