@@ -39,8 +39,8 @@ def bearing_forces(truss: Truss, analysis: Analysis) -> tuple[BearingForce, ...]
     """Return the greatest forces on every bearing, factored first, then characteristic.
 
     Characteristic: each permanent set alone, with each variable case, and with that and all loads at joints that may
-    accompany it, all at factor 1.0, for every arrangement of the supports. Of combinations that give the same force, the
-    one that pushes most sideways is reported.
+    accompany it, all at factor 1.0, for every arrangement of the supports. Of combinations that give the same force,
+    the one that pushes most sideways is reported.
     """
     columns = analysis.columns("STR", "STR-P", "EQU")
     factored = analysis.reactions[:, :, columns]
