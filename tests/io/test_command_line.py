@@ -121,7 +121,10 @@ def examples(command: str) -> list[list[str]]:
 
 
 @pytest.mark.parametrize("arguments", [*examples("strut"), *examples("sections")])
-def test_the_examples_of_the_help_run(arguments: list[str], capsys: pytest.CaptureFixture[str]) -> None:
+def test_the_examples_of_the_help_run(
+    arguments: list[str], tmp_path: Path, monkeypatch: pytest.MonkeyPatch, capsys: pytest.CaptureFixture[str]
+) -> None:
+    monkeypatch.chdir(tmp_path)  # an example may write a file
     assert main(arguments) in (0, 1)
     out = capsys.readouterr()
     assert len(out.out) > 500
