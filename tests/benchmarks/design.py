@@ -1,8 +1,7 @@
 """How long a design takes, as ratios: `python tests/benchmarks/design.py` prints them and asserts nothing.
 
 - the whole design of the second demo in memory, all candidates, over its compression rule alone (aim: at most 15);
-- the command, cold, over the bare import of what it uses: `--help`, `design` without pictures (aim: at most 1.3) and with
-  them (aim: at most 2). The drawing and the calculation came later and are timed beside them.
+- the command, cold: `--help`, and `design` with every output over the bare import of what it uses.
 """
 
 from __future__ import annotations
