@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
-from typing import Literal
+from typing import Literal, get_args
 
 import numpy as np
 
@@ -12,7 +12,7 @@ from spanwright.truss.arrays import FloatArray
 from spanwright.truss.model import Truss
 from spanwright.truss.tolerances import TOLERANCES
 
-Direction = Literal["down", "up", "sideways"]
+Direction = Literal["down", "up", "along the span"]
 VARIABLE = ("imposed", "man", "snow", "wind")
 
 
@@ -20,7 +20,8 @@ VARIABLE = ("imposed", "man", "snow", "wind")
 class BearingForce:
     """The greatest force of the truss on one bearing in one direction.
 
-    joint : name. direction : "down" presses on the support, "up" lifts from it, "sideways" pushes it.
+    joint : name. direction : "down" presses on the support, "up" lifts from it, "along the span" pushes it
+        to the left or right in the plane of the truss.
     factored : True for the strength and holding-down combinations, False for characteristic values.
     value : N, >= 0, 0 where the direction does not arise. combination : in words.
     right, down : N, both components on the support at that time, + to the right and + down.
@@ -50,7 +51,7 @@ def bearing_forces(truss: Truss, analysis: Analysis) -> tuple[BearingForce, ...]
         _greatest(truss, joint, direction, forces, labels_of, is_factored)
         for forces, labels_of, is_factored in ((factored, names, True), (characteristic, labels, False))
         for joint in truss.bearing_joints
-        for direction in ("down", "up", "sideways")
+        for direction in get_args(Direction)
     )
 
 
@@ -74,7 +75,7 @@ def _greatest(
     truss: Truss, joint: int, direction: Direction, reactions: FloatArray, labels: tuple[str, ...], factored: bool
 ) -> BearingForce:
     right, down = -reactions[joint, 0], reactions[joint, 1]  # on the support: opposite to the reaction on the truss
-    measure = {"down": down, "up": -down, "sideways": np.abs(right)}[direction]
+    measure = {"down": down, "up": -down, "along the span": np.abs(right)}[direction]
     rounding = TOLERANCES.tiny_force * float(np.abs(reactions).max(initial=0.0))
     at = int(np.argmax(np.where(measure >= measure.max() - rounding, np.abs(right), -1.0)))
     return BearingForce(
@@ -86,3 +87,14 @@ def _greatest(
         float(right[at]),
         float(down[at]),
     )
+
+
+def greatest_factored(forces: tuple[BearingForce, ...]) -> dict[Direction, BearingForce]:
+    """Return the greatest factored force of all bearings in each direction."""
+    return {
+        direction: max(
+            (force for force in forces if force.factored and force.direction == direction),
+            key=lambda force: force.value,
+        )
+        for direction in get_args(Direction)
+    }

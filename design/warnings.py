@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+import math
+
 from spanwright.design.regrouping import worth_a_group
 from spanwright.design.restraint_advice import long_bottom_chords, soft_braces
 from spanwright.design.result import Design
@@ -25,6 +27,8 @@ def warnings_of(found: Design) -> tuple[str, ...]:
         *_settlement(setting),
         *section_warnings(setting, choices),
         *_legs_above_the_chords(choices),
+        *_two_systems(setting),
+        *_one_off(setting),
         *_not_passing(setting, choices),
         *long_bottom_chords(found),
         *worth_a_group(found),
@@ -32,17 +36,39 @@ def warnings_of(found: Design) -> tuple[str, ...]:
 
 
 def _thrust(found: Design) -> list[str]:
-    """Where more than one bearing is held sideways, the truss pushes both: what stands below must resist it."""
+    """Where more than one bearing is held along the span, the truss pushes both: what stands below must resist it."""
     pushed = [
         f"{force.value / 1e3:.1f} kN at {force.joint} ({force.combination})"
         for force in found.bearing_forces
-        if force.factored and force.direction == "sideways" and force.value > 0.0
+        if force.factored and force.direction == "along the span" and force.value > 0.0
     ]
     if len(found.analysis.arrangements) == 1 or not pushed:
         return []
     return [
-        "more than one bearing is held sideways, so the truss thrusts: the columns must resist, factored, "
+        "more than one bearing is held along the span, so the truss thrusts: the columns must resist, factored, "
         f"{' and '.join(pushed)}; every member also stands with one end sliding"
+    ]
+
+
+def _two_systems(setting: Setting) -> list[str]:
+    """Load and resistance factors are calibrated together (SANS 10160 with SANS 10162, EN 1990 with EN 1993)."""
+    if setting.standard.name.startswith("SANS") == setting.project.actions.startswith("SANS"):
+        return []
+    return [
+        f"load factors of {setting.project.actions} stand beside resistances of {setting.standard.name}: "
+        "the two were not calibrated together"
+    ]
+
+
+def _one_off(setting: Setting) -> list[str]:
+    """A building with a site has more trusses than the one that is assumed where no quantity is stated."""
+    project = setting.project
+    if project.site is None or project.quantity > 1:
+        return []
+    length, spacing = project.site.length / 1e3, project.spacing / 1e3
+    return [
+        f"quantity is 1, but a building {length:g} m long has {round(length / spacing) + 1} trusses {spacing:g} m "
+        "apart: lists and the force at the anchor are those of one"
     ]
 
 
@@ -81,8 +107,8 @@ def _not_passing(setting: Setting, choices: tuple[Choice, ...]) -> list[str]:
         begin = f"no candidate passes for the {choice.group.name}" if choice.group.sized else f"{choice.name} fails"
         source = f"cl. {worst.clause}" if worst.clause[0].isdigit() else worst.clause
         sentences.append(
-            f"{begin}: {worst.check} ({source}) of {worst.bar} is {worst.ratio:.2f} times its limit; "
-            f"{_what_would_help(worst.check, choice)}"
+            f"{begin}: {worst.check} ({source}) of {worst.bar} is {math.ceil(worst.ratio * 100) / 100:.2f} times "
+            f"its limit; {_what_would_help(worst.check, choice)}"
         )
     return sentences
 

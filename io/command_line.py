@@ -10,6 +10,7 @@ import os
 import sys
 from argparse import ArgumentParser, Namespace, RawDescriptionHelpFormatter
 from collections.abc import Callable, Sequence
+from difflib import get_close_matches
 from importlib import import_module
 
 from spanwright import __version__
@@ -42,11 +43,20 @@ def main(arguments: Sequence[str] | None = None) -> int:
         if hasattr(stream, "reconfigure"):
             stream.reconfigure(errors="replace")  # a terminal that lacks a sign of a title shows "?" for it
     parser = _parser()
-    given = parser.parse_args(arguments)
+    words = list(sys.argv[1:] if arguments is None else arguments)
+    if words and words[0] not in _COMMANDS and not words[0].startswith("-"):
+        return _complain(_no_such_command(words[0]), _WRONG_INPUT)
+    given = parser.parse_args(words)
     if given.command is None:
         parser.print_help()
         return _WRONG_INPUT
     return _guarded(given.run, given)
+
+
+def _no_such_command(word: str) -> str:
+    close = get_close_matches(word, _COMMANDS, n=1)
+    remedy = f'did you mean "spanwright {close[0]}"?' if close else f"commands: {', '.join(_COMMANDS)}"
+    return f'there is no command "{word}"\n  {remedy}'
 
 
 def _parser() -> ArgumentParser:

@@ -11,6 +11,7 @@ from rich.table import Table
 from spanwright.design.cautions import SHORT_CAUTION
 from spanwright.design.certificate import NextLighter
 from spanwright.design.hand_checks import mass_per_area
+from spanwright.design.reactions import greatest_factored
 from spanwright.design.result import Design
 from spanwright.design.serviceability import Serviceability
 from spanwright.io.text import kilograms, kilonewtons, metres, rounded_up
@@ -98,13 +99,7 @@ def _certificate(lighter: NextLighter) -> str:
 
 
 def _reactions(design: Design) -> str:
-    found = {
-        direction: max(
-            (force for force in design.bearing_forces if force.factored and force.direction == direction),
-            key=lambda force: force.value,
-        )
-        for direction in ("down", "up", "sideways")
-    }
+    found = greatest_factored(design.bearing_forces)
     listed = ", ".join(
         f"{direction} {kilonewtons(force.value)}" + (f" at {force.joint}" if force.value else "")
         for direction, force in found.items()
@@ -113,7 +108,7 @@ def _reactions(design: Design) -> str:
 
 
 def _print_missing(out: Console, design: Design) -> None:
-    worst = design.missing[:MISSING_SHOWN]
+    worst, more = design.missing[:MISSING_SHOWN], design.missing[MISSING_SHOWN:]
     if not worst:
         return
     out.print("what this roof cannot lose (greatest utilisation without it):")
@@ -124,3 +119,6 @@ def _print_missing(out: Console, design: Design) -> None:
             else f"{rounded_up(row.utilisation)} in {row.bar}, {metres(row.out_of_plane)} out of plane"
         )
         out.print(f"  without {escape(row.part)}: {effect}")
+    beyond = sum(row.utilisation > 1.0 for row in more)
+    if beyond:
+        out.print(f"  and {beyond} more parts without which something fails: see calculation.pdf or results.json")

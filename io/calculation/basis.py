@@ -7,6 +7,7 @@ from math import degrees
 from spanwright.design.cautions import CAUTIONS
 from spanwright.design.families import TUBES
 from spanwright.design.hand_checks import mass_per_area
+from spanwright.design.reactions import greatest_factored
 from spanwright.design.result import Design
 from spanwright.design.steels import steel
 from spanwright.io.calculation.blocks import Column, Fields, Paragraph, Points, Section, Table
@@ -79,13 +80,7 @@ def _deflection_lines(design: Design) -> tuple[Paragraph, ...]:
         + ("" if row.ratio <= 1.0 else ", EXCEEDED")
         for row in design.serviceability.deflections
     ]
-    greatest = {
-        direction: max(
-            (force for force in design.bearing_forces if force.factored and force.direction == direction),
-            key=lambda force: force.value,
-        )
-        for direction in ("down", "up", "sideways")
-    }
+    greatest = greatest_factored(design.bearing_forces)
     bearing = ", ".join(
         f"{direction} {kilonewtons(force.value)}" + (f" at {force.joint}" if force.value else "")
         for direction, force in greatest.items()

@@ -100,7 +100,15 @@ def _trusses(project: Project, *, every: bool) -> dict[str, Project]:
             "site",
             project.source_name,
         )
+    sites = at_every_position(project.site, project.spacing)
+    note = f"one of {len(sites)} designs, by place in the building; the quantity of {project.quantity} is all of them"
     return {
-        name: replace(project, site=site, title=f"{project.title}, {name} truss")
-        for name, site in at_every_position(project.site, project.spacing).items()
+        name: replace(
+            project,
+            site=site,
+            title=f"{project.title}, {name} truss",
+            mark=f"{project.mark}{name[0].upper()}",
+            warnings=(*project.warnings, f"{note}: order from the one that is built, or say how many of each"),
+        )
+        for name, site in sites.items()
     }

@@ -3,10 +3,10 @@
 from __future__ import annotations
 
 from collections.abc import Iterable
-from typing import Any
+from typing import Any, get_args
 
 from spanwright.design.analysis import Analysis
-from spanwright.design.reactions import BearingForce
+from spanwright.design.reactions import BearingForce, Direction
 from spanwright.design.result import Design
 from spanwright.io.results.numbers import millimetres, newtons, pairs, ratio
 from spanwright.truss.stiffness import Solution, reaction_sums
@@ -91,11 +91,14 @@ def _supports(analysis: Analysis, combination: int) -> str:
 
 
 def reactions(design: Design) -> dict[str, Any]:
-    """Return the greatest forces on the bearings by direction, factored and characteristic."""
+    """Return the greatest forces on the bearings by direction, factored and characteristic.
+
+    The key "sideways" holds those along the span.
+    """
     table: dict[str, Any] = {}
-    for direction in ("down", "up", "sideways"):
+    for key, direction in zip(("down", "up", "sideways"), get_args(Direction), strict=True):
         rows = [force for force in design.bearing_forces if force.direction == direction]
-        table[direction] = {
+        table[key] = {
             "factored": [_bearing_force(force) for force in rows if force.factored],
             "characteristic": [_bearing_force(force) for force in rows if not force.factored],
         }

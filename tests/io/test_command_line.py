@@ -107,7 +107,7 @@ def test_no_command_shows_the_help(capsys: pytest.CaptureFixture[str]) -> None:
     assert "commands:" in capsys.readouterr().out
 
 
-@pytest.mark.parametrize("arguments", [["desing"], ["design"], ["strut", "--section", "L 6x6x1"], ["starter", "--oot"]])
+@pytest.mark.parametrize("arguments", [["design"], ["strut", "--section", "L 6x6x1"], ["starter", "--oot"]])
 def test_a_wrong_command_line_ends_with_2(arguments: list[str], capsys: pytest.CaptureFixture[str]) -> None:
     with pytest.raises(SystemExit) as stopped:
         main(arguments)
@@ -363,3 +363,8 @@ def test_a_reader_that_leaves_early_sees_no_traceback(command: str) -> None:
     run = subprocess.run(["bash", "-c", line], capture_output=True, text=True, check=True)
     assert run.stderr == ""
     assert run.stdout.splitlines()[-1] in ("0", "141")
+
+
+def test_a_misspelt_command_is_met_with_the_nearest(capsys: pytest.CaptureFixture[str]) -> None:
+    assert main(["desing", "roof.toml"]) == 2
+    assert 'did you mean "spanwright design"?' in capsys.readouterr().err

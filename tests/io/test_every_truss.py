@@ -30,6 +30,8 @@ def test_every_place_in_the_building_gets_a_folder_and_loads_of_its_own(tmp_path
         name: json.loads((tmp_path / name / "results.json").read_text())
         for name in ("end", "first-interior", "typical-interior")
     }
+    marks = {result["project"]["mark"] for result in found.values()}
+    assert marks == {"N1E", "N1F", "N1T"}, "pieces of different designs never share a mark"
     uplift = {name: result["reactions"]["up"]["factored"][0]["value_N"] for name, result in found.items()}
     assert uplift["end"] < uplift["typical-interior"] < uplift["first-interior"]
 
