@@ -18,7 +18,9 @@ WEB_LINES = 5
 
 def draw_notes(sheet: Sheet, design: Design, left: float, top: float, width: float) -> None:
     """Write the notes down from `top`."""
-    webs = wrapped(web_lengths(design), ";  ", width)
+    between = ";  "
+    webs = wrapped(web_lengths(design), between, width - width_of(between, SMALL))
+    webs = [*(f"{line};" for line in webs[:-1]), *webs[-1:]]
     if len(webs) > WEB_LINES:
         webs = [*webs[: WEB_LINES - 1], "\u2026 all in results.json"]
     lines = [*wrapped(_forces(design).split(" "), " ", width), *wrapped(_factors(design).split(" "), " ", width)]

@@ -15,7 +15,7 @@ from spanwright.io.pictures.notes import draw_notes
 from spanwright.io.pictures.page import FOOT_TOP, HEADING_BOTTOM, LEFT, RIGHT, draw_foot, draw_heading, draw_scale
 from spanwright.io.pictures.runs import chord_holding
 from spanwright.io.pictures.sheet import Sheet
-from spanwright.io.pictures.style import BOLD, HAIR, INK, PAGE, SOFT, THIN, Pen
+from spanwright.io.pictures.style import BODY, BOLD, HAIR, INK, PAGE, SOFT, THIN, Pen
 from spanwright.io.pictures.symbols import draw_holding, taken_by_signs
 from spanwright.io.pictures.tables import Table, draw_table, height_of_table
 from spanwright.io.pictures.view import View, Zone, overhang_tips, view_of
@@ -25,7 +25,10 @@ from spanwright.truss.model import Truss
 from spanwright.truss.restraint import Restraint
 
 ROWS_SHOWN = 6
-"""Rows of what the roof cannot lose that the sheet has room for; all are in results.json."""
+"""Rows of what the roof cannot lose that the sheet has room for; all are in calculation.pdf and results.json."""
+
+MORE = 3.6
+"""Height of the line under the rows that says how many are not shown, mm."""
 
 CAPTIONS = 17.0
 """mm kept free at the left of the bands for their captions."""
@@ -99,10 +102,22 @@ def _draw_beneath(sheet: Sheet, design: Design) -> float:
         rows=[_missing_row(row) for row in design.missing[:ROWS_SHOWN]],
         right=frozenset({1, 3}),
     )
-    top = FOOT_TOP + 3.0 + max(height_of_table(table), LEAST_NOTES)
+    more = _more(design)
+    tall = height_of_table(table) + (MORE if more else 0.0)
+    top = FOOT_TOP + 2.0 + max(tall, LEAST_NOTES)
     draw_table(sheet, table, LEFT, top, RIGHT - LEFT - NOTES - 8.0)
+    sheet.text(LEFT, top - tall + 0.5, more, BODY)
     draw_notes(sheet, design, RIGHT - NOTES, top, NOTES)
     return draw_legend(sheet, in_lines(holding_signs(design.setting.restraint), RIGHT - LEFT), LEFT, top + 1.0)
+
+
+def _more(design: Design) -> str:
+    """Return how many rows are not shown, and how many of them do not stand; "" where all are shown."""
+    rest = design.missing[ROWS_SHOWN:]
+    if not rest:
+        return ""
+    fallen = sum(bool(row.unheld) or row.utilisation > 1.0 for row in rest)
+    return f"and {len(rest)} more, {fallen} of them above 1.00 or unheld: see calculation.pdf"
 
 
 def _missing_row(row: Missing) -> tuple[str, ...]:

@@ -1,5 +1,6 @@
 """The picture `restraint`: every length, what bounds it, and what bounds nothing."""
 
+import re
 from itertools import pairwise
 
 import numpy as np
@@ -102,6 +103,28 @@ def test_what_the_roof_cannot_lose_is_listed_worst_first(roof: str) -> None:
     assert heights == sorted(heights, reverse=True)
     for row in shown:
         assert (f"nothing holds {', '.join(row.unheld)}" if row.unheld else rounded_up(row.utilisation)) in level
+
+
+@EVERY_ROOF
+def test_what_is_not_listed_is_counted(roof: str) -> None:
+    """Rows shown and rows counted make all; unsafe rows come first, so none is counted unless all shown are unsafe."""
+    design = drawn(roof)
+    counted = [text for text in words(laid("restraint", roof)) if text.endswith("see calculation.pdf")]
+    assert len(counted) == (len(design.missing) > ROWS_SHOWN)
+    for text in counted:
+        more, unsafe = (int(number) for number in re.findall(r"and (\d+) more, (\d+) of them", text)[0])
+        assert ROWS_SHOWN + more == len(design.missing)
+        assert unsafe == max(sum(bool(row.unheld) or row.utilisation > 1.0 for row in design.missing) - ROWS_SHOWN, 0)
+
+
+@EVERY_ROOF
+def test_a_list_of_webs_that_goes_on_says_so(roof: str) -> None:
+    """Every entry but the last is followed by a semicolon, at the end of a line too."""
+    page = words(laid("restraint", roof))
+    first = next(at for at, text in enumerate(page) if text.startswith("Webs, buckling lengths")) + 1
+    webs = [text for text in page[first:] if re.match(r"[A-Z]+\d+.* \d+\.\d\d;?$", text)]
+    assert webs
+    assert all(text.endswith(";") for text in webs[:-1])
 
 
 def test_lengths_of_webs_in_and_out_of_plane() -> None:
