@@ -5,6 +5,7 @@ from __future__ import annotations
 import math
 from typing import get_args
 
+from spanwright.truss.decimals import decimal
 from spanwright.truss.errors import InputError, UnknownNameError
 from spanwright.truss.fink import FINK_NAMES
 from spanwright.truss.inputs import FormInput, FormName, Lean
@@ -41,8 +42,8 @@ def refuse_overhang(overhang: float, span: float) -> None:
     """Raise InputError (key "truss.overhang") for an overhang, mm in plan, that is negative or absurd."""
     if not 0 <= overhang <= WIDEST_OVERHANG * span:
         raise InputError(
-            f"the overhang is {overhang:g} mm",
-            f"it must be from 0 to half the span, {WIDEST_OVERHANG * span:g} mm",
+            f"the overhang is {decimal(overhang)} mm",
+            f"it must be from 0 to half the span, {decimal(WIDEST_OVERHANG * span)} mm",
             "truss.overhang",
         )
 
@@ -59,7 +60,7 @@ def _refuse_impossible_heel(form: FormInput) -> None:
     )
     if form.heel_depth > DEEPEST_HEEL * form.span:
         raise InputError(
-            f"the heel depth is {form.heel_depth:g} mm, more than half the span of {form.span:g} mm",
+            f"the heel depth is {decimal(form.heel_depth)} mm, more than half the span of {decimal(form.span)} mm",
             "usual is span/25 to span/15; 0 makes a triangular heel",
             "truss.heel_depth",
         )
@@ -90,7 +91,7 @@ def _refuse_impossible_panels(form: FormInput) -> None:
 def _refuse_impossible_fink(form: FormInput) -> None:
     if form.heel_depth != 0:
         raise InputError(
-            f"a Fink is always triangular, but the heel depth is {form.heel_depth:g} mm",
+            f"a Fink is always triangular, but the heel depth is {decimal(form.heel_depth)} mm",
             'state heel_depth = "0 m", or choose a Pratt or Howe',
             "truss.heel_depth",
         )
@@ -105,7 +106,7 @@ def _refuse_impossible_fink(form: FormInput) -> None:
         )
     if form.pitch >= FINK_STEEPEST:
         raise InputError(
-            f"a Fink of {math.degrees(form.pitch):.4g} deg: its struts meet the bottom chord beyond mid-span",
-            f"the pitch must be less than {math.degrees(FINK_STEEPEST):g} deg, or choose a Pratt or Howe",
+            f"a Fink of {decimal(math.degrees(form.pitch), 4)} deg: its struts meet the bottom chord beyond mid-span",
+            f"the pitch must be less than {decimal(math.degrees(FINK_STEEPEST))} deg, or choose a Pratt or Howe",
             "truss.pitch",
         )

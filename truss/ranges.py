@@ -8,6 +8,7 @@ from dataclasses import dataclass
 from functools import cache
 from importlib.resources import files
 
+from spanwright.truss.decimals import decimal
 from spanwright.truss.errors import InputError
 
 _UNITS = {"m": 1000.0, "deg": math.pi / 180, "-": 1.0}
@@ -26,7 +27,7 @@ class Range:
     def show(self, value: float) -> str:
         """Return the value with its printing unit ("1.53 m", "18.4 deg", "8.2")."""
         number = value / _UNITS[self.unit]
-        return f"{number:.3g}" if self.unit == "-" else f"{number:.4g} {self.unit}"
+        return decimal(number, 3) if self.unit == "-" else f"{decimal(number, 4)} {self.unit}"
 
 
 @cache

@@ -79,7 +79,7 @@ class _Census:
         if entities > self._limits.entities:
             what = f'block "{block}"' if block else "the drawing"
             raise DrawingError(
-                f"{what} holds {entities:.3g} entities with those in blocks; at most {self._limits.entities} are read",
+                f"{what} holds {entities} entities with those in blocks; at most {self._limits.entities} are read",
                 "save the truss alone in a drawing of its own",
             )
         self._known[block] = entities, levels

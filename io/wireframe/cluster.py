@@ -10,6 +10,7 @@ from scipy.spatial.distance import pdist
 from spanwright.io.wireframe.near import points_within
 from spanwright.io.wireframe.network import Network, Remark
 from spanwright.truss.arrays import FloatArray, IntArray
+from spanwright.truss.decimals import decimal
 from spanwright.truss.tolerances import TOLERANCES
 
 _DIGITS = round(-np.log10(TOLERANCES.drawing_noise))
@@ -33,7 +34,7 @@ def cluster_ends(lines: FloatArray, tolerance: float, limit: int) -> tuple[Netwo
     sources = np.arange(len(lines))
     no_length = ends[:, 0] == ends[:, 1]
     dropped = [
-        Remark("W-303", f"a line of {_length(line):.3g} mm", "dropped", int(source), tuple(line[0].tolist()))
+        Remark("W-303", f"a line of {decimal(_length(line), 3)} mm", "dropped", int(source), tuple(line[0].tolist()))
         for source, line in zip(sources[no_length], lines[no_length], strict=True)
     ]
     network = Network(xy, ends[~no_length], sources[~no_length])
@@ -76,12 +77,14 @@ def _moves(points: FloatArray, labels: IntArray, xy: FloatArray, tolerance: floa
     starts = np.searchsorted(labels[order], np.arange(len(xy) + 1))
     for joint in np.flatnonzero(furthest > TOLERANCES.drawing_noise):
         ends = order[starts[joint] : starts[joint + 1]]
-        text = f"{len(ends)} line ends lie up to {furthest[joint]:.3g} mm from their mean"
+        text = f"{len(ends)} line ends lie up to {decimal(furthest[joint], 3)} mm from their mean"
         source, at = int(ends[0]) // 2, tuple(xy[joint].tolist())
         remarks.append(Remark("W-301", text, "moved to meet there", source, at))
         width = _width(points[ends]) if furthest[joint] > tolerance / 2 else 0.0
         if width > tolerance:
-            text = f"the {len(ends)} ends spread over {width:.3g} mm, the tolerance is {tolerance:.3g} mm"
+            text = (
+                f"the {len(ends)} ends spread over {decimal(width, 3)} mm, the tolerance is {decimal(tolerance, 3)} mm"
+            )
             remarks.append(Remark("W-302", text, "made one joint, because each has a neighbour within it", source, at))
     return remarks
 

@@ -19,6 +19,7 @@ from ezdxf.math import UVec, Vec3
 
 from spanwright.io.wireframe.read import READER_TROUBLE
 from spanwright.truss.arrays import FloatArray, IntArray
+from spanwright.truss.decimals import decimal
 
 Point = tuple[float, float, float]
 
@@ -169,7 +170,7 @@ def _add_sides(points: list[Point], bulges: list[float], closed: bool, index: in
     for start, end, bulge in sides:
         if bulge:
             middle = tuple((a + b) / 2 for a, b in zip(start, end, strict=True))
-            text = f"a side of the polyline is an arc (bulge {bulge:g})"
+            text = f"a side of the polyline is an arc (bulge {decimal(bulge)})"
             gathered.asides.append(Aside(index, "W-104", text, "not read; draw a straight bar", cast(Point, middle)))
         else:
             gathered.lines.append((*start, *end))

@@ -13,6 +13,7 @@ import numpy as np
 from spanwright.io.units import LENGTH
 from spanwright.io.wireframe.report import Finding
 from spanwright.truss.arrays import FloatArray
+from spanwright.truss.decimals import decimal
 from spanwright.truss.errors import DrawingError
 from spanwright.truss.ranges import ranges
 
@@ -73,7 +74,7 @@ def _readings(drawn: float) -> str:
     spans = {unit: drawn * factor for unit, factor in LENGTH.factors.items()}
     possible = {unit: span for unit, span in spans.items() if limits.possible_least < span < limits.possible_most}
     listed = ", ".join(f"{unit} makes {_metres(span)}" for unit, span in (possible or spans).items())
-    return f"of the {drawn:.6g} drawn, {listed}"
+    return f"of the {decimal(drawn)} drawn, {listed}"
 
 
 def _drawn_span(lines: FloatArray) -> float:
@@ -85,4 +86,4 @@ def _drawn_span(lines: FloatArray) -> float:
 
 
 def _metres(length: float) -> str:
-    return f"{length / 1000:.4g} m"
+    return f"{decimal(length / 1000, 4)} m"

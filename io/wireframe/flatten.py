@@ -21,6 +21,7 @@ from spanwright.io.wireframe.options import MarkKind, Options
 from spanwright.io.wireframe.read import READER_TROUBLE
 from spanwright.io.wireframe.report import Finding, Origin, TallyRow
 from spanwright.truss.arrays import FloatArray, IntArray
+from spanwright.truss.decimals import decimal
 from spanwright.truss.errors import DrawingError
 from spanwright.truss.tolerances import TOLERANCES
 
@@ -216,7 +217,7 @@ def _refuse_absurd(coordinates: FloatArray, origins: list[Origin]) -> None:
         absurd = np.flatnonzero(~(np.abs(coordinates) <= TOLERANCES.farthest).all(axis=1))
     if absurd.size:
         row, origin = coordinates[absurd[0]], origins[absurd[0]]
-        values = ", ".join(f"{value:g}" for value in row)
+        values = ", ".join(map(decimal, row.tolist()))
         raise DrawingError(
             f'{origin.kind} {origin.handle} on layer "{origin.layer}" has the coordinates {values}',
             "mend or delete it; coordinates must be finite and within 1e12 drawing units of the origin",

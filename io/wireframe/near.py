@@ -100,6 +100,6 @@ def refuse_crowd(pairs: int, limit: int) -> None:
     """Raise DrawingError where more pairs of lines or line ends are near each other than are looked at."""
     if pairs > limit:
         raise DrawingError(
-            f"the lines are too crowded: {pairs:.3g} pairs are near each other, at most {limit:.3g} are looked at",
+            f"the lines are too crowded: {pairs} pairs are near each other, at most {limit} are looked at",
             "read only the layers of one truss, and check the unit and the tolerance",
         )

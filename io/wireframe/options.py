@@ -9,6 +9,7 @@ from fnmatch import fnmatchcase
 from typing import Literal, get_args
 
 from spanwright.io.units import LENGTH
+from spanwright.truss.decimals import decimal
 from spanwright.truss.errors import InputError
 from spanwright.truss.model import ROLES, Role
 
@@ -107,10 +108,12 @@ def check_options(options: Options) -> None:
         raise InputError(f'"{options.units}" is no unit of length', f"give one of {', '.join(LENGTH.factors)}", "units")
     tolerance = options.tolerance
     if tolerance is not None and not (math.isfinite(tolerance) and tolerance > 0):
-        raise InputError(f"the tolerance is {tolerance:g} mm", 'give a positive length such as "5 mm"', "tolerance")
+        raise InputError(
+            f"the tolerance is {decimal(tolerance)} mm", 'give a positive length such as "5 mm"', "tolerance"
+        )
     overhang = options.overhang
     if overhang is not None and not (math.isfinite(overhang) and overhang >= 0):
-        raise InputError(f"the overhang is {overhang:g} mm", 'give a length such as "0.4 m"', "overhang")
+        raise InputError(f"the overhang is {decimal(overhang)} mm", 'give a length such as "0.4 m"', "overhang")
     if options.up and options.up.removeprefix("-") not in _AXES:
         raise InputError(f'"{options.up}" is no axis', "give x, -x, y, -y, z or -z", "up")
     _check_choice(options.bearings, BearingChord, "bearings")

@@ -13,6 +13,7 @@ from spanwright.io.wireframe.near import joints_beside_bars, points_within, refu
 from spanwright.io.wireframe.network import Network, Remark
 from spanwright.io.wireframe.options import Limits
 from spanwright.truss.arrays import BoolArray, FloatArray, IntArray
+from spanwright.truss.decimals import decimal
 from spanwright.truss.errors import DrawingError
 from spanwright.truss.tolerances import TOLERANCES
 
@@ -45,7 +46,7 @@ def near_misses(network: Network, tolerance: float, limits: Limits) -> tuple[Rem
     for first, second in sorted(map(tuple, np.sort(pairs, axis=1).tolist())):
         gap = float(np.hypot(*(network.xy[first] - network.xy[second])))
         between = ", with a bar between them" if (first, second) in joined else ""
-        text = f"two joints are {gap:.3g} mm apart{between}, the tolerance is {tolerance:.3g} mm"
+        text = f"two joints are {decimal(gap, 3)} mm apart{between}, the tolerance is {decimal(tolerance, 3)} mm"
         remarks.append(Remark("W-311", text, done, int(source_at[first]), network.place(first)))
     beside = joints_beside_bars(network, reach, limits.pairs)
     refuse_crowd(len(beside.bars), limits.findings)
@@ -55,7 +56,7 @@ def near_misses(network: Network, tolerance: float, limits: Limits) -> tuple[Rem
     ):
         ends = network.ends[bar].tolist()
         if min(along, length - along) > reach and not any((min(joint, e), max(joint, e)) in joined for e in ends):
-            text = f"a joint is {aside:.3g} mm from a bar, the tolerance is {tolerance:.3g} mm"
+            text = f"a joint is {decimal(aside, 3)} mm from a bar, the tolerance is {decimal(tolerance, 3)} mm"
             remarks.append(Remark("W-312", text, done, int(source_at[joint]), network.place(joint)))
     return tuple(remarks)
 
@@ -69,7 +70,7 @@ def nearly_closed(open_ends: Iterable[tuple[int, FloatArray]], tolerance: float)
     for source, (start, end) in open_ends:
         gap = float(np.hypot(*(end - start)))
         if 0 < gap <= TOLERANCES.near_miss * tolerance:
-            text = f"the ends of an open polyline are {gap:.3g} mm apart"
+            text = f"the ends of an open polyline are {decimal(gap, 3)} mm apart"
             done = "joined, being within the tolerance" if gap <= tolerance else "left open"
             remarks.append(Remark("W-106", text, done, source, tuple(start.tolist())))
     return tuple(remarks)

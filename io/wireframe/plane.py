@@ -12,8 +12,9 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from spanwright.io.wireframe.report import Finding, Origin
+from spanwright.io.wireframe.report import Origin, place_text
 from spanwright.truss.arrays import FloatArray
+from spanwright.truss.decimals import decimal
 from spanwright.truss.errors import DrawingError
 from spanwright.truss.tolerances import TOLERANCES
 
@@ -86,7 +87,9 @@ def plane_findings(plane: Plane) -> tuple[Finding, ...]:
     """Return what to say about the plane."""
     findings = [Finding("W-203", plane.vertical)]
     if plane.scatter > TOLERANCES.drawing_noise:
-        findings.append(Finding("W-204", f"line ends lie up to {plane.scatter:.3g} mm off the plane", "moved onto it"))
+        findings.append(
+            Finding("W-204", f"line ends lie up to {decimal(plane.scatter, 3)} mm off the plane", "moved onto it")
+        )
     return tuple(findings)
 
 
@@ -164,10 +167,9 @@ def _not_flat(points: FloatArray, normal: FloatArray, lines: FloatArray, origins
             break
     worst = int(np.argmax(away))
     origin, at = origins[worst // 2], lines.reshape(-1, 3)[worst]
-    place = ", ".join(f"{value:.6g}" for value in at)
     return DrawingError(
-        f'the lines lie in no one plane: {origin.kind} {origin.handle} on layer "{origin.layer}" at ({place}) '
-        f"is {away[worst]:.4g} mm off",
+        f'the lines lie in no one plane: {origin.kind} {origin.handle} on layer "{origin.layer}" '
+        f"at {place_text(at.tolist())} (drawing units) is {decimal(away[worst], 4)} mm off",
         "draw one truss in one plane, or read only its layers",
         entity=origin.handle,
         at=tuple(at.tolist()),

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from spanwright.io.wireframe.importer import Wireframe
 from spanwright.io.wireframe.purlin_marks import MarkedPurlins
+from spanwright.truss.decimals import decimal
 
 _ACTIONS = """\
 # actions = "SANS 10160:2011"       # REQUIRED. Loading standard and edition: sets the load factors
@@ -36,8 +37,8 @@ def project_text(wireframe: Wireframe, drawing_name: str) -> str:
     given, report = wireframe.given, wireframe.report
     warnings = sum(finding.severity == "warning" for finding in report.findings)
     lines = [
-        f"# Read from {_printable(drawing_name)}: span {report.facts.span / 1000:.6g} m, {len(given.joints)} joints, "
-        f"{len(given.bars)} bars; {warnings} warnings, see the report of the import.",
+        f"# Read from {_printable(drawing_name)}: span {decimal(report.facts.span / 1000)} m, "
+        f"{len(given.joints)} joints, {len(given.bars)} bars; {warnings} warnings, see the report of the import.",
         "# Complete the lines marked REQUIRED: take the # away and choose.",
         "",
         f"title = {_text(drawing_name)}",
@@ -71,7 +72,7 @@ def project_text(wireframe: Wireframe, drawing_name: str) -> str:
 def _purlins(marked: MarkedPurlins) -> list[str]:
     lines = []
     if marked.ridge_pair is not None:
-        lines.append(f'ridge_purlins = "pair, {marked.ridge_pair:g} mm from the apex"')
+        lines.append(f'ridge_purlins = "pair, {decimal(marked.ridge_pair)} mm from the apex"')
     if marked.rule is None:
         if marked.purlins:
             listed = ", ".join(f"{purlin.along:.1f}" for purlin in marked.purlins)

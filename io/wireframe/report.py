@@ -2,14 +2,24 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from dataclasses import dataclass
 from typing import Literal, NamedTuple
 
 from spanwright.io.wireframe.codes import CODES, Severity
+from spanwright.truss.decimals import fixed
 from spanwright.truss.errors import DrawingError
 
 Outcome = Literal["converted", "ignored by rule", "not understood"]
 OUTCOMES: tuple[Outcome, ...] = ("converted", "ignored by rule", "not understood")
+
+_PLACE_DECIMALS = 3  # of the drawing unit: what a drawing program takes to find the spot
+
+
+def place_text(at: Sequence[float]) -> str:
+    """Return a place in drawing units, "412345.678, 1836210.123"; z is left out where it is 0."""
+    x, y, *rest = (fixed(value, _PLACE_DECIMALS) for value in at)
+    return ", ".join([x, y, *(z for z in rest if z != "0")])
 
 
 class Origin(NamedTuple):

@@ -5,7 +5,8 @@ from __future__ import annotations
 from collections import Counter, defaultdict
 from typing import Any
 
-from spanwright.io.wireframe.report import OUTCOMES, Facts, Finding, Report, TallyRow
+from spanwright.io.wireframe.report import OUTCOMES, Facts, Finding, Report, TallyRow, place_text
+from spanwright.truss.decimals import decimal
 
 _SHOWN = 12  # findings of one code, and handles of one row, on the screen; the record has all
 
@@ -22,7 +23,7 @@ def report_text(report: Report) -> str:
     for severity in ("warning", "note"):
         for code, findings in sorted(by_code.items()):
             if findings[0].severity == severity:
-                lines += _findings(code, findings)
+                lines += _findings(code, findings, report.facts.unit)
     return "\n".join([*lines, "", *_closing_table(report)]) + "\n"
 
 
@@ -76,29 +77,29 @@ def _facts(facts: Facts) -> list[str]:
         return []
     lines = [f"  unit {facts.unit}, stated by {facts.unit_from}"]
     if facts.tolerance:
-        lines += [f"  {facts.vertical}", f"  line ends within {facts.tolerance:.3g} mm are one joint"]
+        lines += [f"  {facts.vertical}", f"  line ends within {decimal(facts.tolerance, 3)} mm are one joint"]
     if facts.joints:
-        size = f"span {facts.span / 1000:.4g} m, depth {facts.depth / 1000:.4g} m"
+        size = f"span {decimal(facts.span / 1000, 4)} m, depth {decimal(facts.depth / 1000, 4)} m"
         lines.append(f"  {size}, {facts.joints} joints, {facts.bars} bars")
     return lines
 
 
-def _findings(code: str, findings: list[Finding]) -> list[str]:
+def _findings(code: str, findings: list[Finding], unit: str) -> list[str]:
     first = findings[0]
     count = f" ({len(findings)})" if len(findings) > 1 else ""
     lines = [f"{code} {first.severity}: {first.meaning}{count}"]
-    lines += [f"    {line_of(finding)}" for finding in findings[:_SHOWN]]
+    lines += [f"    {line_of(finding, unit)}" for finding in findings[:_SHOWN]]
     if len(findings) > _SHOWN:
         lines.append(f"    and {len(findings) - _SHOWN} more")
     return lines
 
 
-def line_of(finding: Finding) -> str:
-    """Return a finding on one line: what, what was done, where."""
+def line_of(finding: Finding, unit: str = "") -> str:
+    """Return a finding on one line: what, what was done, where; `unit` is that of the drawing, if known."""
     said = f"{finding.text}; {finding.done}" if finding.done else finding.text
     where = []
     if finding.at:
-        where.append("at (" + ", ".join(f"{value:.6g}" for value in finding.at) + ")")
+        where.append(f"at {place_text(finding.at)} (drawing units{', ' + unit if unit else ''})")
     if finding.layer:
         where.append(f'layer "{finding.layer}"')
     if finding.handle:

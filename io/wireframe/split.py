@@ -11,6 +11,7 @@ from spanwright.io.wireframe.cluster import gather
 from spanwright.io.wireframe.near import OnBars, bars_near_bars, joints_beside_bars
 from spanwright.io.wireframe.network import Network, Remark
 from spanwright.truss.arrays import BoolArray, FloatArray, IntArray
+from spanwright.truss.decimals import decimal
 from spanwright.truss.tolerances import TOLERANCES
 
 _DIGITS = round(-np.log10(TOLERANCES.drawing_noise))
@@ -122,7 +123,7 @@ def _onto_axes(network: Network, on_bars: OnBars) -> tuple[Network, list[Remark]
     for row in off[np.argsort(lengths[off], kind="stable")]:
         bar, joint = on_bars.bars[row], on_bars.joints[row]
         xy[joint] = np.round(starts[row] + steps[row] * (on_bars.along[row] / lengths[row]), _DIGITS)
-        text = f"a joint lies {on_bars.aside[row]:.3g} mm off the line that it belongs to"
+        text = f"a joint lies {decimal(on_bars.aside[row], 3)} mm off the line that it belongs to"
         at = tuple(network.xy[joint].tolist())
         remarks.append(Remark("W-305", text, "moved onto the line", int(network.sources[bar]), at))
     return replace(network, xy=xy), remarks

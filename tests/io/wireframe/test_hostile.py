@@ -111,7 +111,7 @@ def test_bytes_changed_at_random_never_end_in_anything_but_a_refusal(good: Path)
 
 @pytest.mark.parametrize(
     ("value", "match"),
-    [("nan", "coordinates nan"), ("inf", "coordinates inf"), ("1e300", r"1e\+300"), ("-1e13", r"-1e\+13")],
+    [("nan", "coordinates nan"), ("inf", "coordinates inf"), ("1e300", r"1e\+300"), ("-1e13", "-10000000000000")],
 )
 @pytest.mark.parametrize("add", ["line", "light", "block", "mark"])
 def test_absurd_coordinates_name_the_entity(tmp_path: Path, value: str, match: str, add: str) -> None:
@@ -158,7 +158,7 @@ def test_the_sides_of_polylines_in_blocks_are_counted(tmp_path: Path) -> None:
     document.blocks.new("ZIGZAG").add_lwpolyline([(k, k % 2) for k in range(1000)])
     array = {"column_count": 3, "column_spacing": 2000}
     document.modelspace().add_blockref("ZIGZAG", (0, 9000), dxfattribs=array)
-    with pytest.raises(RefusedDrawingError, match=r"3\.02e\+03 entities"):
+    with pytest.raises(RefusedDrawingError, match=r"the drawing holds 30\d\d entities"):
         imported(document, tmp_path, limits=Limits(entities=3000))
 
 
