@@ -12,7 +12,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from spanwright.io.wireframe.report import Origin, place_text
+from spanwright.io.wireframe.report import Finding, Origin, place_text
 from spanwright.truss.arrays import FloatArray
 from spanwright.truss.decimals import decimal
 from spanwright.truss.errors import DrawingError
