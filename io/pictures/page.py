@@ -25,6 +25,7 @@ LEAST_CELL = 9.0
 """Least length of one of the three cells of the scale bar, mm."""
 
 SIGNS = "Tension +, compression \u2212. Lengths in m."
+PRESSURE_SIGNS = "Pressures: + presses on the surface, \u2212 sucks. Lengths in m."
 
 
 def draw_heading(sheet: Sheet, design: Design, subject: str) -> None:
@@ -69,8 +70,8 @@ def _verdict(design: Design) -> str:
     return f"NOT PASSING: {used}{bent}"
 
 
-def draw_foot(sheet: Sheet, design: Design) -> None:
-    """Write the conventions, what anchors the restraint, the caution, and the mark of the input."""
+def draw_foot(sheet: Sheet, design: Design, signs: str = SIGNS) -> None:
+    """Write the conventions of sign, what anchors the restraint, the caution, and the mark of the input."""
     project = design.setting.project
     sheet.lines([np.array([[LEFT, FOOT_TOP], [RIGHT, FOOT_TOP]])], THIN)
     step = 3.3
@@ -79,7 +80,7 @@ def draw_foot(sheet: Sheet, design: Design) -> None:
     right = cut_to(f"{name}{origin}", 110.0, SMALL)
     sheet.text(RIGHT, FOOT_TOP - step, right, SMALL, across="right", colour=SOFT)
     sheet.text(RIGHT, FOOT_TOP - 2 * step, f"Spanwright {__version__}", SMALL, across="right", colour=SOFT)
-    sheet.text(LEFT, FOOT_TOP - step, f"{SIGNS} {anchor_words(design)}", SMALL)
+    sheet.text(LEFT, FOOT_TOP - step, f"{signs} {anchor_words(design)}", SMALL)
     sheet.text(LEFT, FOOT_TOP - 2 * step, SHORT_CAUTION, SMALL)
 
 

@@ -10,7 +10,9 @@ import numpy as np
 import pytest
 from matplotlib.collections import PolyCollection
 from matplotlib.colors import to_rgba
+from pictured import outlines
 from roofs import mono_pitch
+from shapely import Polygon
 
 from spanwright.design.result import Design
 from spanwright.design.run import finish, prepare, size
@@ -28,6 +30,7 @@ from spanwright.truss.arrays import FloatArray
 from spanwright.truss.forms import build_form
 from spanwright.truss.inputs import FormInput
 from spanwright.truss.model import Truss
+from spanwright.truss.tolerances import TOLERANCES
 
 SHED = """
 title = "Shed"
@@ -56,10 +59,44 @@ diagonals = "L 80x80x8"
 """
 
 
+WITH_OVERHANG = """
+title = "Shed with overhangs"
+actions = "EN 1990:2002, 6.10"
+[truss]
+form = "Howe"
+span = "12 m"
+pitch = "20 deg"
+overhang = "0.5 m"
+spacing = "5 m"
+[site]
+length = "40 m"
+eaves_height = "5 m"
+terrain = "II"
+basic_wind_speed = "26 m/s"
+[site.snow]
+ground = "0.65 kPa"
+[restraint]
+purlins = "1.5 m"
+anchored_purlins = "all"
+anchored_by = "diaphragm"
+bearings_held = true
+[members]
+steel = "S355JR"
+top_chord = "2L 100x100x8"
+bottom_chord = "2L 100x100x8"
+posts = "L 80x80x8"
+diagonals = "L 80x80x8"
+"""
+
+
 @pytest.fixture(scope="module")
 def design() -> Design:
-    """A truss of given sections, so that one pass designs it."""
-    project = parse_project(SHED)
+    return designed(SHED)
+
+
+def designed(text: str) -> Design:
+    """Return a truss of given sections, so that one pass designs it."""
+    project = parse_project(text)
     setting = prepare(project)
     load_set = loads_on(
         setting.truss,
@@ -142,6 +179,46 @@ def test_blocks_are_as_high_as_their_pressures(design: Design, field: WindField)
     assert heights.max() == pytest.approx(max(expected))
     assert all(np.isclose(expected, height).any() for height in heights)
     assert all(np.isclose(heights, height).any() for height in expected)
+
+
+@pytest.fixture(scope="module")
+def with_overhang() -> Design:
+    """Howe, 12 m, 20 degrees: the end of a zone meets the ridge but for rounding, so that two cuts are one."""
+    return designed(WITH_OVERHANG)
+
+
+def test_a_stretch_without_length_is_not_drawn(with_overhang: Design) -> None:
+    """It has no direction, so drawing it would divide by zero: a warning, which is an error here."""
+    site = with_overhang.setting.load_set.site
+    assert site is not None
+    assert site.wind is not None
+    assert np.diff(site.wind.cuts).min() < TOLERANCES.same_point
+    drawn = blocks_of(wind_sheets(with_overhang)["wind_pressures"])
+    assert all(np.isfinite(block).all() for block in drawn)
+    assert min(float(np.hypot(*(block[1] - block[0]))) for block in drawn) > 0.1
+
+
+@pytest.mark.parametrize("roof", ["design", "with_overhang"])
+def test_every_block_has_its_number_clear_of_blocks_and_numbers(roof: str, request: pytest.FixtureRequest) -> None:
+    """By what the letters cover as drawn, not by the room that was kept for them."""
+    sheet = wind_sheets(request.getfixturevalue(roof))["wind_pressures"]
+    drawn = [Polygon(block) for block in blocks_of(sheet)]
+    numbers = [shape for text, shape in outlines(sheet) if re.fullmatch(r"[+\u2212]\d\.\d\d", text.get_text())]
+    assert len(numbers) == len(drawn)
+    assert not any(number.intersects(block) for number in numbers for block in drawn)
+    assert not any(one.intersects(other) for at, one in enumerate(numbers) for other in numbers[:at])
+
+
+def test_pressures_bear_their_unit_and_their_sign(field: WindField, written: Path) -> None:
+    text = words(written / "wind_pressures.svg")
+    assert text.count("net, kPa") == len(field.cases)
+    assert any("+ presses on the surface, \u2212 sucks" in line for line in text)
+    assert not any("Tension +" in line for line in text)
+
+
+def blocks_of(sheet: Sheet) -> list[FloatArray]:
+    sheet.finish()
+    return blocks(sheet)
 
 
 def blocks(sheet: Sheet) -> list[FloatArray]:
