@@ -27,6 +27,7 @@ CODES: dict[str, Code] = {
     "W-106": Code("warning", "the ends of an open polyline nearly meet"),
     "W-107": Code("warning", "a block cannot be taken apart"),
     "W-108": Code("warning", "a pattern matches no layer that holds anything"),
+    "W-109": Code("note", "a layer seems to hold marks, and no option names it"),
     "W-201": Code("note", "the unit of the drawing"),
     "W-202": Code("warning", "the user's unit differs from the drawing's own statement"),
     "W-203": Code("note", "the plane of drawing and the vertical axis"),

@@ -17,6 +17,7 @@ from spanwright.io.wireframe.clean import clean
 from spanwright.io.wireframe.cluster import default_tolerance
 from spanwright.io.wireframe.drawing_units import Unit, judge_span, settle_unit
 from spanwright.io.wireframe.flatten import Drawn, flatten
+from spanwright.io.wireframe.hints import unnamed_marks
 from spanwright.io.wireframe.marks import FlatMark, joints_marked
 from spanwright.io.wireframe.naming import name_all
 from spanwright.io.wireframe.network import Remark
@@ -142,6 +143,7 @@ def _read(path: Path, options: Options, log: _Log) -> tuple[_Flat, Unit]:
     log.findings += drawn.findings
     for key, pattern in unused_patterns(drawn.layers, options):
         log.findings.append(Finding("W-108", f'{key}: "{pattern}" matches no layer that holds anything'))
+    log.findings += unnamed_marks(drawn.tally, options)
     if not len(drawn.lines):
         raise _nothing_drawn(log.report())
     unit, findings = settle_unit(int(document.header.get("$INSUNITS", 0)), options.units, drawn.lines)

@@ -7,6 +7,9 @@ from ezdxf.entities.layer import Layer
 
 from spanwright.io.wireframe.options import MarkKind, Options, layer_mark, matches
 
+NOT_ASKED = "layer is not among those asked for"
+"""Why a layer is left out that the user did not name, having named others."""
+
 _NEVER_PLOTTED = "defpoints"  # the format's own layer of dimension points
 
 
@@ -49,7 +52,7 @@ class LayerRules:
         options = self._options
         named = (options.layers, *options.marks.values())
         if options.layers and not any(matches(layer, patterns) for patterns in named):
-            return "layer is not among those asked for"
+            return NOT_ASKED
         return ""
 
 

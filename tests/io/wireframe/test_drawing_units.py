@@ -106,3 +106,21 @@ def test_the_reading_does_not_depend_on_the_order_of_lines(tmp_path: Path) -> No
     for start, end, _ in reversed(lines_of(PRATT)):
         document.modelspace().add_line(end, start)
     assert_same(imported(document, tmp_path), PRATT)
+
+
+def test_a_header_that_makes_a_toy_of_a_usual_truss_is_refused_unless_the_user_says_the_same(tmp_path: Path) -> None:
+    # drawn in cm on a template that says mm: 1.2 m is possible, but 12 m is what is meant (exchange finding 3)
+    document = new_drawing("mm")
+    draw(document.modelspace(), PRATT, lambda point: (point[0] / 10, point[1] / 10))
+    with pytest.raises(RefusedDrawingError, match=r"the span is 1\.2 m: hardly a roof truss") as refused:
+        imported(document, tmp_path)
+    assert refused.value.remedy == (
+        "say which unit it is; of the 1200 drawn, mm makes 1.2 m, cm makes 12 m, in makes 30.48 m"
+    )
+    assert refused.value.key == "units"
+    assert codes(imported(document, tmp_path, units="mm")) == ["W-205"]
+    assert imported(document, tmp_path, units="cm").report.facts.span == pytest.approx(12000.0)
+    # the truss alone is judged, however wide what is drawn around it
+    document.modelspace().add_line((0, -5000), (9000, -5000))
+    with pytest.raises(RefusedDrawingError, match="hardly a roof truss"):
+        imported(document, tmp_path)

@@ -100,7 +100,7 @@ def test_a_web_that_stops_short_of_a_chord_is_a_near_miss(tmp_path: Path) -> Non
 def test_the_tolerance_scales_with_a_small_truss(tmp_path: Path) -> None:
     document = new_drawing()
     draw(document.modelspace(), PRATT, lambda point: (point[0] / 6, point[1] / 6))
-    wireframe = imported(document, tmp_path)
+    wireframe = imported(document, tmp_path, units="mm")
     # 0.1 % of a span of 2 m (practice notes)
     assert wireframe.report.facts.tolerance == pytest.approx(2.0)
 

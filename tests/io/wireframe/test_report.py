@@ -53,7 +53,9 @@ def test_the_text_has_every_code_the_places_and_the_closing_table(tmp_path: Path
     assert "  span 12 m, depth 1.532 m, 12 joints, 21 bars\n" in text
     for finding in report.findings:
         assert f"{finding.code} {finding.severity}: {finding.meaning}" in text
-    assert re.search(r'a bar ends in the air; left out \[at 0, -3000 \(drawing units, mm\), layer "GRID", entity \w+\]', text)
+    assert re.search(
+        r'a bar ends in the air; left out \[at 0, -3000 \(drawing units, mm\), layer "GRID", entity \w+\]', text
+    )
     assert text.index("warning") < text.index(" note:")
     assert "read 25 entities: 24 converted, 0 ignored by rule, 1 not understood" in text
     assert re.search(r'1 CIRCLE +layer "BUBBLE": not understood, it is no straight line \(\w+\)', text)
