@@ -33,10 +33,9 @@ def hand_checks(design: Design) -> tuple[Comparison, ...]:
         *totals(truss, project, analysis),
         *closed_forms(truss, project, analysis),
         *cuts(truss, analysis),
-        *uplift(truss, analysis),
+        *uplift(analysis),
         *between_joints(truss, project, setting.restraint.lines, setting.load_set.stations, analysis.cases),
         *_deflections(design),
-        *_limits(design),
         *_stocky(design),
         _mass(design),
     )
@@ -57,26 +56,6 @@ def _deflections(design: Design) -> Iterator[Comparison]:
         yield compared(f"deflection, {row.name}", f"{row.joint}, {row.combination}", working, by_hand, row.value, "mm")
 
 
-def _limits(design: Design) -> Iterator[Comparison]:
-    """The greatest slenderness of each group against its limit."""
-    for choice in design.choices:
-        limits = [check for check in choice.checks if check.kind == "limit" and "slenderness" in check.name]
-        if not limits:
-            continue
-        worst = max(limits, key=lambda check: float(check.ratio.max()))
-        place = int(np.argmax(worst.ratio[0]))
-        bar = design.setting.truss.bar_names[choice.group.bars[place]]
-        yield Comparison(
-            f"greatest slenderness, {choice.group.name}",
-            f"{bar}, {worst.name}",
-            f"limit of {worst.clause}",
-            float(worst.resistance[0, place]),
-            float(worst.demand[0, place]),
-            "-",
-            bool(worst.ratio[0, place] <= 1.0),
-        )
-
-
 def _stocky(design: Design) -> Iterator[Comparison]:
     """Whether bars are slim enough to leave out the moments of stiff joints."""
     limits = rule("stocky")
@@ -89,7 +68,7 @@ def _stocky(design: Design) -> Iterator[Comparison]:
         yield Comparison(
             f"length over depth, {choice.group.name}",
             design.setting.truss.bar_names[choice.group.bars[place]],
-            f"less, and moments of stiff joints count ({limits[kind]['source']})",
+            f"at least this, or the moments of stiff joints count ({limits[kind]['source']})",
             least,
             ratio,
             "-",
@@ -119,7 +98,7 @@ def _mass(design: Design) -> Comparison:
     found = mass_per_area(design)
     return Comparison(
         "mass of the truss",
-        f"within {formula['within']:.0%} of the rule",
+        f"to be within {formula['within']:.0%} of the rule",
         f"{formula['source']}: sqrt(q/s)(L/{formula['divisor']:g} + {formula['constant']:g}), q = {load:.1f} kg/m², "
         f"s = {spacing:.2f} m, L = {span:.2f} m. {other['source']}, L/{other['divisor']:g} + {other['constant']:g}: "
         f"{span / other['divisor'] + other['constant']:.1f}",

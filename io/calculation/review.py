@@ -14,6 +14,7 @@ from spanwright.io.calculation.blocks import Column, Paragraph, Section, Table, 
 from spanwright.io.calculation.figures import fixed, kilo, mega
 from spanwright.io.calculation.working import measured, values_given
 from spanwright.io.text import metres, rounded_up
+from spanwright.truss.tolerances import TOLERANCES
 
 TASKS = 3
 WORTH = 0.5
@@ -37,8 +38,9 @@ def checks_by_hand(design: Design) -> Section:
     outside = sum(not row.exact and not row.passes for row in found)
     about = Paragraph(
         "Each value by hand is found without the analysis: by equilibrium of a part, closed forms, virtual work, "
-        f"areas, or a published rule of thumb. {len(found)} checks, {failing} failing, {outside} outside a rule of "
-        "thumb. A rule of thumb only asks for a second look."
+        f"areas. {len(found)} checks, {failing} failing, {outside} outside a rule of thumb. Pass: both values are the "
+        f"same but for rounding, to {TOLERANCES.by_hand:g} of the greater. A rule of thumb gives no exact value: its "
+        "row shows under by hand what the rule says; within: the design keeps to it; OUTSIDE asks for a second look."
     )
     bold = tuple(at for at, row in enumerate(found) if not row.passes)
     return Section("Hand checks", (about, Table(columns, rows, dense=True, bold=bold)))
