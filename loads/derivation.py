@@ -29,14 +29,17 @@ def force(x: float, y: float) -> str:
     return " and ".join(parts)
 
 
-def shares(truss: Truss, column: FloatArray, along_to: int) -> str:
-    """Return as text where one force goes: its part across the chord by shares (j,), along it to one joint."""
+def shares(truss: Truss, column: FloatArray, along_to: int, along: float) -> str:
+    """Return as text where one force goes: its part across the chord by shares (j,), that along it, N, to one joint."""
     listed = [(f"{share:.3f}", truss.joint_names[joint]) for joint, share in enumerate(column)]
     listed = [(share, name) for share, name in listed if float(share) != 0.0]
     if len(listed) == 1:
         return f"to {listed[0][1]}"
     across = ", ".join(f"{share} to {name}" for share, name in listed)
-    return f"to the joints, across the chord as a continuous beam: {across}; along it to {truss.joint_names[along_to]}"
+    return (
+        "shared by the joints as supports of a continuous beam: of its part across the chord the shares "
+        f"{across}; its part along the slope, {along / 1e3:.3f} kN, to {truss.joint_names[along_to]}"
+    )
 
 
 def total(forces: FloatArray) -> str:

@@ -42,7 +42,10 @@ class Roof:
         """Return the part of a permanent pressure on the slope, MPa; pulled : see `bending.Influence.part`."""
         forces = self.strips.on_slope(pressure * self.tributary)
         carried = [f"{say.metres(length)} of slope" for length in self.strips.lengths.sum(axis=1)]
-        head, goes = f"roof: {self._per_metre(pressure)} of slope", self._shares_down if pulled else self._shares
+        head, goes = (
+            f"roof: {self._per_metre(pressure)} of slope",
+            self._shares_down if pulled else self._shares(forces),
+        )
         return self._part(head, forces, carried, goes, pulled=pulled)
 
     def imposed(self, pressure: float, half: SlopeSide | None = None) -> Part:
@@ -108,7 +111,7 @@ class Roof:
         for number, (where, _) in enumerate(standing):
             forces = np.zeros((len(standing), 2))
             forces[number, 1] = -load
-            text = f"man: {say.force(0.0, -load)} {where}, {self._goes(influence, number)}"
+            text = f"man: {say.force(0.0, -load)} {where}, {self._goes(influence, number, forces[number])}"
             yield where, self._with_bending(influence.part(forces, (text,)))
 
     def _standing_between_joints(self) -> list[tuple[str, float]]:
@@ -128,9 +131,8 @@ class Roof:
     def _carried(self) -> Influence:
         return self.beams.influence(self.strips.places)
 
-    @cached_property
-    def _shares(self) -> list[str]:
-        return [self._goes(self._carried, number) for number in range(len(self.names))]
+    def _shares(self, forces: FloatArray) -> list[str]:
+        return [self._goes(self._carried, number, force) for number, force in enumerate(forces)]
 
     @cached_property
     def _shares_down(self) -> list[str]:
@@ -142,11 +144,13 @@ class Roof:
     @cached_property
     def _shares_again(self) -> list[str]:
         """Where each line's force goes, for cases after the permanent ones, which list the shares."""
-        shares = zip(self._shares, self.on_joint, strict=True)
+        shares = zip(self._shares(np.zeros((len(self.names), 2))), self.on_joint, strict=True)
         return [text if on_joint else "shared as under most" for text, on_joint in shares]
 
-    def _goes(self, influence: Influence, number: int) -> str:
-        return say.shares(self.truss, influence.shares[:, number], int(influence.ends[number, 1]))
+    def _goes(self, influence: Influence, number: int, force: FloatArray) -> str:
+        across = influence.across[number]
+        along = float(np.hypot(*(force - (force @ across) * across)))
+        return say.shares(self.truss, influence.shares[:, number], int(influence.ends[number, 1]), along)
 
     def _part(
         self, head: str, forces: FloatArray, carried: list[str], goes: list[str], *, pulled: bool = False
