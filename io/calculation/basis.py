@@ -33,13 +33,27 @@ def summary(design: Design) -> Section:
         "Result",
         (
             Paragraph(
-                f"{verdict} Greatest utilisation {rounded_up(greatest)}; mass {kilograms(design.mass)} a truss, "
-                f"{fixed(mass_per_area(design), 1)} kg/m² of plan, joint to joint, without gussets and fixings."
+                f"{verdict} Greatest utilisation {rounded_up(greatest)}. Mass {fixed(mass_per_area(design), 1)} kg/m² of "
+                "plan, members joint to joint."
             ),
+            Paragraph(_masses(design)),
             groups(design),
             *_deflection_lines(design),
             *_warned(design),
         ),
+    )
+
+
+def _masses(design: Design) -> str:
+    """Return the masses of one truss, and why they differ."""
+    overhang = " and over the overhang" if any(design.setting.truss.top.overhang) else ""
+    text = f"Mass of one truss: members joint to joint{overhang} {kilograms(design.mass)}, as the loads have it"
+    if not design.pieces:
+        return f"{text}, without gussets and fixings."
+    whole, fixings = design.assembly, design.setting.project.members.fixings
+    return (
+        f"{text}; pieces as cut, with packs and with ends clear of the joints, {kilograms(whole.mass)}; to lift, with "
+        f"{fixings:.0%} more for gussets and fixings, {kilograms(whole.lift_mass)}."
     )
 
 
@@ -76,8 +90,8 @@ def groups(design: Design) -> Table:
 
 def _deflection_lines(design: Design) -> tuple[Paragraph, ...]:
     words = [
-        f"{row.name} {fixed(row.value, 1)} mm of {fixed(row.limit, 1)} mm (span/{row.span_over:g})"
-        + ("" if row.ratio <= 1.0 else ", EXCEEDED")
+        f"{row.name} {fixed(abs(row.value), 1)} mm {'up' if row.value < 0.0 else 'down'} of {fixed(row.limit, 1)} mm "
+        f"allowed (span/{row.span_over:g})" + ("" if row.ratio <= 1.0 else ", EXCEEDED")
         for row in design.serviceability.deflections
     ]
     greatest = greatest_factored(design.bearing_forces)

@@ -115,7 +115,8 @@ class Step:
     """A step of a worked member: a value with the formula that gives it, in symbols and with numbers put in.
 
     expression : the formula as the rule states it, "" where there is none. formula, numbers : mathematics, "" where
-        they would repeat the symbol or the result. wide : whether the numbers must be free to break.
+        they would repeat the symbol or the result. wide : whether the numbers must be free to break. reasons : of a
+        formula with cases, the conditions that chose among them with numbers put in, as mathematics.
     """
 
     value: Value
@@ -123,6 +124,7 @@ class Step:
     formula: str = ""
     numbers: str = ""
     wide: bool = False
+    reasons: tuple[str, ...] = ()
 
 
 @dataclass(frozen=True)

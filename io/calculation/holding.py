@@ -11,6 +11,17 @@ from spanwright.io.calculation.geometry import framed, strokes
 from spanwright.io.text import rounded_up
 from spanwright.truss.restraint import ANCHOR, Restraint
 
+SIGNS = {
+    "counted": "Filled square: purlin line that counts",
+    "open": "Open square: purlin line or bottom tie that does not count",
+    "brace": "Open circle: foot of a knee brace, where it holds the bottom chord",
+    "brace line": "Dashed: knee brace up to its purlin line",
+    "loose line": "Dotted: knee brace that does not count",
+    "tie": "Diamond: bottom tie",
+    "bearing": "Bar: bearing held sideways",
+}
+"""Signs of the drawing and what they mean."""
+
 
 def restraint(design: Design) -> Section:
     """Return the restraint drawing, the purlin lines, the forces with their paths, and what cannot be lost."""
@@ -59,12 +70,17 @@ def _drawing(design: Design) -> Sketch:
     for bearing in setting.restraint.bearings:
         x, y = (float(value) / 1e3 for value in truss.xy[bearing.joint])
         marks.append(Mark("bearing", x, y, label(bearing.name)))
-    caption = (
-        "What holds the chords sideways, with the force in kN that each must resist. Filled square: purlin line that "
-        "counts; open square: it does not. Dashed: knee brace up to its purlin line. Diamond: bottom tie. Bar: bearing "
-        "held sideways. The forces run along purlins and ties, out of the paper, to the anchor."
-    )
+    caption = _caption({mark.shape for mark in marks} | {f"{brace.style} line" for brace in braces})
     return framed(truss, (*strokes(truss, named=False), *braces), tuple(marks), (), (), caption)
+
+
+def _caption(shown: set[str]) -> str:
+    """Return what the drawing shows, with the signs that stand in it."""
+    signs = ". ".join(words for sign, words in SIGNS.items() if sign in shown)
+    return (
+        f"What holds the chords sideways, with the force in kN that each must resist. {signs}. The forces run along "
+        "purlins and ties, out of the paper, to the anchor."
+    )
 
 
 def _lines(design: Design) -> Table:

@@ -24,7 +24,7 @@ from spanwright.io.calculation.blocks import (
     Value,
 )
 from spanwright.io.calculation.figures import NONE, fixed
-from spanwright.io.calculation.mathematics import evaluate, number, symbols_in, with_numbers, with_symbols
+from spanwright.io.calculation.mathematics import evaluate, number, reasons, symbols_in, with_numbers, with_symbols
 from spanwright.io.calculation.naming import case_labels
 from spanwright.io.calculation.symbols import symbol, unit
 from spanwright.io.text import figures
@@ -112,14 +112,16 @@ def _step(step: Intermediate, known: dict[str, float]) -> Step:
     source = ", ".join(part for part in (step.clause, step.mark) if part)
     words = step.meaning
     formula = numbers = ""
+    why: tuple[str, ...] = ()
     if _is_formula(step.formula, known):
         formula, numbers = with_symbols(step.formula), with_numbers(step.formula, known)
+        why = reasons(step.formula, known)
     elif step.formula:
         words = f"{words}: {step.formula}"
     value = Value(
         step.symbol, figures(step.value), symbol(step.symbol), number(step.value), unit(step.unit), words, source
     )
-    return Step(value, step.formula if formula else "", formula, "" if numbers == value.shown else numbers)
+    return Step(value, step.formula if formula else "", formula, "" if numbers == value.shown else numbers, reasons=why)
 
 
 def _is_formula(text: str, known: dict[str, float]) -> bool:

@@ -8,7 +8,7 @@ from __future__ import annotations
 import ast
 import math
 import re
-from collections.abc import Mapping
+from collections.abc import Iterator, Mapping
 
 from spanwright.io.calculation.symbols import BRACED, symbol
 from spanwright.io.text import figures
@@ -56,6 +56,24 @@ def with_numbers(expression: str, values: Mapping[str, float], *, flat: bool = F
     writer = _Numbers(values)
     writer.within_fraction = flat
     return writer.written(expression)
+
+
+def reasons(expression: str, values: Mapping[str, float]) -> tuple[str, ...]:
+    """Return the conditions that chose among the cases of a formula, each as it holds, with printed numbers put in."""
+    return tuple(_decided(ast.parse(expression, mode="eval").body, values))
+
+
+def _decided(node: ast.expr, values: Mapping[str, float]) -> Iterator[str]:
+    match node:
+        case ast.Call(func=ast.Name(id="where"), args=[ast.Compare(left, [operator], [right]) as condition, yes, no]):
+            holds = evaluate(ast.unparse(condition), values)
+            kind = type(operator) if holds else _OPPOSITE[type(operator)]
+            yield _Numbers(values).part(ast.Compare(left, [kind()], [right]))[0]
+            yield from _decided(yes if holds else no, values)
+        case _:
+            for inner in ast.iter_child_nodes(node):
+                if isinstance(inner, ast.expr):
+                    yield from _decided(inner, values)
 
 
 def signs(mathematics: str) -> int:
@@ -194,6 +212,7 @@ def _bound(text: str) -> tuple[str, int]:
     return text, _PRODUCT if "times" in text else _ATOM
 
 
+_OPPOSITE: dict[type[ast.cmpop], type[ast.cmpop]] = {ast.LtE: ast.Gt, ast.Gt: ast.LtE, ast.Lt: ast.GtE, ast.GtE: ast.Lt}
 _COMPARED = {ast.LtE: "<=", ast.Lt: "<", ast.GtE: ">=", ast.Gt: ">"}
 
-__all__ = ["evaluate", "grouped", "number", "symbols_in", "with_numbers", "with_symbols"]
+__all__ = ["evaluate", "grouped", "number", "reasons", "symbols_in", "with_numbers", "with_symbols"]

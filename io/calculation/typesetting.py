@@ -26,7 +26,7 @@ _PICTURE_FONTS = ("DejaVuSans.ttf", "DejaVuSans-Bold.ttf")
 _UNSEEN = {"Cc", "Cf", "Cs", "Co", "Cn", "Zl", "Zp"}
 """Unicode categories that print nothing, or change how the text around them reads."""
 
-_SOURCE = {"svg", "symbol", "shown", "formula", "numbers", "expression"}
+_SOURCE = {"svg", "symbol", "shown", "formula", "numbers", "expression", "reasons"}
 """Keys whose text is no prose but made by us for a reader of its own: left as it is."""
 
 _LONG_WORD = re.compile(r"\S{28,}")

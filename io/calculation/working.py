@@ -13,7 +13,7 @@ from dataclasses import dataclass, fields
 from spanwright.design.standard import Check
 from spanwright.design.steps import Line, Rule, explain
 from spanwright.io.calculation.blocks import CheckWork, MemberWork, RuleWork, Step, Taken, Value
-from spanwright.io.calculation.mathematics import number, signs, symbols_in, with_numbers, with_symbols
+from spanwright.io.calculation.mathematics import number, reasons, signs, symbols_in, with_numbers, with_symbols
 from spanwright.io.calculation.symbols import symbol, unit
 from spanwright.io.text import figures, rounded_up
 
@@ -179,6 +179,7 @@ def _step(line: Line, known: dict[str, float]) -> Step:
         "" if _on_one_line(formula) == value.symbol else formula,
         "" if numbers == value.shown else numbers,
         wide,
+        reasons(line.formula, known),
     )
 
 

@@ -142,9 +142,35 @@ def test_every_family_is_typeset(name: str) -> None:
 
 
 def test_tables_repeat_their_heads_on_the_next_page(texts: list[str]) -> None:
-    start = next(at for at, text in enumerate(texts) if at and "10 Buckling lengths" in text)
-    assert "11 Members" in texts[start + 1]
-    assert "joint to joint" in texts[start + 1].partition("11 Members")[0]
+    start = next(at for at, text in enumerate(texts) if at and "8 Reactions" in text)
+    rest = texts[start + 1].partition("Greatest, factored")[0]
+    assert "man at" in rest and "load right" in rest
+
+
+def test_the_first_page_has_every_mass_of_a_truss_and_the_way_of_deflection(texts: list[str]) -> None:
+    found, first = designed("pratt_store"), texts[0].replace("\n", " ")
+    assert f"joint to joint {found.mass:.0f} kg" in first
+    assert f"{found.assembly.mass:.0f} kg; to lift" in first and f"{found.assembly.lift_mass:.0f} kg." in first
+    assert re.search(r"variable [\d.]+ mm up of 60.0 mm allowed", first)
+
+
+def test_the_restraint_drawing_explains_its_signs_and_no_others() -> None:
+    """The feed store has knee braces and no bottom tie; every purlin line of it counts."""
+    (drawing,) = [
+        block
+        for block in section(document(designed("pratt_store")), "Restraint")["blocks"]
+        if block["kind"] == "sketch"
+    ]
+    assert {mark["shape"] for mark in drawing["marks"]} == {"counted", "brace", "bearing"}
+    assert "Open circle: foot of a knee brace" in drawing["caption"]
+    for absent in ("Open square", "Diamond", "Dotted"):
+        assert absent not in drawing["caption"]
+
+
+def test_a_purlin_between_joints_says_how_its_load_is_shared(texts: list[str]) -> None:
+    text = " ".join(" ".join(texts).split())
+    assert re.search(r"0\.938 kN down, shared by the joints as supports of a continuous beam: of its part across", text)
+    assert "its part along the slope, 0.082 kN, to T6" in text  # 0.938 kN x sin 5°
 
 
 def test_numbers_of_a_column_stand_on_one_point() -> None:

@@ -9,7 +9,7 @@ import pytest
 from calculated import FAMILIES, blocks, designed, half_unit, within_print, worked_steps
 
 from spanwright.io.calculation.document import document
-from spanwright.io.calculation.mathematics import with_numbers, with_symbols
+from spanwright.io.calculation.mathematics import reasons, with_numbers, with_symbols
 
 PRINTED_NUMBER = re.compile(r'"([\d.\u2009]+)"')
 
@@ -134,6 +134,14 @@ def test_numbers_put_in_keep_their_signs_and_show_only_the_choice_that_applies()
     assert with_numbers("b - a", values) == '"123\u2009456" - (-"2.5")'
     assert with_numbers("a**2", values) == '(-"2.5")^("2")'
     assert with_numbers("b/d", values) == 'frac("123\u2009456", "3.0000" times 10^(12))'
+
+
+@pytest.mark.parametrize(
+    ("a", "told"),
+    [(0.0, ('"0" <= "2"', '"0" <= "1"')), (1.5, ('"1.5" <= "2"', '"1.5" > "1"')), (3.0, ('"3" > "2"',))],
+)
+def test_the_conditions_that_chose_a_case_are_told_as_they_hold(a: float, told: tuple[str, ...]) -> None:
+    assert reasons("1 + where(a > 2, b, where(a > 1, 5, 0))", {"a": a, "b": 7.0}) == told
 
 
 @pytest.mark.parametrize("expression", ["__import__('os')", "a if b else c", "a.b", "[a]", "a @ b", "'text'"])
