@@ -3,12 +3,14 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from itertools import pairwise
 
 import numpy as np
 
 from spanwright.design.result import Design
+from spanwright.io.pictures.labels import CLEAR
 from spanwright.io.pictures.lettering import cut_to, height_of, width_of
-from spanwright.io.pictures.page import FOOT_TOP, HEADING_BOTTOM, LEFT, RIGHT, draw_foot, draw_heading
+from spanwright.io.pictures.page import FOOT_TOP, HEADING_BOTTOM, LEFT, PRESSURE_SIGNS, RIGHT, draw_foot, draw_heading
 from spanwright.io.pictures.sheet import Sheet
 from spanwright.io.pictures.style import (
     BOLD,
@@ -19,11 +21,10 @@ from spanwright.io.pictures.style import (
     THICK,
     THIN,
 )
-from spanwright.io.pictures.tables import Table, draw_table, height_of_table
 from spanwright.io.pictures.view import View
-from spanwright.io.text import figures, metres
+from spanwright.io.pictures.wind_steps import draw_steps
+from spanwright.io.text import metres
 from spanwright.loads.coefficients import Sign
-from spanwright.loads.intermediate import Intermediate
 from spanwright.loads.pressures import WindField
 from spanwright.loads.site import SiteActions
 from spanwright.loads.zones import DIRECTIONS, WindFrom, Zone, zone_measure
@@ -35,6 +36,9 @@ PLAN_DENOMINATORS = (50, 100, 150, 200, 250, 300, 400, 500, 600, 750, 1000, 1250
 
 AROUND = 9.0
 """mm left free about each plan, for the wind's arrow and the letters of narrow zones."""
+
+BEFORE = 3.6
+"""mm between the wind's arrow and the roof: room for the letter of a narrow zone."""
 
 CAPTION_LINES = 5
 LINE = 3.1
@@ -63,7 +67,7 @@ def wind_zones_sheet(design: Design, site: SiteActions, field: WindField) -> She
     """Return the sheet of the picture `wind_zones`."""
     sheet = Sheet()
     draw_heading(sheet, design, "Wind zones")
-    draw_foot(sheet, design)
+    draw_foot(sheet, design, PRESSURE_SIGNS)
     cells, denominator = _cells(field)
     for wind, cell in zip(DIRECTIONS, cells, strict=True):
         _draw_plan(sheet, site, field, wind, cell, denominator)
@@ -122,12 +126,11 @@ def _box(view: View, x0: float, z0: float, x1: float, z1: float) -> FloatArray:
 def _draw_letter(sheet: Sheet, view: View, field: WindField, zone: Zone) -> None:
     """Write a zone's letter in it, or beside the roof where it is too narrow; skip it where it is inside and narrow."""
     low, _, high, _ = _box(view, zone.x0, zone.z0, zone.x1, zone.z1)
-    wide, tall = high - low
-    x, y = (low + high) / 2.0
-    y -= height_of(SMALL) / 2.0
-    if field.shape.two_slopes and zone.x0 < field.shape.middle < zone.x1:
-        x -= wide / 4.0  # clear of the ridge
-    if width_of(zone.name, SMALL) + 0.4 <= wide and height_of(SMALL) + 0.4 <= tall:
+    tall = high[1] - low[1]
+    y = (low[1] + high[1]) / 2.0 - height_of(SMALL) / 2.0
+    start, end = _widest(zone, field)
+    x, wide = float(view.onto(np.array([(start + end) / 2.0, 0.0]))[0]), (end - start) / view.denominator
+    if width_of(zone.name, SMALL) + 2 * CLEAR <= wide and height_of(SMALL) + CLEAR <= tall:
         sheet.text(x, y, zone.name, SMALL, across="center")
     elif zone.x0 == field.shape.edges[0]:
         sheet.text(low[0] - 0.8, y, zone.name, SMALL, across="right")
@@ -139,12 +142,19 @@ def _draw_letter(sheet: Sheet, view: View, field: WindField, zone: Zone) -> None
         sheet.text(x, high[1] + 0.8, zone.name, SMALL, across="center")
 
 
+def _widest(zone: Zone, field: WindField) -> tuple[float, float]:
+    """Return the widest part of a zone that no wall and no ridge runs through, as x from and to, mm."""
+    lines = [*field.shape.walls, *([field.shape.middle] if field.shape.two_slopes else [])]
+    bounds = sorted({zone.x0, zone.x1, *(x for x in lines if zone.x0 < x < zone.x1)})
+    return max(pairwise(bounds), key=lambda part: round(part[1] - part[0]))
+
+
 def _draw_arrow(sheet: Sheet, view: View, field: WindField, wind: WindFrom) -> None:
     """Draw an arrow that blows onto the middle of the upwind edge."""
     aim = np.array(_AIM[wind])
     aside = np.array([-aim[1], aim[0]])
     low, _, high, _ = _box(view, field.shape.edges[0], field.shape.ends[0], field.shape.edges[1], field.shape.ends[1])
-    tip = (low + high) / 2.0 - aim * ((high - low) / 2.0 + 2.6)
+    tip = (low + high) / 2.0 - aim * ((high - low) / 2.0 + BEFORE)
     outline = [tip, *(tip - back * aim + out * aside for back, out in _ARROW)]
     sheet.areas([np.array(outline)], INK, order=3.0)
 
@@ -193,25 +203,17 @@ def _wrapped(entries: list[str], width: float) -> list[str]:
 def _draw_values(sheet: Sheet, site: SiteActions, field: WindField, denominator: int) -> None:
     """Write the way to the peak pressure, what stands inside, and where the truss stands."""
     left = RIGHT - TABLE_WIDTH
-    table = Table(
-        headings=("", "value", "", "clause", "source"),
-        rows=[_row(step) for step in (*field.peak.steps, *field.internal)],
-        right=frozenset({1}),
-    )
-    top = HEADING_BOTTOM - 3.0
-    draw_table(sheet, table, left, top, TABLE_WIDTH)
     notes = (
-        f"Below the plans cpe of the zones, suction / pressure; + presses in. Plans 1:{denominator} on A4.",
+        "Below the plans outside coefficients cpe of the zones, suction / pressure.",
+        "e is the lesser of the building\u2019s breadth across the wind and twice its height.",
+        f"Dashed are walls and ridge. Plans 1:{denominator} on A4.",
         "The heavy line is the truss in its strip of roof; the near gable is at the foot.",
         f"The truss stands {metres(site.position)} from the near gable and carries {metres(field.strip[0])} to "
         f"{metres(field.strip[1])}.",
         "What is marked \u201cfrom memory\u201d must be verified against the printed standard.",
     )
-    below = top - height_of_table(table) - 4.0
+    top = HEADING_BOTTOM - 2.0
+    height = top - FOOT_TOP - 6.0 - len(notes) * LINE
+    below = draw_steps(sheet, field, left, top, (TABLE_WIDTH, height)) - 4.0
     for number, words in enumerate(notes):
         sheet.text(left, below - number * LINE, cut_to(words, TABLE_WIDTH, SMALL), SMALL)
-
-
-def _row(step: Intermediate) -> tuple[str, ...]:
-    unit = "" if step.unit == "-" else step.unit
-    return step.symbol, figures(step.value), unit, step.clause, step.mark

@@ -10,6 +10,7 @@ import numpy as np
 import pytest
 from matplotlib.collections import PolyCollection
 from matplotlib.colors import to_rgba
+from matplotlib.text import Text
 from pictured import outlines
 from roofs import mono_pitch
 from shapely import Polygon
@@ -20,6 +21,7 @@ from spanwright.io.pictures.sheet import Sheet, drawing_board
 from spanwright.io.pictures.style import PALE
 from spanwright.io.pictures.wind import wind_sheets
 from spanwright.io.pictures.wind_cases import LONGEST
+from spanwright.io.pictures.wind_steps import draw_steps
 from spanwright.io.pictures.wind_zones import wind_zones_sheet
 from spanwright.io.project_file import parse_project
 from spanwright.loads.cases import loads_on
@@ -160,6 +162,30 @@ def test_every_zone_and_coefficient_is_named(written: Path) -> None:
         assert expected in text
     letters = [entry for entry in words(written / "wind_zones.svg") if entry in tuple("FGHIJ")]
     assert {letter: letters.count(letter) for letter in "FGHIJ"} == {"F": 8, "G": 6, "H": 6, "I": 6, "J": 2}
+
+
+def test_every_value_stands_in_words_with_its_symbol(field: WindField, written: Path) -> None:
+    text = words(written / "wind_zones.svg")
+    for step in field.peak.steps:
+        assert any(line.startswith(f"{step.symbol} = ") for line in text)
+        assert step.meaning in text
+
+
+def test_inside_coefficients_say_which_cases_they_are_of(field: WindField, written: Path) -> None:
+    text = " ".join(words(written / "wind_zones.svg"))
+    named = re.findall("cases \u201c(inside [^\u201d]+)\u201d", text)
+    assert len(named) == len(field.internal)
+    assert set(named) == {case.name.rpartition(", ")[2] for case in field.cases}
+    assert [f"cpi = {name.removeprefix('inside ')}".replace("-", "\u2212") in text for name in named] == [True, True]
+
+
+def test_values_that_the_sheet_has_no_room_for_are_counted(field: WindField) -> None:
+    sheet = Sheet()
+    end = draw_steps(sheet, field, 0.0, 100.0, (92.0, 40.0))
+    assert end >= 60.0
+    shown = [text.get_text() for text in sheet.figure.findobj(Text)]
+    more = next(int(text.split()[1]) for text in shown if text.endswith("more, in results.json"))
+    assert sum(" = " in text for text in shown) + more == len(field.peak.steps) + len(field.internal)
 
 
 def test_every_case_is_shown_with_its_pressures(field: WindField, written: Path) -> None:
