@@ -53,8 +53,7 @@ def sideways_compression(axial: FloatArray, lengths: BucklingLengths) -> FloatAr
     (the safe reading where the force changes along the run).
     """
     compression = np.maximum(-axial, 0.0)
-    greatest: FloatArray = np.where(lengths.together[:, :, None], compression, 0.0).max(axis=1)
-    return greatest
+    return np.array([compression[np.flatnonzero(mates)].max(axis=0) for mates in lengths.together])
 
 
 def _chord_moments(truss: Truss, stations: Stations, moments: FloatArray) -> tuple[FloatArray, FloatArray, FloatArray]:

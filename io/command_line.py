@@ -12,11 +12,13 @@ from argparse import ArgumentParser, Namespace, RawDescriptionHelpFormatter
 from collections.abc import Callable, Sequence
 from difflib import get_close_matches
 from importlib import import_module
+from pathlib import Path
 
 from spanwright import __version__
 
 _COMMANDS = ("design", "check", "wireframe", "strut", "sections", "starter")
 _WRONG_INPUT = 2
+_NOT_SHOWN = 1
 _FAULT = 70
 _INTERRUPTED = 130
 _BROKEN_PIPE = 141
@@ -39,9 +41,7 @@ The truss is taken as simply supported with no moment to columns. Erection stabi
 
 def main(arguments: Sequence[str] | None = None) -> int:
     """Run a command; `arguments` as on the command line, without the program's name. Returns the exit status."""
-    for stream in (sys.stdout, sys.stderr):
-        if hasattr(stream, "reconfigure"):
-            stream.reconfigure(errors="replace")  # a terminal that lacks a sign of a title shows "?" for it
+    _settle_streams()
     parser = _parser()
     words = list(sys.argv[1:] if arguments is None else arguments)
     if words and words[0] not in _COMMANDS and not words[0].startswith("-"):
@@ -51,6 +51,15 @@ def main(arguments: Sequence[str] | None = None) -> int:
         parser.print_help()
         return _WRONG_INPUT
     return _guarded(given.run, given)
+
+
+def _settle_streams() -> None:
+    """Let a terminal that lacks a sign of a title show "?" for it; a stream that is closed takes what comes to it."""
+    sys.stdout = sys.stdout or Path(os.devnull).open("w", encoding="utf-8")
+    sys.stderr = sys.stderr or Path(os.devnull).open("w", encoding="utf-8")
+    for stream in (sys.stdout, sys.stderr):
+        if hasattr(stream, "reconfigure"):
+            stream.reconfigure(errors="replace")
 
 
 def _no_such_command(word: str) -> str:
@@ -93,6 +102,8 @@ def _guarded(run: Callable[[Namespace], int], given: Namespace) -> int:
     except (BrokenPipeError, SystemExit):  # the reader of our output, such as `head`, left; rich then raises SystemExit
         os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
         return _BROKEN_PIPE
+    except OSError as error:  # files are guarded where they are written: this is the screen or the pipe behind it
+        return _complain(f"the output cannot be shown: {error.strerror or error}", _NOT_SHOWN)
     except Exception as error:
         if os.environ.get(_SHOW_TRACEBACK):
             raise

@@ -11,6 +11,7 @@ from spanwright.io.files import make_folder, remove, write_atomically
 from spanwright.io.results.document import write_results
 from spanwright.truss.errors import OutputError
 
+RESULTS = "results.json"
 _MARKED = "wireframe_marked.dxf"
 
 
@@ -33,25 +34,30 @@ def write_all(
 
     Schedules and drawing are written only where every member passes. pictures : leave them out with False.
     every_member : work all members in full in the calculation.
-    Returns what failed; everything else is written all the same. Raises OutputError where results.json fails.
+    Returns what failed; everything else is written all the same. Raises OutputError where there can be no folder.
     """
     folder = Path(folder)
     make_folder(folder)
-    failures = []
+    failures: list[OutputError] = []
+    _remove(folder, (RESULTS,), failures)  # an interrupted run leaves a folder that does not look whole
     for output in _outputs(design, pictures=pictures, every_member=every_member):
         try:
             if output.due:
                 output.write(design, folder)
+                continue
         except OutputError as error:
             failures.append(error)
-        else:
-            if output.due:
-                continue
-        for pattern in output.names:
-            for path in folder.glob(pattern):
-                remove(path)
-    write_results(design, folder)
+        _remove(folder, output.names, failures)
     return tuple(failures)
+
+
+def _remove(folder: Path, names: tuple[str, ...], failures: list[OutputError]) -> None:
+    for pattern in names:
+        for path in folder.glob(pattern):
+            try:
+                remove(path)
+            except OutputError as error:
+                failures.append(error)
 
 
 def _outputs(design: Design, *, pictures: bool, every_member: bool) -> tuple[Output, ...]:
@@ -66,6 +72,7 @@ def _outputs(design: Design, *, pictures: bool, every_member: bool) -> tuple[Out
             ("calculation.pdf",), lambda design, folder: _calculation(design, folder, every_member=every_member), True
         ),
         Output((_MARKED,), lambda _, folder: write_atomically(folder / _MARKED, marked), bool(marked)),
+        Output((RESULTS,), write_results, True),
     )
 
 

@@ -20,6 +20,7 @@ from spanwright.truss.errors import InputError
 
 _LONGEST_NAME = 60
 _UNPRINTABLE = {"Cc", "Zl", "Zp"}
+_TURNING = set("\u202a\u202b\u202c\u202d\u202e\u2066\u2067\u2068\u2069")  # they reorder what stands around them
 
 
 class Table(BaseModel):
@@ -128,7 +129,7 @@ def line_of_text(value: object) -> str:
         return value.isoformat()
     if not isinstance(value, str):
         raise InputError(f"{shown(value)} is not text", f'write it in quotes, such as "{shown(value).strip(chr(34))}"')
-    if any(unicodedata.category(character) in _UNPRINTABLE for character in value):
+    if any(unicodedata.category(sign) in _UNPRINTABLE or sign in _TURNING for sign in value):
         raise InputError(f"{shown(value)} holds a line break or control character", "write plain text on one line")
     return value.strip()
 

@@ -134,12 +134,19 @@ class JointLoadTable(Table):
         return JointLoad(self.case, self.kind, self.joint, down, right, least_down, least_right, self.psi)
 
 
+_MOST_WIND = 200  # far beyond what any standard asks for; each adds some ten combinations
+
+
 def _none_or_cases(value: Any, cases: Any) -> Any:
     if value == "none":
         return []
     if not isinstance(value, list) or not value:
         found = "no wind case is given" if value == [] else f"{shown(value)} is not a wind case"
         raise refused(InputError(found, 'write wind = "none" if there is none, or tables [[loads.wind]]'))
+    if len(value) > _MOST_WIND:
+        raise refused(
+            InputError(f"{len(value)} wind cases are given", f"give at most {_MOST_WIND}: those that can govern")
+        )
     return cases(value)
 
 

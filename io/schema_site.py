@@ -26,6 +26,7 @@ Speed = Annotated[float, field(ranged(SPEED, "m/s", "10 m/s", "100 m/s"))]
 OpeningArea = Annotated[float, field(ranged(AREA, "m2", "0 m2", "10000 m2"))]
 GroundSnow = Annotated[float, field(ranged(PRESSURE, "kPa", "0 kPa", "20 kPa"))]
 Along = Annotated[float, length("0 m", "2000 m")]
+WholeSide = Annotated[float, length("1 m", "2000 m")]
 Height = Annotated[float, length("0.5 m", "100 m")]
 Overhang = Annotated[float, length("0 m", "5 m")]
 Altitude = Annotated[float, length("-400 m", "5000 m")]
@@ -52,7 +53,7 @@ def _period(value: object) -> float:
 def _coefficients(value: object) -> tuple[float, ...]:
     entries: list[Any] = value if isinstance(value, list) else [value]
     for entry in entries:
-        if isinstance(entry, bool) or not isinstance(entry, int | float) or abs(entry) > _widest:
+        if isinstance(entry, bool) or not isinstance(entry, int | float) or not abs(entry) <= _widest:
             raise InputError(
                 f"{shown(entry)} is not an internal pressure coefficient",
                 f"write numbers from -{_widest} to {_widest}, such as [0.2, -0.3]; + presses outward",
@@ -93,9 +94,9 @@ class SnowTable(Table):
 class SiteTable(Table):
     """The table [site]."""
 
-    length: Along = key('length of the building along the ridge, from gable to gable, such as "40 m"')
+    length: WholeSide = key('length of the building along the ridge, from gable to gable, such as "40 m"')
     eaves_height: Height = key('height from the ground to the roof\'s surface above the lower wall, such as "6 m"')
-    width: Along | None = key("width of the building from wall to wall", None, otherwise="the span")
+    width: WholeSide | None = key("width of the building from wall to wall", None, otherwise="the span")
     gable_overhang: Overhang = key("of the roof beyond each gable", "0 m")
     truss: Annotated[NamedPosition | float, field(_position)] = key(
         'where the truss stands: "end", "first interior", "typical interior", or its distance from the near gable',

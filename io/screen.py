@@ -33,7 +33,7 @@ def print_summary(
     written_to : the folder that holds the files of this design, if any were written.
     failures : outputs that could not be written.
     """
-    out = console or Console(highlight=False)
+    out = console or Console(highlight=False, emoji=False)
     setting = design.setting
     project, truss = setting.project, setting.truss
     out.print(f"[bold]{escape(project.mark)}  {escape(project.title)}[/bold]   {project.quantity} off")

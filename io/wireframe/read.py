@@ -52,8 +52,8 @@ def read_drawing(path: Path, limits: Limits) -> tuple[Drawing, tuple[Finding, ..
 
 def _refuse_at_sight(path: Path, limits: Limits) -> None:
     try:
-        if path.is_dir() or not path.exists():
-            what = "this is a folder, not a drawing" if path.is_dir() else "there is no such file"
+        if not path.is_file():  # a pipe or a device would be waited for without end
+            what = "this is a folder or a device, not a drawing" if path.exists() else "there is no such file"
             raise DrawingError(what, "give the name of a DXF file", file=str(path))
         if path.suffix.lower() != ".dxf":
             raise DrawingError(f'the file\'s name ends in "{path.suffix}", not in ".dxf"', _SAVE_AS, file=str(path))
