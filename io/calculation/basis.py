@@ -33,8 +33,8 @@ def summary(design: Design) -> Section:
         "Result",
         (
             Paragraph(
-                f"{verdict} Greatest utilisation {rounded_up(greatest)}. Mass {fixed(mass_per_area(design), 1)} kg/m² of "
-                "plan, members joint to joint."
+                f"{verdict} Greatest utilisation {rounded_up(greatest)}. Mass {fixed(mass_per_area(design), 1)} kg/m² "
+                "of plan, members joint to joint."
             ),
             Paragraph(_masses(design)),
             groups(design),
