@@ -15,7 +15,31 @@ PAGE = (297.0, 210.0)
 MARGIN = 10.0
 """Left free on all sides (ISO 5457), mm."""
 
-DENOMINATORS = (5, 10, 20, 25, 30, 40, 50, 60, 75, 80, 100, 125, 150, 200, 250, 300, 400, 500, 1000, 2000, 5000)
+DENOMINATORS = (
+    5,
+    10,
+    20,
+    25,
+    30,
+    40,
+    50,
+    60,
+    75,
+    80,
+    100,
+    125,
+    150,
+    200,
+    250,
+    300,
+    400,
+    500,
+    600,
+    750,
+    1000,
+    2000,
+    5000,
+)
 """Drawing scales 1:n: those of ISO 5455 and the steps between that are usual on structural drawings."""
 
 INK = "#000000"

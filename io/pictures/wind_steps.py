@@ -29,7 +29,7 @@ def draw_steps(sheet: Sheet, field: WindField, left: float, top: float, size: tu
     step = float(np.clip((height - HEADING) / len(rows), LEAST_STEP, STEP))
     room = int((height - HEADING) / step + 0.01)
     if len(rows) > room:
-        rows = [*rows[: room - 1], (f"and {len(rows) - room + 1} more, in results.json", "", "")]
+        rows = [*rows[: room - 1], (f"and {len(rows) - room + 1} more: see calculation.pdf", "", "")]
     ends = np.array([left, left + width])
     sheet.text(left, top - 3.0, "peak pressure and inside pressure", BODY, colour=SOFT)
     sheet.text(left + width, top - 3.0, "value", BODY, across="right", colour=SOFT)

@@ -185,7 +185,7 @@ def _coefficients(values: dict[Sign, float]) -> str:
 
 def signed(value: float) -> str:
     """Write a coefficient or a pressure with its sign."""
-    return f"{value + 0.0:+.2f}".replace("-", "\u2212")
+    return f"{round(value, 2) + 0.0:+.2f}".replace("-", "\u2212")
 
 
 def _wrapped(entries: list[str], width: float) -> list[str]:

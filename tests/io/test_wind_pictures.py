@@ -184,7 +184,7 @@ def test_values_that_the_sheet_has_no_room_for_are_counted(field: WindField) -> 
     end = draw_steps(sheet, field, 0.0, 100.0, (92.0, 40.0))
     assert end >= 60.0
     shown = [text.get_text() for text in sheet.figure.findobj(Text)]
-    more = next(int(text.split()[1]) for text in shown if text.endswith("more, in results.json"))
+    more = next(int(text.split()[1]) for text in shown if text.endswith("more: see calculation.pdf"))
     assert sum(" = " in text for text in shown) + more == len(field.peak.steps) + len(field.internal)
 
 
