@@ -32,7 +32,7 @@ def statics(truss: Truss, analysis: Analysis, second_difference: float) -> Itera
 def _sums(analysis: Analysis, reading: Arrangement, solution: Solution) -> Iterator[Comparison]:
     sums = reaction_sums(solution, analysis.loads)
     scale = float(np.abs(sums.loads).max())
-    for axis, word in enumerate(("sideways", "upright")):
+    for axis, word in enumerate(("along the span", "upright")):
         at = int(np.argmax(np.abs(sums.loads + sums.reactions)[axis]))
         if not np.any(sums.loads[axis]) and not np.any(np.abs(sums.reactions[axis]) > TOLERANCES.by_hand * scale):
             continue

@@ -12,7 +12,7 @@ from argparse import ArgumentParser, Namespace, RawDescriptionHelpFormatter
 from collections.abc import Callable, Sequence
 from difflib import get_close_matches
 from importlib import import_module
-from pathlib import Path
+from io import StringIO
 
 from spanwright import __version__
 
@@ -55,8 +55,8 @@ def main(arguments: Sequence[str] | None = None) -> int:
 
 def _settle_streams() -> None:
     """Let a terminal that lacks a sign of a title show "?" for it; a stream that is closed takes what comes to it."""
-    sys.stdout = sys.stdout or Path(os.devnull).open("w", encoding="utf-8")
-    sys.stderr = sys.stderr or Path(os.devnull).open("w", encoding="utf-8")
+    sys.stdout = sys.stdout or StringIO()
+    sys.stderr = sys.stderr or StringIO()
     for stream in (sys.stdout, sys.stderr):
         if hasattr(stream, "reconfigure"):
             stream.reconfigure(errors="replace")
