@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
 from functools import cache
 from pathlib import Path
 
@@ -16,3 +17,8 @@ DEMOS = ("howe_workshop", "pratt_store", "fink_barn", "coast_shed", "scissor_hal
 def demo(name: str) -> Project:
     """Return the project of a demo folder."""
     return read_project(FOLDER / name / "roof.toml")
+
+
+def with_any_legs(project: Project) -> Project:
+    """Return the project with unequal angles allowed, where a demo keeps to the stocked equal ones."""
+    return replace(project, members=replace(project.members, equal_legs=False))

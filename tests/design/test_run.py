@@ -6,7 +6,7 @@ from dataclasses import replace
 
 import numpy as np
 import pytest
-from demos import DEMOS, demo
+from demos import DEMOS, demo, with_any_legs
 
 from spanwright.design.project import Project
 from spanwright.design.registry import standard_named
@@ -78,8 +78,7 @@ def test_no_lighter_candidate_passes_beside_the_others(done: Design) -> None:
 def test_a_group_that_uplift_made_heavy_in_the_first_round_comes_down_again() -> None:
     """Reviewed: with no knee braces the diagonals of the pratt store stayed a size too heavy for its final mass."""
     project = demo("pratt_store")
-    any_legs = replace(project, members=replace(project.members, equal_legs=False))
-    heavy = design(replace(any_legs, restraint=replace(project.restraint, knee_braces="none")))
+    heavy = design(replace(with_any_legs(project), restraint=replace(project.restraint, knee_braces="none")))
     assert heavy.passes
     for choice in heavy.choices:
         for index in range(max(0, choice.index - 12), choice.index):

@@ -5,7 +5,7 @@ from __future__ import annotations
 from dataclasses import replace
 
 import pytest
-from demos import demo
+from demos import demo, with_any_legs
 from workshop import FINK, HOWE, PRATT, Shop, shop
 
 from spanwright.design.families import find
@@ -30,7 +30,7 @@ def test_unequal_angles_without_a_stock_list_are_named_in_one_sentence() -> None
 
 
 def test_a_whole_design_warns_once_of_unequal_angles_and_equal_legs_cure_it() -> None:
-    project = demo("howe_workshop")
+    project = with_any_legs(demo("howe_workshop"))
     assert sum("no stock list" in text for text in design(project).warnings) == 1
     equal = design(replace(project, members=replace(project.members, equal_legs=True)))
     assert equal.passes

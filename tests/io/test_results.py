@@ -11,7 +11,7 @@ from typing import Any
 import jsonschema
 import numpy as np
 import pytest
-from demos import DEMOS, demo
+from demos import DEMOS, demo, with_any_legs
 
 from spanwright.design.result import Design
 from spanwright.design.run import design
@@ -133,8 +133,7 @@ def test_the_same_input_gives_the_same_bytes(done: Design, tmp_path: Path) -> No
 
 
 def test_pieces_of_unequal_angles_say_which_leg_goes_to_the_gusset() -> None:
-    project = demo("howe_workshop")
-    found = document(design(replace(project, members=replace(project.members, equal_legs=False))))
+    found = document(design(with_any_legs(demo("howe_workshop"))))
     unequal = [piece for piece in found["pieces"] if piece["section"].startswith("L ")]
     assert unequal
     for piece in unequal:
