@@ -104,7 +104,7 @@ def _guarded(run: Callable[[Namespace], int], given: Namespace) -> int:
         return _BROKEN_PIPE
     except OSError as error:  # files are guarded where they are written: this is the screen or the pipe behind it
         return _complain(f"the output cannot be shown: {error.strerror or error}", _NOT_SHOWN)
-    except Exception as error:
+    except Exception as error:  # the last guard: no traceback reaches a user, and the status tells a fault of ours
         if os.environ.get(_SHOW_TRACEBACK):
             raise
         return _complain(
