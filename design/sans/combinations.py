@@ -102,11 +102,11 @@ def governing_of(make: Maker, kept: Kept, shape: tuple[int, int]) -> tuple[Float
     if kept.bars.size == 0:
         return ratio, governing
     values = _ratio(make(kept.loads, kept.resistances))
-    bars, starts = np.unique(kept.bars, return_index=True)
-    for bar, first, past in zip(bars, starts, [*starts[1:], kept.bars.size], strict=True):
-        best = np.argmax(values[:, first:past], axis=1)
-        ratio[:, bar] = values[np.arange(shape[0]), first + best]
-        governing[:, bar] = kept.combinations[first + best]
+    bars, starts, counts = np.unique(kept.bars, return_index=True, return_counts=True)
+    ratio[:, bars] = np.maximum.reduceat(values, starts, axis=1)
+    greatest = values == np.repeat(ratio[:, bars], counts, axis=1)
+    first = np.minimum.reduceat(np.where(greatest, np.arange(kept.bars.size), kept.bars.size), starts, axis=1)
+    governing[:, bars] = kept.combinations[first]
     return ratio, np.where(ratio > 0.0, governing, -1)
 
 
