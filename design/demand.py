@@ -53,7 +53,10 @@ def sideways_compression(axial: FloatArray, lengths: BucklingLengths) -> FloatAr
     (the safe reading where the force changes along the run).
     """
     compression = np.maximum(-axial, 0.0)
-    return np.array([compression[np.flatnonzero(mates)].max(axis=0) for mates in lengths.together])
+    greatest = compression.copy()
+    for bar in np.flatnonzero(lengths.together.sum(axis=1) > 1):
+        greatest[bar] = compression[lengths.together[bar]].max(axis=0)
+    return greatest
 
 
 def _chord_moments(truss: Truss, stations: Stations, moments: FloatArray) -> tuple[FloatArray, FloatArray, FloatArray]:

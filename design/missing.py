@@ -11,8 +11,7 @@ from spanwright.design.setting import Setting
 from spanwright.design.sizing import Choice, worst_ratio
 from spanwright.design.standard import Demand
 from spanwright.truss.arrays import FloatArray
-from spanwright.truss.lengths import BucklingLengths, buckling_lengths
-from spanwright.truss.restraint import parts, without
+from spanwright.truss.lengths import BucklingLengths, lengths_without
 
 
 @dataclass(frozen=True)
@@ -35,11 +34,7 @@ def if_missing(setting: Setting, wanted: Demand, choices: tuple[Choice, ...]) ->
 
     The chosen sections are checked again with the lengths that remain; forces do not change.
     """
-    given = setting.project.restraint
-    lengths = {
-        part: buckling_lengths(setting.truss, without(setting.restraint, part), given, allow_unheld=True)
-        for part in parts(setting.restraint)
-    }
+    lengths = lengths_without(setting.truss, setting.restraint, setting.project.restraint)
     standing = {part: left for part, left in lengths.items() if not left.unheld}
     rows = [Missing(part, left.unheld, np.inf, "", np.inf) for part, left in lengths.items() if left.unheld]
     rows += _checked_again(setting, wanted, choices, standing)

@@ -58,9 +58,13 @@ def choose(
 ) -> Choice:
     """Pick the first candidate from `floor` on that passes; where none does, the one that exceeds least.
 
-    All candidates are evaluated at once. `joinable` masks those that fit the members they meet.
+    The one at `floor` is tried first, since in the last round it stays; where it fails, all are evaluated at once.
+    `joinable` masks those that fit the members they meet.
     """
     fits = np.ones(len(candidates), dtype=np.bool_) if joinable is None else joinable
+    as_it_is = settle(group, candidates, floor, standard, demand, fits)
+    if as_it_is.passes or floor + 1 == len(candidates):
+        return as_it_is
     worst = worst_ratio(standard.checks(candidates.take(np.arange(floor, len(candidates))), demand)).max(axis=1)
     worst = np.where(fits[floor:], worst, np.inf)
     passing = np.flatnonzero(worst <= 1.0)

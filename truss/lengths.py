@@ -11,7 +11,7 @@ from spanwright.truss.arrays import BoolArray, FloatArray
 from spanwright.truss.errors import InputError, UnheldEndError
 from spanwright.truss.inputs import RestraintInput
 from spanwright.truss.model import Chord, Truss
-from spanwright.truss.restraint import Restraint, held_points
+from spanwright.truss.restraint import Restraint, held_points, parts, without
 from spanwright.truss.runs import NOTHING, Meeting, Run, chord_runs, meeting_bars, opposite, straight_run, web_runs
 from spanwright.truss.tolerances import TOLERANCES
 
@@ -62,28 +62,62 @@ def buckling_lengths(
     without a reason.
     """
     _refuse_factors(given)
+    return _lengths(truss, restraint, given, _webs(truss, restraint), allow_unheld=allow_unheld)
+
+
+def lengths_without(truss: Truss, restraint: Restraint, given: RestraintInput) -> dict[str, BucklingLengths]:
+    """Return the buckling lengths that remain without each part that can go missing, unheld ends reported.
+
+    What does not depend on purlins, braces and ties (panels and the runs of webs) is found once.
+    """
+    whole = _webs(truss, restraint)
+    found = {}
+    for part in parts(restraint):
+        left = without(restraint, part)
+        webs = whole if left.bearings == restraint.bearings else _webs(truss, left)
+        found[part] = _lengths(truss, left, given, webs, allow_unheld=True)
+    return found
+
+
+@dataclass(frozen=True, eq=False)
+class _Webs:
+    """What bars and bearings alone decide: runs of webs, loose joints, lengths in plane (b,) and what bounds them."""
+
+    runs: tuple[Run, ...]
+    loose: tuple[int, ...]
+    panels: FloatArray
+    between: tuple[Pair, ...]
+
+
+def _webs(truss: Truss, restraint: Restraint) -> _Webs:
+    meeting = meeting_bars(truss)
+    return _Webs(
+        *web_runs(truss, meeting, [bearing.joint for bearing in restraint.bearings]), *_in_plane(truss, meeting)
+    )
+
+
+def _lengths(
+    truss: Truss, restraint: Restraint, given: RestraintInput, webs: _Webs, *, allow_unheld: bool
+) -> BucklingLengths:
     points = held_points(truss, restraint)
     chords = (truss.top, truss.bottom)
     on_chords = [run for chord in chords for run in chord_runs(chord, points[chord.name])]
-    meeting = meeting_bars(truss)
-    on_webs, loose = web_runs(truss, meeting, [bearing.joint for bearing in restraint.bearings])
     ends = _unheld_ends(chords, on_chords)
-    if (ends or loose) and not allow_unheld:
-        raise _unheld_error(truss, restraint, ends, loose)
-    runs = (*on_chords, *on_webs)
+    if (ends or webs.loose) and not allow_unheld:
+        raise _unheld_error(truss, restraint, ends, webs.loose)
+    runs = (*on_chords, *webs.runs)
     sideways, between, together = _sideways(truss, runs)
-    panels, panels_between = _in_plane(truss, meeting)
-    in_plane, out_of_plane = given.factor_in * panels, given.factor_out * sideways
+    in_plane, out_of_plane = given.factor_in * webs.panels, given.factor_out * sideways
     return BucklingLengths(
         in_plane=in_plane,
         out_of_plane=out_of_plane,
-        torsional=np.minimum(out_of_plane, panels) if given.twist_held else out_of_plane,
+        torsional=np.minimum(out_of_plane, webs.panels) if given.twist_held else out_of_plane,
         minor=np.maximum(in_plane, out_of_plane),
-        in_plane_between=panels_between,
+        in_plane_between=webs.between,
         out_of_plane_between=between,
         together=together,
         runs=runs,
-        unheld=tuple(truss.joint_names[joint] for joint in (*ends, *loose)),
+        unheld=tuple(truss.joint_names[joint] for joint in (*ends, *webs.loose)),
     )
 
 
