@@ -27,6 +27,7 @@ def warnings_of(found: Design) -> tuple[str, ...]:
         *_settlement(setting),
         *section_warnings(setting, choices),
         *_legs_above_the_chords(choices),
+        *_between_joints(setting),
         *_two_systems(setting),
         *_one_off(setting),
         *_not_passing(setting, choices),
@@ -47,6 +48,18 @@ def _thrust(found: Design) -> list[str]:
     return [
         "more than one bearing is held along the span, so the truss thrusts: the columns must resist, factored, "
         f"{' and '.join(pushed)}; every member also stands with one end sliding"
+    ]
+
+
+def _between_joints(setting: Setting) -> list[str]:
+    """A greatest spacing seldom lands on joints: where it does not, the chord bends, which may not be meant."""
+    lines = setting.restraint.lines
+    between = [line for line in lines if line.joint is None and line.bar is not None]
+    if not between or not isinstance(setting.project.restraint.purlins, float):
+        return []
+    return [
+        f"{len(between)} of {len(lines)} purlin lines stand between joints and bend the top chord; "
+        'purlins "at joints", or distances listed joint by joint, spare it that'
     ]
 
 

@@ -137,3 +137,11 @@ def test_the_mass_counts_the_overhang_as_the_own_mass_does() -> None:
     chord = found.setting.truss.top
     (top,) = [choice for choice in found.choices if choice.group.name == "top chord"]
     assert found.group_mass(top) == pytest.approx((chord.length + sum(chord.overhang)) / 1e3 * top.section.mass[0])
+
+
+def test_purlins_that_a_spacing_puts_between_joints_are_told() -> None:
+    project = demo("howe_workshop")
+    spaced = replace(project.restraint, purlins=788.6)  # two to a rafter panel of 1 577.2 mm
+    (told,) = warned(design(replace(project, restraint=spaced)), "stand between joints")
+    assert told.startswith("10 of 21 purlin lines")
+    assert not warned(design(project), "stand between joints")
