@@ -8,7 +8,7 @@ import numpy as np
 
 from spanwright.design.demand import of_bars, side_by_side, sideways_compression
 from spanwright.design.setting import Setting
-from spanwright.design.sizing import Choice, worst_ratio
+from spanwright.design.sizing import Choice, utilisation_or_failure
 from spanwright.design.standard import Demand
 from spanwright.truss.arrays import FloatArray
 from spanwright.truss.lengths import BucklingLengths, lengths_without
@@ -19,7 +19,8 @@ class Missing:
     """The truss without one part of what holds it.
 
     part : in words. unheld : names of chord ends that nothing holds any more (then there is no utilisation).
-    utilisation : greatest over all members. bar : the member, with its out-of-plane length in mm.
+    utilisation : greatest over all members, or the ratio of a limit that fails (slenderness).
+    bar : the member, with its out-of-plane length in mm.
     """
 
     part: str
@@ -59,11 +60,11 @@ def _ratios(setting: Setting, wanted: Demand, choice: Choice, variants: list[Dem
     """Return (parts, b) the greatest ratio of a group's bars without each part, 0 for other bars."""
     bars = choice.group.bars
     ratios = np.zeros((len(variants), len(wanted.bars)))
-    ratios[:, bars] = worst_ratio(choice.checks)[0]
+    ratios[:, bars] = utilisation_or_failure(choice.checks)[0]
     changed = [at for at, left in enumerate(variants) if (left.out_of_plane != wanted.out_of_plane)[bars].any()]
     if changed:
         together = side_by_side([of_bars(variants[at], bars) for at in changed])
-        found = worst_ratio(setting.standard.checks(choice.section, together))[0]
+        found = utilisation_or_failure(setting.standard.checks(choice.section, together))[0]
         ratios[np.array(changed)[:, None], bars] = found.reshape(len(changed), len(bars))
     return ratios
 

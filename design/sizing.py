@@ -47,6 +47,19 @@ def worst_ratio(checks: tuple[Check, ...]) -> FloatArray:
     return worst
 
 
+def utilisation_or_failure(checks: tuple[Check, ...]) -> FloatArray:
+    """Return (s, b) the utilisation: the greatest strength ratio, or that of a limit that fails if it is greater."""
+    greatest: FloatArray = _that_count(checks).max(axis=0)
+    return greatest
+
+
+def _that_count(checks: tuple[Check, ...]) -> FloatArray:
+    """Return (checks, s, b) the ratios, with -1 for limits that hold: their own ratio is no utilisation."""
+    ratios = np.array([check.ratio for check in checks])
+    strength = np.array([check.kind == "strength" for check in checks])[:, None, None]
+    return np.where(strength | (ratios > 1.0), ratios, -1.0)
+
+
 def choose(
     group: Group,
     candidates: Candidates,
@@ -118,13 +131,11 @@ def governing(
     bars : names along the second axis of the ratios; `place` narrows to one of them.
     combinations : the strength combinations' names; None leaves the name out.
     """
-    ratios = np.array([check.ratio[0] for check in checks])
-    strength = np.array([check.kind == "strength" for check in checks])[:, None]
-    ranked = np.where(strength | (ratios > 1.0), ratios, -1.0)
+    ranked = _that_count(checks)[:, 0]
     if place is not None:
         ranked = np.where(np.arange(len(bars)) == place, ranked, -2.0)
     which, bar = np.unravel_index(int(np.argmax(ranked)), ranked.shape)
     check = checks[which]
     at = int(check.combination[0, bar])
     name = combinations[at] if combinations and at >= 0 else ""
-    return Governing(check.name, check.clause, check.kind, bars[bar], name, float(ratios[which, bar]))
+    return Governing(check.name, check.clause, check.kind, bars[bar], name, float(check.ratio[0, bar]))
